@@ -1,0 +1,10 @@
+namespace CloudStruct.Accuracy;
+
+/// <summary>The studies by name.</summary>
+public static class Studies
+{
+    /// <summary>All of them.</summary>
+    public static SortedDictionary<string, IStudy> All { get; } = new(StringComparer.Ordinal)
+    {
+    };
+}
