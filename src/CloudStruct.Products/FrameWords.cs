@@ -1,0 +1,38 @@
+using CloudStruct.Formats.Tables;
+using CloudStruct.Records.Drawings;
+using CloudStruct.Records.Frame;
+using static System.FormattableString;
+
+namespace CloudStruct.Products;
+
+/// <summary>Frame, north and coordinate system in plain words.</summary>
+internal static class FrameWords
+{
+    /// <summary>What the metadata says of every table.</summary>
+    public static TableFacts OfTables(Findings findings, RunFacts facts) => new()
+    {
+        RunId = facts.RunId,
+        Frame = "x east, y north, z up, map coordinates in metres",
+        North = facts.NorthText.Length > 0 ? facts.NorthText : North(findings.Intake.Frame),
+        Crs = Crs(findings.Intake.Frame.Crs),
+        Licence = facts.Licence,
+        Citation = facts.Citation,
+    };
+
+    /// <summary>The north of every azimuth.</summary>
+    public static string North(SurveyFrame frame) => frame.North switch
+    {
+        Records.Frame.North.True => Invariant($"true north (grid azimuth plus a meridian convergence of {frame.ConvergenceDeg ?? 0:F2} deg)"),
+        Records.Frame.North.Grid => "grid north (the y axis of the map grid)",
+        _ => "the y axis of the model, which nothing ties to the ground",
+    };
+
+    /// <summary>Name and code of the coordinate system.</summary>
+    public static string Crs(CrsInfo crs)
+    {
+        string name = crs.Name.Length > 0 ? crs.Name : crs.Epsg > 0 ? Invariant($"EPSG:{crs.Epsg}") : "none stated";
+        if (crs.Name.Length > 0 && crs.Epsg > 0) name += Invariant($" (EPSG:{crs.Epsg})");
+        if (crs.VerticalName.Length > 0) name += $", heights {crs.VerticalName}";
+        return name;
+    }
+}

@@ -1,0 +1,43 @@
+using CloudStruct.Formats.Tables;
+using CloudStruct.Products.Tables;
+using CloudStruct.Records.Drawings;
+using CloudStruct.Records.Points;
+using CloudStruct.Records.Stages;
+
+namespace CloudStruct.Products;
+
+/// <summary>Writes everything that a run leaves behind, except run.json and run.log, which are the program's.</summary>
+/// <remarks>Nothing is computed here: what a table, a plot and the report say stands in a record already, so they cannot
+/// disagree. The same records give the same bytes.</remarks>
+public sealed class ProductsWriter
+{
+    /// <summary>Writes tables, plots, clouds and the report below a folder.</summary>
+    /// <param name="folder">An existing folder; the program swaps it into place afterwards.</param>
+    /// <param name="findings">Every stage's record.</param>
+    /// <param name="drawings">What the sheets need computed.</param>
+    /// <param name="pieces">The input points, streamed once more for the classified cloud.</param>
+    /// <param name="facts">About the run.</param>
+    /// <param name="settings">What to write.</param>
+    /// <param name="context">Progress, remarks and cancellation.</param>
+    /// <returns>Names of the files written, relative to the folder, with forward slashes, in the order of writing.</returns>
+    public IReadOnlyList<string> Write(
+        string folder, Findings findings, DrawingsRecord drawings, IPieces pieces, RunFacts facts, ProductSettings settings, StageContext context)
+    {
+        var files = new ResultFolder(folder);
+        WriteTables(files, findings, facts);
+        context.Progress(0.1);
+        return files.Written;
+    }
+
+    private static void WriteTables(ResultFolder files, Findings findings, RunFacts facts)
+    {
+        CsvSheet[] sheets = [.. Sheets.All.Where(t => t.Applies(findings)).Select(t => t.Fill(findings))];
+        foreach (CsvSheet sheet in sheets)
+        {
+            using Stream stream = files.Create("tables/" + sheet.FileName);
+            sheet.Write(stream);
+        }
+        using Stream metadata = files.Create("tables/tables-metadata.json");
+        CsvMetadata.Write(metadata, sheets, FrameWords.OfTables(findings, facts));
+    }
+}

@@ -1,0 +1,20 @@
+namespace CloudStruct.Products;
+
+/// <summary>The folder of results: makes its subfolders and keeps the list of what was written.</summary>
+internal sealed class ResultFolder(string folder)
+{
+    private readonly List<string> written = [];
+
+    /// <summary>Relative names with forward slashes, in the order of writing.</summary>
+    public IReadOnlyList<string> Written => written;
+
+    /// <summary>Creates a file for writing and reading, and notes it.</summary>
+    /// <param name="name">Relative name with forward slashes: "tables/faces.csv".</param>
+    public FileStream Create(string name)
+    {
+        string path = Path.Combine(folder, name);
+        Directory.CreateDirectory(Path.GetDirectoryName(path)!);
+        written.Add(name);
+        return new FileStream(path, FileMode.Create, FileAccess.ReadWrite, FileShare.None);
+    }
+}
