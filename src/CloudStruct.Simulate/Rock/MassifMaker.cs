@@ -1,0 +1,136 @@
+using CloudStruct.Records.Frame;
+using CloudStruct.Simulate.Chance;
+
+namespace CloudStruct.Simulate.Rock;
+
+/// <summary>Draws the rock of a plan: ground, joint sets, dikes, blocks, and what lies on them.</summary>
+internal static class MassifMaker
+{
+    private const double HostPlacesPerM3 = 70, DikePlacesPerM3 = 420;
+
+    /// <summary>Makes the rock.</summary>
+    /// <returns>The solid, and the mean poles of the host's joint sets.</returns>
+    public static (Massif Massif, Vec3[] HostPoles) Make(OutcropPlan plan, ulong seed, int threads)
+    {
+        var terrain = new Terrain(plan, seed);
+        var drape = new Drape(plan, terrain, seed);
+        DikeSheet[] dikes = [.. plan.Dikes.Select((d, i) => PlaceDike(d, terrain, seed, i + 1))];
+        JointTreeMaker.Set[] hostSets = [.. plan.HostJoints.Select((s, i) => DrawSet(s, terrain, seed, i))];
+        bool InHost(Vec3 p) => !Array.Exists(dikes, d => d.Contains(p));
+        JointTree host = JointTreeMaker.Make(
+            hostSets, Places(terrain, seed, 0, HostPlacesPerM3, InHost), seed, Purpose.HostJoints, p => Stands(plan, terrain, drape, p, 0));
+        var blocks = new JointTree[dikes.Length];
+        for (int i = 0; i < dikes.Length; i++)
+        {
+            DikeSheet dike = dikes[i];
+            JointTreeMaker.Set[] sets = plan.Dikes[i].HostJoints ? hostSets : CoolingSets(dike, seed);
+            blocks[i] = JointTreeMaker.Make(
+                sets,
+                Places(terrain, seed, i + 1, DikePlacesPerM3, dike.Contains),
+                seed + (ulong)i,
+                Purpose.DikeJoints,
+                p => Stands(plan, terrain, drape, p, dike.ReliefM));
+        }
+
+        GroundSheet sheet = plan.Planed
+            ? new GroundSheet(terrain, 0.025, threads, (a, b) => (PlanedHeight(terrain, host, dikes, blocks, a, b), 0))
+            : new GroundSheet(terrain, 0.04, threads, drape.At);
+        LooseBlock[] loose = [.. Fallen(plan, terrain, drape, seed)];
+        return (new Massif(terrain, host, dikes, blocks, sheet, loose, plan.Planed), [.. hostSets.Select(s => s.Pole.Z < 0 ? -s.Pole : s.Pole)]);
+    }
+
+    private static DikeSheet PlaceDike(DikePlan plan, Terrain terrain, ulong seed, int number)
+    {
+        double b = new Dice(seed, Purpose.Plan, 50 + (ulong)number).In(plan.Across) * terrain.BreadthM, a = terrain.LengthM / 2;
+        return new DikeSheet(plan, seed, number, terrain.Place(a, b, terrain.Height(a, b)), terrain.UphillDeg, terrain.LengthM);
+    }
+
+    private static JointTreeMaker.Set DrawSet(JointSetPlan set, Terrain terrain, ulong seed, int index)
+    {
+        var dice = new Dice(seed, Purpose.Plan, (ulong)index);
+        Vec3 pole = Axes.Pole(terrain.UphillDeg + dice.In(set.DipDirectionDeg), dice.In(set.DipDeg));
+        return new(pole, dice.In(set.Kappa), dice.In(set.SpacingM));
+    }
+
+    /// <summary>Cooling joints: along the margins, and two sets square to them and to each other.</summary>
+    private static JointTreeMaker.Set[] CoolingSets(DikeSheet dike, ulong seed)
+    {
+        var dice = new Dice(seed, Purpose.Plan, 80 + (ulong)dike.Number);
+        double spacing = dice.In(dike.Plan.JointSpacingM), turn = dice.Between(-15, 15) * Math.PI / 180;
+        Vec3 along = (dike.Along * Math.Cos(turn)) + (dike.Up * Math.Sin(turn)), up = (dike.Up * Math.Cos(turn)) - (dike.Along * Math.Sin(turn));
+        return
+        [
+            new(dike.Across, dice.In(dike.Plan.JointKappa), spacing * 1.25),
+            new(along, dice.In(dike.Plan.JointKappa), spacing),
+            new(up, dice.In(dike.Plan.JointKappa), spacing * 1.15),
+        ];
+    }
+
+    private static bool Stands(OutcropPlan plan, Terrain terrain, Drape drape, Vec3 p, double reliefM)
+    {
+        if (plan.Planed) return true;
+        (double a, double b) = terrain.Site(p);
+        return p.Z < terrain.Height(a, b) + reliefM - drape.Lowering(a, b);
+    }
+
+    /// <summary>Random places in one rock: dense near the surface, sparse elsewhere.</summary>
+    private static Vec3[] Places(Terrain terrain, ulong seed, int rock, double perM3, Func<Vec3, bool> inRock)
+    {
+        var dice = new Dice(seed, Purpose.Samples, (ulong)rock);
+        const double rim = 0.8;
+        double low = -3.5, volume = (terrain.LengthM + (2 * rim)) * (terrain.BreadthM + (2 * rim)) * (terrain.TopM - low);
+        int tries = (int)(volume * perM3);
+        var places = new List<Vec3>();
+        for (int i = 0; i < tries; i++)
+        {
+            double a = dice.Between(-rim, terrain.LengthM + rim), b = dice.Between(-rim, terrain.BreadthM + rim), z = dice.Between(low, terrain.TopM);
+            double lot = dice.Unit();
+            (double lowest, double highest) = terrain.HeightsWithin(a, b, 1.1);
+            if ((z < lowest - 2 || z > highest + 1.2) && lot > 0.06) continue;
+            Vec3 p = terrain.Place(a, b, z);
+            if (inRock(p)) places.Add(p);
+        }
+
+        return [.. places];
+    }
+
+    /// <summary>Ice-worn surface: level blocks a centimetre or two apart in height, furrows along joints.</summary>
+    private static double PlanedHeight(Terrain terrain, JointTree host, DikeSheet[] dikes, JointTree[] blocks, double a, double b)
+    {
+        Vec3 p = terrain.Place(a, b, terrain.Height(a, b));
+        int rock = 0;
+        for (int d = 0; d < dikes.Length; d++)
+        {
+            if (dikes[d].Contains(p)) rock = d + 1;
+        }
+
+        JointTree tree = rock == 0 ? host : blocks[rock - 1];
+        Span<int> path = stackalloc int[64];
+        int count = tree.Path(p, path);
+        double nearest = 1;
+        for (int k = 0; k < count; k++)
+        {
+            (Vec3 n, double offset) = tree.Plane(path[k]);
+            double level = Math.Sqrt((n.X * n.X) + (n.Y * n.Y));
+            if (level > 0.5) nearest = Math.Min(nearest, Math.Abs(n.Dot(p) - offset) / level);
+        }
+
+        double lot = (tree.BlockOf(tree.Find(p)).Lot & 0xFFFF) / 65536.0;
+        double furrow = nearest < 0.06 ? 0.018 * (1 - (nearest / 0.06)) : 0;
+        return p.Z + (0.016 * (lot - 0.5)) - furrow + (rock == 0 ? 0 : dikes[rock - 1].ReliefM);
+    }
+
+    private static IEnumerable<LooseBlock> Fallen(OutcropPlan plan, Terrain terrain, Drape drape, ulong seed)
+    {
+        int laid = 0;
+        for (int i = 0; i < 40 * plan.LooseBlocks && laid < plan.LooseBlocks; i++)
+        {
+            var dice = new Dice(seed, Purpose.Loose, (ulong)i);
+            double a = dice.Between(0, terrain.HighestStep.AtM), b = dice.Between(0.3, terrain.BreadthM - 0.3);
+            if (drape.Scree(a, b) < dice.Between(0.1, 0.9)) continue;
+            laid++;
+            double size = 0.16 * Math.Exp(0.75 * Math.Abs(dice.Normal()));   // many small, few large
+            yield return new LooseBlock(terrain.Place(a, b, terrain.Height(a, b) - 0.05), Math.Min(size, 1.1), dice);
+        }
+    }
+}
