@@ -1,4 +1,5 @@
 using CloudStruct.Formats.Tables;
+using CloudStruct.Records.Attitudes;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Frame;
 using static System.FormattableString;
@@ -8,6 +9,9 @@ namespace CloudStruct.Products;
 /// <summary>Frame, north and coordinate system in plain words.</summary>
 internal static class FrameWords
 {
+    private static readonly string[] CompassPoints =
+        ["N", "NNE", "NE", "ENE", "E", "ESE", "SE", "SSE", "S", "SSW", "SW", "WSW", "W", "WNW", "NW", "NNW"];
+
     /// <summary>What the metadata says of every table.</summary>
     public static TableFacts OfTables(Findings findings, RunFacts facts) => new()
     {
@@ -35,4 +39,16 @@ internal static class FrameWords
         if (crs.VerticalName.Length > 0) name += $", heights {crs.VerticalName}";
         return name;
     }
+
+    /// <summary>Which way chainage of a dike increases: "toward 047° (NE)".</summary>
+    public static string Toward(Findings findings, int dike)
+    {
+        double? trend = findings.Width.Dikes.FirstOrDefault(d => d.Dike == dike)?.TrendDeg;
+        if (trend is not { } t || !double.IsFinite(t)) return "along the centre line";
+        return findings.Intake.Frame.North == Records.Frame.North.Model
+            ? Invariant($"toward {t:000}° of the model") : Invariant($"toward {t:000}° ({Compass(t)})");
+    }
+
+    /// <summary>The nearest of sixteen compass points.</summary>
+    public static string Compass(double azimuthDeg) => CompassPoints[(int)Math.Round(Azimuth.Wrap360(azimuthDeg) / 22.5) % 16];
 }

@@ -1,4 +1,5 @@
 using CloudStruct.Formats.Tables;
+using CloudStruct.Products.Plots;
 using CloudStruct.Products.Tables;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Points;
@@ -26,6 +27,8 @@ public sealed class ProductsWriter
         var files = new ResultFolder(folder);
         WriteTables(files, findings, facts);
         context.Progress(0.1);
+        PlotsWriter.Write(files, findings, drawings, facts, context);
+        context.Progress(0.5);
         return files.Written;
     }
 

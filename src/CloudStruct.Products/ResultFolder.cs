@@ -17,4 +17,11 @@ internal sealed class ResultFolder(string folder)
         written.Add(name);
         return new FileStream(path, FileMode.Create, FileAccess.ReadWrite, FileShare.None);
     }
+
+    /// <summary>Writes a whole file.</summary>
+    public void Write(string name, ReadOnlySpan<byte> bytes)
+    {
+        using FileStream stream = Create(name);
+        stream.Write(bytes);
+    }
 }

@@ -10,4 +10,8 @@ namespace CloudStruct.Records.Drawings;
 /// <param name="Sentence">Plain sentence beneath: what is shown, looking which way.</param>
 /// <param name="UpAzimuthDeg">Azimuth (stated north) that points up the sheet in a plan view; null in a front view.</param>
 public sealed record ViewImage(
-    string Name, string Title, int Width, int Height, double PixelM, byte[] Rgba, string Sentence, double? UpAzimuthDeg);
+    string Name, string Title, int Width, int Height, double PixelM, byte[] Rgba, string Sentence, double? UpAzimuthDeg)
+{
+    /// <summary>What the colours stand for; empty for natural colour.</summary>
+    public ViewKey[] Key { get; init; } = [];
+}

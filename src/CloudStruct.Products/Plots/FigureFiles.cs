@@ -1,0 +1,92 @@
+using System.Globalization;
+using System.Text;
+using System.Xml;
+using System.Xml.Linq;
+using SkiaSharp;
+
+namespace CloudStruct.Products.Plots;
+
+/// <summary>Turns a figure into files, all from the one drawing routine.</summary>
+internal static class FigureFiles
+{
+    /// <summary>Dots per inch of PNG pictures: what journals ask of line art with tints (common practice).</summary>
+    public const int Dpi = 300;
+
+    private const float PerPoint = Dpi / 72f;
+
+    /// <summary>Valid XML of the size in millimetres, text as outlines, with title and description for screen readers.</summary>
+    public static byte[] Svg(Figure figure, string runId)
+    {
+        using var raw = new MemoryStream();
+        using (SKCanvas canvas = SKSvgCanvas.Create(new SKRect(0, 0, figure.WidthPt, figure.HeightPt), raw))
+        {
+            Paper(canvas, figure);
+            figure.Draw(new Pen(canvas, outlines: true));
+        }
+        XDocument document = XDocument.Parse(Encoding.UTF8.GetString(raw.ToArray()));
+        XElement root = document.Root!;
+        XNamespace svg = root.Name.Namespace;
+        root.SetAttributeValue("width", Millimetres(figure.WidthPt));
+        root.SetAttributeValue("height", Millimetres(figure.HeightPt));
+        root.SetAttributeValue("viewBox", string.Create(CultureInfo.InvariantCulture, $"0 0 {figure.WidthPt:0.###} {figure.HeightPt:0.###}"));
+        root.SetAttributeValue("role", "img");
+        root.AddFirst(new XElement(svg + "title", figure.Title), new XElement(svg + "desc", $"{figure.Words} Run {runId}."));
+        using var stream = new MemoryStream();
+        using (var writer = XmlWriter.Create(stream, new XmlWriterSettings { Encoding = new UTF8Encoding(false), NewLineChars = "\n" }))
+            document.Save(writer);
+        return stream.ToArray();
+    }
+
+    /// <summary>One page of the figure's size, text as text in our typeface. The only date is that of the input.</summary>
+    public static byte[] Pdf(Figure figure, RunFacts facts)
+    {
+        DateTime? date = facts.InputDate?.ToDateTime(TimeOnly.MinValue, DateTimeKind.Utc);
+        using var stream = new MemoryStream();
+        using (SKDocument document = SKDocument.CreatePdf(stream, new SKDocumentPdfMetadata
+        {
+            Title = figure.Title,
+            Subject = "Run " + facts.RunId,
+            Creator = "CloudStruct " + facts.ToolVersion,
+            Producer = "CloudStruct " + facts.ToolVersion,
+            Creation = date,
+            Modified = date,
+            RasterDpi = Dpi,
+            EncodingQuality = 101,
+        }))
+        {
+            using SKCanvas canvas = document.BeginPage(figure.WidthPt, figure.HeightPt);
+            figure.Draw(new Pen(canvas, outlines: false));
+            document.EndPage();
+            document.Close();
+        }
+        return stream.ToArray();
+    }
+
+    /// <summary>A picture of 300 dots per inch, which its header states.</summary>
+    public static byte[] Png(Figure figure, string runId) => Png(figure, runId, PerPoint);
+
+    /// <summary>A picture with so many pixels per point.</summary>
+    public static byte[] Png(Figure figure, string runId, float perPoint)
+    {
+        var info = new SKImageInfo(
+            (int)MathF.Ceiling(figure.WidthPt * perPoint), (int)MathF.Ceiling(figure.HeightPt * perPoint), SKColorType.Rgba8888, SKAlphaType.Premul);
+        using SKSurface surface = SKSurface.Create(info);
+        SKCanvas canvas = surface.Canvas;
+        canvas.Clear(SKColors.White);
+        canvas.Scale(perPoint);
+        figure.Draw(new Pen(canvas, outlines: false));
+        using SKImage image = surface.Snapshot();
+        using SKPixmap pixels = image.PeekPixels();
+        using SKData png = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.AllFilters, 9))
+            ?? throw new InvalidOperationException($"the picture {figure.Name} could not be encoded");
+        return PngChunks.WithFacts(png.ToArray(), perPoint * 72, figure.Title, runId);
+    }
+
+    private static void Paper(SKCanvas canvas, Figure figure)
+    {
+        using var white = new SKPaint { Color = SKColors.White };
+        canvas.DrawRect(0, 0, figure.WidthPt, figure.HeightPt, white);
+    }
+
+    private static string Millimetres(float points) => (points / 72 * 25.4f).ToString("0.##", CultureInfo.InvariantCulture) + "mm";
+}

@@ -1,0 +1,39 @@
+using CloudStruct.Records.Drawings;
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Stages;
+using static System.FormattableString;
+
+namespace CloudStruct.Products.Plots;
+
+/// <summary>Writes every plot as SVG, PDF and PNG, and every view as PNG.</summary>
+internal static class PlotsWriter
+{
+    /// <summary>Lays out nets and width profiles, in the order of the drawings.</summary>
+    public static IEnumerable<Figure> Figures(Findings findings, DrawingsRecord drawings, RunFacts facts)
+    {
+        foreach (NetDrawing net in drawings.Nets) yield return NetFigure.Make(net, facts.RunId);
+        foreach (WidthDrawing width in drawings.Widths)
+            yield return WidthFigure.Make(width, FrameWords.Toward(findings, width.Dike), facts.RunId, Invariant($"width-dike-{width.Dike}"));
+    }
+
+    /// <summary>Lays out a view.</summary>
+    public static Figure View(Findings findings, ViewImage view, RunFacts facts) =>
+        ViewFigure.Make(view, findings.Intake.Frame.North != North.Model, facts.RunId);
+
+    /// <summary>Writes all below plots/.</summary>
+    public static void Write(ResultFolder files, Findings findings, DrawingsRecord drawings, RunFacts facts, StageContext context)
+    {
+        foreach (Figure figure in Figures(findings, drawings, facts))
+        {
+            context.Stop.ThrowIfCancellationRequested();
+            files.Write($"plots/{figure.Name}.svg", FigureFiles.Svg(figure, facts.RunId));
+            files.Write($"plots/{figure.Name}.pdf", FigureFiles.Pdf(figure, facts));
+            files.Write($"plots/{figure.Name}.png", FigureFiles.Png(figure, facts.RunId));
+        }
+        foreach (ViewImage view in drawings.Views)
+        {
+            context.Stop.ThrowIfCancellationRequested();
+            files.Write($"plots/{view.Name}.png", FigureFiles.Png(View(findings, view, facts), facts.RunId, ViewFigure.PerPoint(view)));
+        }
+    }
+}
