@@ -46,18 +46,27 @@ public static class Bingham
 
     /// <summary>(k1, k2) by maximum likelihood from the two smaller eigenvalues of the orientation tensor.</summary>
     /// <param name="s3">Smallest eigenvalue, above 0; goes with k1.</param>
-    /// <param name="s2">Middle eigenvalue, at most (1 - s3)/2 · goes with k2.</param>
+    /// <param name="s2">Middle eigenvalue, at most (1 - s3)/2; goes with k2.</param>
+    /// <param name="tolerance">Relative error of either exponent.</param>
     /// <returns>k1 ≤ k2 ≤ 0.</returns>
-    public static (double K1, double K2) KappasOf(double s3, double s2)
+    public static (double K1, double K2) KappasOf(double s3, double s2, double tolerance = 1e-10)
     {
-        // Tight clusters are normal in the tangent plane: mean x² is -1/(2 k1). From there, coordinate by coordinate, by the
-        // ratio of what is wanted to what is there: each step is exact in that limit.
-        double k1 = -1 / (2 * s3), k2 = -1 / (2 * s2);
-        for (int i = 0; i < 200; i++)
+        // Tight clusters are normal in the tangent plane, where the mean of x² is -1/(2 k1): so 1/mean is nearly linear in k,
+        // and Newton's rule on it (slopes by differences) needs few rounds.
+        double k1 = -0.5 / s3, k2 = -0.5 / s2;
+        for (int i = 0; i < 60; i++)
         {
-            (_, double x2, double y2) = Integrate(k1, k2);
-            double n1 = Math.Min(0, Step(k1, x2, s3)), n2 = Math.Min(0, Step(k2, y2, s2));
-            bool done = Math.Abs(n1 - k1) <= 1e-10 * Math.Abs(k1) + 1e-12 && Math.Abs(n2 - k2) <= 1e-10 * Math.Abs(k2) + 1e-12;
+            double h1 = 1e-4 * (1 + Math.Abs(k1)), h2 = 1e-4 * (1 + Math.Abs(k2));
+            (double f1, double f2) = Miss(k1, k2, s3, s2);
+            (double a1, double a2) = Miss(k1 - h1, k2, s3, s2);
+            (double b1, double b2) = Miss(k1, k2 - h2, s3, s2);
+            double m11 = (f1 - a1) / h1, m21 = (f2 - a2) / h1, m12 = (f1 - b1) / h2, m22 = (f2 - b2) / h2;
+            double det = (m11 * m22) - (m12 * m21);
+            double d1 = ((f1 * m22) - (f2 * m12)) / det, d2 = ((f2 * m11) - (f1 * m21)) / det;
+
+            // Not past zero, nor more than fourfold, in one round.
+            double n1 = Math.Clamp(k1 - d1, (4 * k1) - 1, 0), n2 = Math.Clamp(k2 - d2, (4 * k2) - 1, 0);
+            bool done = Math.Abs(n1 - k1) <= tolerance * (1 + Math.Abs(k1)) && Math.Abs(n2 - k2) <= tolerance * (1 + Math.Abs(k2));
             (k1, k2) = (n1, n2);
             if (done) break;
         }
@@ -65,8 +74,11 @@ public static class Bingham
         return (k1, k2);
     }
 
-    /// <summary>Shifts 1/mean - 2|k| as if it did not depend on k: exact for tight clusters, contracting elsewhere.</summary>
-    private static double Step(double k, double mean, double wanted) => k + (0.5 / mean) - (0.5 / wanted);
+    private static (double F1, double F2) Miss(double k1, double k2, double s3, double s2)
+    {
+        (_, double x2, double y2) = Integrate(k1, k2);
+        return ((0.5 / s3) - (0.5 / x2), (0.5 / s2) - (0.5 / y2));
+    }
 
     private static (double At, double Weight)[] GaussLegendre(int n)
     {

@@ -1,0 +1,11 @@
+namespace CloudStruct.Stages.Sets;
+
+/// <summary>How much a plane counts.</summary>
+public enum SetWeighting
+{
+    /// <summary>Every plane alike, less where its own attitude is uncertain.</summary>
+    Count,
+
+    /// <summary>By exposed area: close to area per volume of rock, but a few large faces decide.</summary>
+    Area,
+}
