@@ -27,15 +27,15 @@ public static class Outcrop
     {
         threads = threads > 0 ? threads : Environment.ProcessorCount;
         int wanted = points ?? plan.Points;
-        (Massif massif, Vec3[] hostPoles) = MassifMaker.Make(plan, seed, threads);
+        (Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles) = MassifMaker.Make(plan, seed, threads);
         Camera[] cameras = Flight.Plan(plan, massif.Terrain, seed);
         Sight[] sights = Photographs.Take(massif, cameras, (int)Math.Min(60e6, RaysPerPoint * wanted), seed, threads);
         sights = Thinning.To(wanted, sights, seed);
-        return Develop(plan, seed, massif, hostPoles, cameras, sights, threads);
+        return Develop(plan, seed, massif, hostPoles, dikePoles, cameras, sights, threads);
     }
 
     private static SimulatedOutcrop Develop(
-        OutcropPlan plan, ulong seed, Massif massif, Vec3[] hostPoles, Camera[] cameras, Sight[] sights, int threads)
+        OutcropPlan plan, ulong seed, Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles, Camera[] cameras, Sight[] sights, int threads)
     {
         int count = sights.Length;
         var noise = new SurveyNoise(plan, seed);
@@ -92,6 +92,7 @@ public static class Outcrop
             Origin = Origin,
             UphillDeg = massif.Terrain.UphillDeg,
             HostSetPoles = hostPoles,
+            DikeSetPoles = dikePoles,
             NoiseM = noise.SharedM,
             NoiseLengthM = noise.LengthM,
             WhiteNoiseM = noise.WhiteM,

@@ -60,6 +60,9 @@ public sealed record SimulatedOutcrop
     /// <summary>True mean poles of the joint sets of the host, upward, grid frame.</summary>
     public Vec3[] HostSetPoles { get; init; } = [];
 
+    /// <summary>True mean poles of the joint sets of each dike, upward, grid frame.</summary>
+    public Vec3[][] DikeSetPoles { get; init; } = [];
+
     /// <summary>Standard deviation of the shared noise of this member [m].</summary>
     public double NoiseM { get; init; }
 

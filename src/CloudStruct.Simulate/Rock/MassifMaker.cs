@@ -9,8 +9,8 @@ internal static class MassifMaker
     private const double HostPlacesPerM3 = 70, DikePlacesPerM3 = 420;
 
     /// <summary>Makes the rock.</summary>
-    /// <returns>The solid, and the mean poles of the host's joint sets.</returns>
-    public static (Massif Massif, Vec3[] HostPoles) Make(OutcropPlan plan, ulong seed, int threads)
+    /// <returns>The solid, the mean poles of the host's joint sets, and those of the joint sets of each dike.</returns>
+    public static (Massif Massif, Vec3[] HostPoles, Vec3[][] DikePoles) Make(OutcropPlan plan, ulong seed, int threads)
     {
         var terrain = new Terrain(plan, seed);
         var drape = new Drape(plan, terrain, seed);
@@ -20,10 +20,12 @@ internal static class MassifMaker
         JointTree host = JointTreeMaker.Make(
             hostSets, Places(terrain, seed, 0, HostPlacesPerM3, InHost), seed, Purpose.HostJoints, p => Stands(plan, terrain, drape, p, 0));
         var blocks = new JointTree[dikes.Length];
+        var dikePoles = new Vec3[dikes.Length][];
         for (int i = 0; i < dikes.Length; i++)
         {
             DikeSheet dike = dikes[i];
             JointTreeMaker.Set[] sets = plan.Dikes[i].HostJoints ? hostSets : CoolingSets(dike, seed);
+            dikePoles[i] = Upward(sets);
             blocks[i] = JointTreeMaker.Make(
                 sets,
                 Places(terrain, seed, i + 1, DikePlacesPerM3, dike.Contains),
@@ -36,8 +38,10 @@ internal static class MassifMaker
             ? new GroundSheet(terrain, 0.025, threads, (a, b) => (PlanedHeight(terrain, host, dikes, blocks, a, b), 0))
             : new GroundSheet(terrain, 0.04, threads, drape.At);
         LooseBlock[] loose = [.. Fallen(plan, terrain, drape, seed)];
-        return (new Massif(terrain, host, dikes, blocks, sheet, loose, plan.Planed), [.. hostSets.Select(s => s.Pole.Z < 0 ? -s.Pole : s.Pole)]);
+        return (new Massif(terrain, host, dikes, blocks, sheet, loose, plan.Planed), Upward(hostSets), dikePoles);
     }
+
+    private static Vec3[] Upward(JointTreeMaker.Set[] sets) => [.. sets.Select(s => s.Pole.Z < 0 ? -s.Pole : s.Pole)];
 
     private static DikeSheet PlaceDike(DikePlan plan, Terrain terrain, ulong seed, int number)
     {
