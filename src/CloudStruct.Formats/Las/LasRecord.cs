@@ -21,6 +21,9 @@ internal static class LasRecord
         _ => -1,
     };
 
+    /// <summary>Flag of a deleted point: in byte 15, formats 0 to 5 (with the class) and 6 to 10 (with the other flags).</summary>
+    public const int WithheldNarrow = 1 << 7, WithheldWide = 1 << 2;
+
     /// <summary>Formats 6 to 10 keep the class in a whole byte at 16, earlier ones in the low 5 bits of byte 15.</summary>
     public static bool HasWideClass(int format) => format >= 6;
 }

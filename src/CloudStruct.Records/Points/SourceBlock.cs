@@ -23,6 +23,9 @@ public sealed class SourceBlock : IDisposable
     /// <summary>Points in use.</summary>
     public int Count { get; set; }
 
+    /// <summary>Points of this stretch of the file that the file itself marks as deleted and that were left out.</summary>
+    public int Withheld { get; set; }
+
     /// <summary>Whether the colour columns are filled.</summary>
     public bool HasColour { get; }
 
