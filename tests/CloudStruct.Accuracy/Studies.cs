@@ -6,5 +6,6 @@ public static class Studies
     /// <summary>All of them.</summary>
     public static SortedDictionary<string, IStudy> All { get; } = new(StringComparer.Ordinal)
     {
+        ["width"] = new WidthStudy(),
     };
 }

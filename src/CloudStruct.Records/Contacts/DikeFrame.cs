@@ -26,4 +26,19 @@ public sealed record DikeFrame
 
     /// <summary>True when A is the lower side (dip below 30 deg).</summary>
     public bool AIsLower { get; init; }
+
+    /// <summary>Length along strike over which attitudes were fitted [m].</summary>
+    public double WindowM { get; init; }
+
+    /// <summary>Scatter of trace points about smooth margins, one standard deviation [m].</summary>
+    public double TraceScatterM { get; init; }
+
+    /// <summary>Distance along the margin over which that scatter is alike (to 1/e) [m].</summary>
+    public double TraceRangeM { get; init; }
+
+    /// <summary>Share of the variance of the scatter that neighbouring trace points do not share.</summary>
+    public double TraceWhiteShare { get; init; }
+
+    /// <summary>Correlation of the scatter between facing places of the two margins.</summary>
+    public double TraceShared { get; init; }
 }

@@ -1,0 +1,70 @@
+using CloudStruct.Records.Classes;
+using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
+using CloudStruct.Records.Stages;
+using static System.FormattableString;
+
+namespace CloudStruct.Stages.Contacts;
+
+/// <summary>Follows the contacts of every dike: traces, attitudes along strike or the plain statement that they give none,
+/// centre lines, and the domain of every face.</summary>
+public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, ContactsRecord>
+{
+    /// <inheritdoc/>
+    public string Name => "contacts";
+
+    /// <inheritdoc/>
+    public ContactsRecord Run(ContactsInput input, ContactSettings settings, StageContext context)
+    {
+        WorkingCloud cloud = input.Described.Cloud;
+        var sides = new FaceSides(cloud, input.Classes, input.Faces);
+        var dikes = new List<DikeFrame>();
+        var rows = new List<Contact>();
+        var traces = new List<MarginTrace>();
+        foreach (DikeBody body in input.Classes.Dikes)
+        {
+            context.Stop.ThrowIfCancellationRequested();
+            if (Trace(body, input, settings, context) is not { } tracer)
+            {
+                context.Say(new Remark(Name, Invariant($"Dike {body.Dike}: its margins could not be followed; it has no contact rows."), true));
+                continue;
+            }
+
+            dikes.Add(tracer.Frame(input.Baseline));
+            rows.AddRange(tracer.Rows());
+            traces.AddRange(tracer.Traces());
+            tracer.MarkMargins(sides);
+            context.Say(tracer.Summary(Name));
+        }
+
+        context.Progress(1);
+        return new ContactsRecord
+        {
+            Dikes = [.. dikes], Contacts = [.. rows], Traces = [.. traces], DomainOfFace = sides.Domain, InPlaceOfFace = sides.InPlace,
+        };
+    }
+
+    private static DikeTracer? Trace(DikeBody body, ContactsInput input, ContactSettings settings, StageContext context)
+    {
+        WorkingCloud cloud = input.Described.Cloud;
+        MarginEdge[] edges = EdgeScan.Of(
+            cloud, input.Classes, body.Dike, settings.OcclusionSpacings * cloud.SpacingM, context.Threads, context.Stop);
+        SheetPiece[] pieces = [.. body.Windows.Where(w => w.WidthM > 0 && w.LengthM > 0)
+            .Select(w => new SheetPiece(w.Middle, w.Normal.Unit(), w.WidthM, w.LengthM))];
+        if (pieces.Length == 0 || edges.Length == 0) return null;
+        var tracker = new MarginTracker(
+            edges, Chainage.Direction(input.Baseline), cloud.Frame.TurnDeg, LevelTrend(pieces), cloud.SpacingM, settings);
+        if (!tracker.Follow(pieces)) return null;
+        var ground = new GroundPlanes(cloud, tracker);
+        return new DikeTracer(body.Dike, tracker, tracker.Cells, cloud.Frame, ground.NormalAt, settings);
+    }
+
+    // Direction in which a nearly level sheet is longest: from the first to the last window.
+    private static Vec3 LevelTrend(SheetPiece[] pieces)
+    {
+        Vec3 d = pieces[^1].Middle - pieces[0].Middle;
+        d = new Vec3(d.X, d.Y, 0);
+        return d.Length > 0 ? d.Unit() : new Vec3(1, 0, 0);
+    }
+}

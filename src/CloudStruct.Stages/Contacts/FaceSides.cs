@@ -1,0 +1,109 @@
+using CloudStruct.Records.Classes;
+using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Faces;
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
+
+namespace CloudStruct.Stages.Contacts;
+
+/// <summary>Tells on which side of the rock each face is, and whether its rock is in place.</summary>
+internal sealed class FaceSides
+{
+    private const int PointsTried = 400;
+    private const double ReachM = 0.4;   // from the face to the trace that it must touch
+    private readonly WorkingCloud cloud;
+    private readonly FaceSet faces;
+    private readonly int[] starts, members;
+
+    /// <summary>Sorts points by face.</summary>
+    public FaceSides(WorkingCloud cloud, ClassifiedCloud classes, FaceSet faces)
+    {
+        this.cloud = cloud;
+        this.faces = faces;
+        int n = faces.Faces.Length;
+        starts = new int[n + 2];
+        foreach (int f in faces.FaceOfPoint) starts[f + 1]++;
+        for (int f = 0; f <= n; f++) starts[f + 1] += starts[f];
+        members = new int[faces.FaceOfPoint.Length];
+        int[] next = [.. starts];
+        for (int i = 0; i < members.Length; i++) members[next[faces.FaceOfPoint[i]]++] = i;
+        Domain = new FaceDomain[n];
+        InPlace = new InPlace[n];
+        for (int f = 0; f < n; f++) Vote(f, classes);
+    }
+
+    /// <summary>Domain of every face.</summary>
+    public FaceDomain[] Domain { get; }
+
+    /// <summary>Whether the rock of every face is in place.</summary>
+    public InPlace[] InPlace { get; }
+
+    private ReadOnlySpan<int> Members(int face) => members.AsSpan(starts[face + 1]..starts[face + 2]);
+
+    // The commonest class; clasts lie in the dike. A tie goes to what makes fewer claims: unknown, cover, loose first.
+    private void Vote(int face, ClassifiedCloud classes)
+    {
+        int host = 0, dike = 0, loose = 0, other = 0;
+        foreach (int i in Members(face))
+        {
+            switch ((RockClass)classes.Class[i])
+            {
+                case RockClass.Host: host++; break;
+                case RockClass.Dike or RockClass.Inclusion: dike++; break;
+                case RockClass.Loose: loose++; break;
+                default: other++; break;
+            }
+        }
+
+        int most = Math.Max(Math.Max(host, dike), Math.Max(loose, other));
+        bool rock = most > other && most > loose;
+        Domain[face] = !rock ? FaceDomain.Unknown : dike > host ? FaceDomain.Dike : FaceDomain.Host;
+        InPlace[face] = rock ? Records.Faces.InPlace.Yes : most == other ? Records.Faces.InPlace.Unknown : Records.Faces.InPlace.No;
+    }
+
+    /// <summary>Marks the faces that lie on a contact of one dike: parallel to it, and the trace that touches them runs in their
+    /// plane.</summary>
+    /// <param name="tracker">The dike's margins.</param>
+    /// <param name="cells">Its trace cells in order of s.</param>
+    /// <param name="normalAt">Unit normal of the dike at a place along the sheet.</param>
+    /// <param name="angleDeg">Largest angle between face and contact [deg].</param>
+    /// <param name="toleranceM">Largest distance of the trace from the face's plane, in the median [m].</param>
+    public void MarkMargins(MarginTracker tracker, TraceCell[] cells, Func<double, Vec3> normalAt, double angleDeg, double toleranceM)
+    {
+        double least = Math.Cos(angleDeg * Math.PI / 180);
+        for (int f = 0; f < faces.Faces.Length; f++)
+        {
+            if (InPlace[f] != Records.Faces.InPlace.Yes) continue;
+            Face face = faces.Faces[f];
+            SheetPoint at = tracker.Sheet.Of(face.Middle);
+            if (Math.Abs(face.Normal.Dot(normalAt(at.S))) < least) continue;
+            double away = Math.Min(Math.Abs(tracker.Guess.Distance(Margin.A, at)), Math.Abs(tracker.Guess.Distance(Margin.B, at)));
+            if (away > 0.5) continue;
+            if (TouchesTrace(f, at, cells, toleranceM)) Domain[f] = FaceDomain.Margin;
+        }
+    }
+
+    private bool TouchesTrace(int f, SheetPoint at, TraceCell[] cells, double toleranceM)
+    {
+        Face face = faces.Faces[f];
+        double half = (Math.Max(face.LengthM, face.HeightM) / 2) + ReachM;
+        ReadOnlySpan<int> own = Members(f);
+        int stride = Math.Max(1, own.Length / PointsTried);
+        var offsets = new List<double>();
+        foreach (TraceCell c in cells)
+        {
+            if (c.At.S < at.S - half) continue;
+            if (c.At.S > at.S + half) break;
+            double offset = Math.Abs(face.Normal.Dot(c.Place - face.Middle));
+            if (offset > 0.3) continue;
+            for (int k = 0; k < own.Length; k += stride)
+            {
+                if ((cloud.Place(own[k]) - c.Place).Length > ReachM) continue;
+                offsets.Add(offset);
+                break;
+            }
+        }
+
+        return offsets.Count >= 2 && MarginTracker.Median([.. offsets]) <= toleranceM;
+    }
+}

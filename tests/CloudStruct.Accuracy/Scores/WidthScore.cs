@@ -1,0 +1,100 @@
+using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Width;
+using CloudStruct.Simulate;
+
+namespace CloudStruct.Accuracy.Scores;
+
+/// <summary>Contacts and widths of one outcrop against its truth.</summary>
+public sealed class WidthScore
+{
+    /// <summary>Signed relative errors of true width at measured stations.</summary>
+    public List<double> WidthErrors { get; } = [];
+
+    /// <summary>Errors over the half-length of their interval: within ±1 where the truth lies inside.</summary>
+    public List<double> WidthRatios { get; } = [];
+
+    /// <summary>Angles between contact rows with a plane and the truth [deg].</summary>
+    public List<double> ContactErrorsDeg { get; } = [];
+
+    /// <summary>Those over their cones.</summary>
+    public List<double> ContactRatios { get; } = [];
+
+    /// <summary>Stations by status.</summary>
+    public Dictionary<StationStatus, int> Stations { get; } = [];
+
+    /// <summary>Measured stations in stretches that are truly hidden.</summary>
+    public int HiddenMeasured { get; private set; }
+
+    /// <summary>Measured stations away from them [m].</summary>
+    public double MeasuredM { get; private set; }
+
+    /// <summary>Length over which both margins truly show [m].</summary>
+    public double ShownM { get; private set; }
+
+    /// <summary>Contact rows, and those with a plane.</summary>
+    public (int All, int Plane) Rows { get; private set; }
+
+    /// <summary>Takes in one outcrop.</summary>
+    public void Add(SimulatedOutcrop truth, ContactsRecord contacts, WidthRecord width)
+    {
+        Vec3 origin = truth.Origin;
+        int[] which = [.. contacts.Dikes.Select(d => Match(truth, d))];
+        foreach (SimulatedDike d in truth.Dikes)
+        {
+            ShownM += d.Extent.ToM - d.Extent.FromM - d.Hidden.Sum(h => Math.Min(h.ToM, d.Extent.ToM) - Math.Max(h.FromM, d.Extent.FromM));
+        }
+
+        foreach (Contact c in contacts.Contacts)
+        {
+            Rows = (Rows.All + 1, Rows.Plane + (c.Constraint == Constraint.Plane ? 1 : 0));
+            int at = Array.FindIndex(contacts.Dikes, d => d.Dike == c.Dike);
+            if (c.Normal is not { } normal || which[at] < 0) continue;
+            SimulatedDike dike = truth.Dikes[which[at]];
+            int side = (c.Margin == Margin.A) == Same(contacts.Dikes[at], dike) ? 0 : 1;
+            Vec3 mean = default;
+            foreach (MarginTrace t in contacts.Traces.Where(t => t.Dike == c.Dike && t.Margin == c.Margin))
+            {
+                for (int i = 0; i < t.Points.Length; i++)
+                {
+                    if (t.ChainageM[i] >= c.ChainageFromM && t.ChainageM[i] <= c.ChainageToM) mean += dike.MarginNormalAt(side, t.Points[i] + origin);
+                }
+            }
+
+            if (mean.Length < 1e-9) continue;
+            double error = Math.Acos(Math.Min(1, Math.Abs(mean.Unit().Dot(normal)))) * 180 / Math.PI;
+            ContactErrorsDeg.Add(error);
+            ContactRatios.Add(error / c.Region!.Cone95Deg);
+        }
+
+        foreach (Station s in width.Stations)
+        {
+            Stations[s.Status] = Stations.GetValueOrDefault(s.Status) + 1;
+            int at = Array.FindIndex(contacts.Dikes, d => d.Dike == s.Dike);
+            if (s.Status != StationStatus.Measured || which[at] < 0) continue;
+            SimulatedDike dike = truth.Dikes[which[at]];
+            Vec3 place = ((s.AtA!.Value + s.AtB!.Value) / 2) + origin;
+            if (dike.IsHidden(dike.ChainageAt(place))) HiddenMeasured++;
+            else MeasuredM += width.StationM;
+            double w = dike.WidthAt(place), error = s.TrueWidthM!.Value - w;
+            WidthErrors.Add(error / w);
+            WidthRatios.Add(error / ((s.TrueWidthHigh95M!.Value - s.TrueWidthLow95M!.Value) / 2));
+        }
+    }
+
+    private static bool Same(DikeFrame frame, SimulatedDike dike) => frame.Normal[frame.Normal.Length / 2].Dot(dike.Normal) > 0;
+
+    private static int Match(SimulatedOutcrop truth, DikeFrame frame)
+    {
+        Vec3 middle = frame.CentreLine[frame.CentreLine.Length / 2] + truth.Origin;
+        int best = -1;
+        double least = double.PositiveInfinity;
+        for (int k = 0; k < truth.Dikes.Length; k++)
+        {
+            double off = Math.Abs(truth.Dikes[k].SignedFromA(middle) + truth.Dikes[k].SignedFromB(middle)) / 2;
+            if (off < least) (best, least) = (k, off);
+        }
+
+        return least < 3 ? best : -1;
+    }
+}
