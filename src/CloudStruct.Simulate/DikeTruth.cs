@@ -9,8 +9,12 @@ internal static class DikeTruth
 {
     private const double BinM = 0.25, BesideM = 0.25;
 
-    /// <summary>Points of each rock within <see cref="BesideM"/> of a margin and one bin that make it visible.</summary>
-    private const int Enough = 4;
+    /// <summary>A margin is seen where both rocks show beside it within this many bins to either side: gaps that a
+    /// person would bridge, up to about a metre, do not count as hidden.</summary>
+    private const int ReachBins = 2;
+
+    /// <summary>Points of each rock that make it visible there.</summary>
+    private const int Enough = 6;
 
     /// <summary>The truth about one dike.</summary>
     /// <param name="sheet">Its body.</param>
@@ -63,5 +67,15 @@ internal static class DikeTruth
         }
     }
 
-    private static bool Misses(int[,,] near, int bin, int margin) => near[bin, margin, 0] < Enough || near[bin, margin, 1] < Enough;
+    private static bool Misses(int[,,] near, int bin, int margin)
+    {
+        int host = 0, dike = 0;
+        for (int k = Math.Max(0, bin - ReachBins); k <= Math.Min(near.GetLength(0) - 1, bin + ReachBins); k++)
+        {
+            host += near[k, margin, margin];
+            dike += near[k, margin, 1 - margin];
+        }
+
+        return host < Enough || dike < Enough;
+    }
 }

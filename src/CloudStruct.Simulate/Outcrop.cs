@@ -11,7 +11,7 @@ namespace CloudStruct.Simulate;
 public static class Outcrop
 {
     /// <summary>Rays per wanted point: enough that nearly every cube of the thinning lattice that can be seen is seen.</summary>
-    private const double RaysPerPoint = 6;
+    private const double RaysPerPoint = 4;
 
     private const int Block = 4096;
 
@@ -56,17 +56,17 @@ public static class Outcrop
             {
                 Sight s = sights[i];
                 Vec3 n = normals[i] = surface.NormalOf(s);
-                (double inward, bool on, bool weathered) = surface.Wear(s, n);
+                Wear wear = surface.WearAt(s, n);
                 (RockClass kind, int rock) = Classify(massif, clasts, s);
-                Vec3 p = noise.Apply(i, s.Place - (n * inward), n, (s.Place - cameras[s.Camera].Place).Unit(), out bool stray);
-                onPlane[i] = on && !stray;
+                Vec3 p = noise.Apply(i, s.Place - (n * wear.InwardM), n, (s.Place - cameras[s.Camera].Place).Unit(), out bool stray);
+                onPlane[i] = wear.OnPlane && !stray;
                 classes[i] = (byte)(stray ? RockClass.Unknown : kind);
                 dikeOf[i] = (byte)(stray ? 0 : rock);
                 (x[i], y[i], z[i]) = (p.X + Origin.X, p.Y + Origin.Y, p.Z + Origin.Z);
                 if (!plan.HasColour) continue;
                 var lot = new Dice(seed, Purpose.Colour, (ulong)i + 1);
                 ulong block = s.Kind is Hit.Kinds.Plane or Hit.Kinds.Margin ? BlockLot(massif, s, n) : (ulong)s.Surface * 0x9E3779B97F4A7C15UL;
-                (double R, double G, double B) ground = paint.At(s.Place, n, kind, rock, block, weathered), lit = light.On(s.Place, n, crossings, ref lot);
+                (double R, double G, double B) ground = paint.At(s.Place, n, kind, rock, block, wear), lit = light.On(s.Place, n, crossings, ref lot);
                 (red[i], green[i], blue[i]) = Film.Expose((ground.R * lit.R, ground.G * lit.G, ground.B * lit.B), ref lot);
             }
         });
@@ -103,7 +103,7 @@ public static class Outcrop
     private static (RockClass Kind, int Rock) Classify(Massif massif, Clasts clasts, Sight s)
     {
         if (s.Kind == Hit.Kinds.Loose) return (RockClass.Loose, 0);
-        if (s.Kind == Hit.Kinds.Sheet && !massif.Planed) return ((RockClass)massif.Sheet.KindAt(s.Place), 0);
+        if (s.Kind == Hit.Kinds.Sheet && !massif.Planed) return (massif.Sheets[s.Surface].Kind, 0);
         if (s.Rock == 0) return (RockClass.Host, 0);
         return (clasts.Holds(s.Rock, s.Place) ? RockClass.Inclusion : RockClass.Dike, s.Rock);
     }

@@ -16,9 +16,9 @@ public sealed partial record OutcropPlan
     // A gently dipping set, one that faces out of the slope and one square to it, as cliffs have them.
     private static readonly JointSetPlan[] ThreeSets =
     [
-        new(new(0, 360), new(4, 18), new(120, 300), new(0.9, 1.4)),
-        new(new(155, 205), new(68, 88), new(90, 250), new(0.9, 1.5)),
-        new(new(55, 105), new(72, 100), new(90, 250), new(1.0, 1.7)),
+        new(new(0, 360), new(4, 18), new(120, 300), new(0.55, 0.95)),
+        new(new(155, 205), new(68, 88), new(90, 250), new(0.6, 1.1)),
+        new(new(55, 105), new(72, 100), new(90, 250), new(0.7, 1.2)),
     ];
 
     private static readonly Dictionary<string, OutcropPlan> Named = MakeNamed();
@@ -60,7 +60,7 @@ public sealed partial record OutcropPlan
             },
             demo with
             {
-                Name = "long", LengthM = 60, BreadthM = 16, Points = 1_800_000, Cameras = 16,
+                Name = "long", LengthM = 60, BreadthM = 16, Points = 1_800_000, Cameras = 26,
                 Steps =
                 [
                     .. CliffAndBenches,

@@ -85,7 +85,7 @@ public sealed partial record OutcropPlan
     public bool HasColour { get; init; } = true;
 
     /// <summary>Cameras of the flight, half of them looking down, half obliquely at the steps.</summary>
-    public int Cameras { get; init; } = 10;
+    public int Cameras { get; init; } = 14;
 
     /// <summary>Height of the sun [deg].</summary>
     public Span2 SunHeightDeg { get; init; } = new(28, 50);

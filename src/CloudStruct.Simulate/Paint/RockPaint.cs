@@ -44,8 +44,8 @@ internal sealed class RockPaint
     /// <param name="kind">True class.</param>
     /// <param name="rock">0 host, else number of the dike.</param>
     /// <param name="blockLot">Random number of the block.</param>
-    /// <param name="weathered">Whether the block's top is weathered.</param>
-    public (double R, double G, double B) At(Vec3 p, Vec3 n, RockClass kind, int rock, ulong blockLot, bool weathered)
+    /// <param name="wear">Wear of the surface there.</param>
+    public (double R, double G, double B) At(Vec3 p, Vec3 n, RockClass kind, int rock, ulong blockLot, Wear wear)
     {
         if (kind == RockClass.Cover) return Turf(p);
         RockLook look = rock == 0 || kind == RockClass.Inclusion ? plan.HostLook : plan.Dikes[rock - 1].Look;
@@ -57,8 +57,10 @@ internal sealed class RockPaint
             tone += look.Banding * band.At(squeezed);
         }
 
-        if (weathered) tone += 0.06;
-        double warm = (0.04 * hue.At(p)) + (weathered ? 0.02 : 0), k = Math.Exp(tone);
+        // Dirt and shade in open joints; a camera smears the line over a centimetre or two.
+        tone -= 0.75 * Drape.Ramp(1 - (wear.CrackM / 0.02));
+        if (wear.Weathered) tone += 0.06;
+        double warm = (0.04 * hue.At(p)) + (wear.Weathered ? 0.02 : 0), k = Math.Exp(tone);
         (double r, double g, double b) = (look.Red * k * (1 + warm), look.Green * k, look.Blue * k * (1 - warm));
         k = Stained(p, n);
         (r, g, b) = (r * k, g * k, b * (0.4 * k + 0.6 * k * k));

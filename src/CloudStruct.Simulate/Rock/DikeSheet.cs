@@ -8,7 +8,7 @@ namespace CloudStruct.Simulate.Rock;
 /// surface w = rest(s, v), so that w - rest has the sign of the side and, divided by its gradient, the distance.</remarks>
 internal sealed class DikeSheet
 {
-    private const int Waves = 5;
+    private const int Waves = 3;
     private readonly double bendPerM, widthM, taperPerM, jump, jumpAtM;
     private readonly Wave[] shared, ownA, ownB;
     private readonly (double Min, double Max) boundsA, boundsB;
@@ -140,6 +140,13 @@ internal sealed class DikeSheet
         (double s, double v, _) = Inside(p);
         Vec3 middle = Place(s, v, (Rest(0, s, v) + Rest(1, s, v)) / 2), n = MeanNormal(p);
         return AlongNormal(1, middle, n) - AlongNormal(0, middle, n);
+    }
+
+    /// <summary>Where along a ray the margins could first be met; the end when nowhere.</summary>
+    public double ComesNear(Vec3 from, Vec3 toward, double start, double end)
+    {
+        double w = (from - Middle).Dot(Across), speed = toward.Dot(Across);
+        return SiteBox.Clip(w, speed, boundsA.Min, boundsB.Max, ref start, ref end) ? start : end;
     }
 
     /// <summary>Adds the places where a ray crosses a margin, in no order.</summary>

@@ -1,4 +1,5 @@
 using CloudStruct.Records.Classes;
+using CloudStruct.Records.Frame;
 using CloudStruct.Simulate.Chance;
 
 namespace CloudStruct.Simulate.Rock;
@@ -55,16 +56,34 @@ internal sealed class Drape
     /// <summary>How far the rock under the drape is lowered [m].</summary>
     public double Lowering(double a, double b) => (0.75 * Soil(a, b)) + (0.45 * Scree(a, b));
 
-    /// <summary>Height and class of the drape; NaN where there is none.</summary>
-    public (double HeightM, byte Kind) At(double a, double b)
+    /// <summary>Sheets of soil and scree.</summary>
+    public IEnumerable<GroundSheet> Sheets(double cellM, int threads)
     {
-        double soil = Soil(a, b), scree = Scree(a, b);
-        if (soil < 0.02 && scree < 0.02) return (double.NaN, 0);
-        double ground = terrain.Height(a, b);
-        var flat = new Records.Frame.Vec3(a, b, 0);
-        double turf = ground - 1 + (1.12 * soil) + (0.04 * lumps.At(flat)) + (0.02 * tufts.At(flat));
-        double stones = ground - 1 + (0.95 * scree) + (0.07 * lumps.At(flat)) + (0.022 * gravel.At(flat));
-        return soil >= scree ? (turf, (byte)RockClass.Cover) : (stones, (byte)RockClass.Loose);
+        foreach ((double a, double b, double halfA, double halfB) in patches)
+        {
+            var box = new SiteBox(a - (1.6 * halfA), a + (1.6 * halfA), b - (1.6 * halfB), b + (1.6 * halfB));
+            yield return new GroundSheet(terrain, RockClass.Cover, box, cellM, threads, Turf);
+        }
+
+        if (screeToM > screeFromM)
+        {
+            var box = new SiteBox(screeFromM - 1.5, screeToM + 1.5, 0, terrain.BreadthM);
+            yield return new GroundSheet(terrain, RockClass.Loose, box, cellM, threads, Stones);
+        }
+    }
+
+    private double Turf(double a, double b)
+    {
+        double soil = Soil(a, b);
+        var flat = new Vec3(a, b, 0);
+        return soil < 0.02 ? double.NaN : terrain.Height(a, b) - 1 + (1.12 * soil) + (0.04 * lumps.At(flat)) + (0.02 * tufts.At(flat));
+    }
+
+    private double Stones(double a, double b)
+    {
+        double scree = Scree(a, b);
+        var flat = new Vec3(a, b, 0);
+        return scree < 0.02 ? double.NaN : terrain.Height(a, b) - 1 + (0.95 * scree) + (0.07 * lumps.At(flat)) + (0.022 * gravel.At(flat));
     }
 
     /// <summary>From 0 to 1, smoothly.</summary>

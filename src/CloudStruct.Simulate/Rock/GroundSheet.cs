@@ -1,3 +1,4 @@
+using CloudStruct.Records.Classes;
 using CloudStruct.Records.Frame;
 
 namespace CloudStruct.Simulate.Rock;
@@ -8,57 +9,51 @@ internal sealed class GroundSheet
     private const int Tile = 16;
     private const float Nothing = -1000;
     private readonly Terrain terrain;
-    private readonly double cellM;
+    private readonly double cellM, fromA, fromB, topM, bottomM;
     private readonly int rows, columns, tileRows, tileColumns;
     private readonly float[] heights, tileTops;
-    private readonly byte[] kinds;
 
     /// <summary>Samples a sheet on a grid.</summary>
     /// <param name="terrain">Gives the site coordinates.</param>
+    /// <param name="kind">Class of what lies there; Unknown for the rock itself.</param>
+    /// <param name="box">Site coordinates between which it lies.</param>
     /// <param name="cellM">Grid step [m].</param>
     /// <param name="threads">Workers.</param>
-    /// <param name="sample">Height at site coordinates and the class it has there (0: rock); NaN where there is none.</param>
-    public GroundSheet(Terrain terrain, double cellM, int threads, Func<double, double, (double HeightM, byte Kind)> sample)
+    /// <param name="sample">Height at site coordinates; NaN where there is none.</param>
+    public GroundSheet(Terrain terrain, RockClass kind, SiteBox box, double cellM, int threads, Func<double, double, double> sample)
     {
         this.terrain = terrain;
         this.cellM = cellM;
-        rows = (int)(terrain.LengthM / cellM) + 2;
-        columns = (int)(terrain.BreadthM / cellM) + 2;
+        Kind = kind;
+        (fromA, fromB) = (Math.Max(0, box.FromA), Math.Max(0, box.FromB));
+        rows = Math.Max(2, (int)((Math.Min(terrain.LengthM, box.ToA) - fromA) / cellM) + 2);
+        columns = Math.Max(2, (int)((Math.Min(terrain.BreadthM, box.ToB) - fromB) / cellM) + 2);
         heights = new float[rows * columns];
-        kinds = new byte[rows * columns];
         Chance.Workers.For(rows, threads, 16, (from, to) =>
         {
             for (int i = from; i < to; i++)
             {
                 for (int j = 0; j < columns; j++)
                 {
-                    (double z, byte kind) = sample(i * cellM, j * cellM);
+                    double z = sample(fromA + (i * cellM), fromB + (j * cellM));
                     heights[(i * columns) + j] = double.IsNaN(z) ? Nothing : (float)z;
-                    kinds[(i * columns) + j] = kind;
                 }
             }
         });
         tileRows = (rows / Tile) + 1;
         tileColumns = (columns / Tile) + 1;
         tileTops = TileTops();
-        IsEmpty = tileTops.All(t => t <= Nothing);
+        topM = heights.Max();
+        bottomM = heights.Where(h => h > Nothing).DefaultIfEmpty(Nothing).Min() - 0.1;
     }
 
-    /// <summary>True when there is nothing on the rock.</summary>
-    public bool IsEmpty { get; }
-
-    /// <summary>Class at a local place.</summary>
-    public byte KindAt(Vec3 p)
-    {
-        (double a, double b) = terrain.Site(p);
-        int i = Math.Clamp((int)((a / cellM) + 0.5), 0, rows - 1), j = Math.Clamp((int)((b / cellM) + 0.5), 0, columns - 1);
-        return kinds[(i * columns) + j];
-    }
+    /// <summary>Class of what lies there; Unknown for the rock itself.</summary>
+    public RockClass Kind { get; }
 
     /// <summary>Height at site coordinates, bilinear [m].</summary>
     public double Height(double a, double b)
     {
-        double x = Math.Clamp(a / cellM, 0, rows - 1.001), y = Math.Clamp(b / cellM, 0, columns - 1.001);
+        double x = Math.Clamp((a - fromA) / cellM, 0, rows - 1.001), y = Math.Clamp((b - fromB) / cellM, 0, columns - 1.001);
         int i = (int)x, j = (int)y, k = (i * columns) + j;
         double u = x - i, v = y - j;
         return ((1 - u) * (((1 - v) * heights[k]) + (v * heights[k + 1])))
@@ -78,9 +73,15 @@ internal sealed class GroundSheet
     public bool Cast(Vec3 from, Vec3 toward, double start, double end, out double t)
     {
         t = end;
-        if (IsEmpty) return false;
         (double a0, double b0) = terrain.Site(from);
         double da = toward.Dot(terrain.Uphill), db = toward.Dot(terrain.Right), level = Math.Sqrt((da * da) + (db * db));
+        if (!SiteBox.Clip(a0, da, fromA, fromA + ((rows - 1) * cellM), ref start, ref end)
+            || !SiteBox.Clip(b0, db, fromB, fromB + ((columns - 1) * cellM), ref start, ref end)
+            || !SiteBox.Clip(from.Z, toward.Z, bottomM, topM, ref start, ref end))
+        {
+            return false;
+        }
+
         double coarse = Tile * cellM / Math.Max(level, 0.5), fine = 0.6 * cellM / Math.Max(level, 0.5);
         for (double at = start; at < end; at += coarse)
         {
@@ -108,7 +109,7 @@ internal sealed class GroundSheet
 
     private float TopNear(double a, double b)
     {
-        int i = Math.Clamp((int)(a / (cellM * Tile)), 0, tileRows - 1), j = Math.Clamp((int)(b / (cellM * Tile)), 0, tileColumns - 1);
+        int i = Math.Clamp((int)((a - fromA) / (cellM * Tile)), 0, tileRows - 1), j = Math.Clamp((int)((b - fromB) / (cellM * Tile)), 0, tileColumns - 1);
         return tileTops[(i * tileColumns) + j];
     }
 

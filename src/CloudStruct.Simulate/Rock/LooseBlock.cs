@@ -6,8 +6,6 @@ namespace CloudStruct.Simulate.Rock;
 /// <summary>A fallen block: a skewed box with one corner off.</summary>
 internal sealed class LooseBlock
 {
-    private readonly Vec3 middle;
-    private readonly double reach;
     private readonly (Vec3 Normal, double Offset)[] sides;
 
     /// <summary>Draws a block lying about a place.</summary>
@@ -21,19 +19,25 @@ internal sealed class LooseBlock
         (Vec3 e, Vec3 f) = Axes.Beside(up);
         double turn = dice.Between(0, 2 * Math.PI);
         Vec3 first = (e * Math.Cos(turn)) + (f * Math.Sin(turn)), second = up.Cross(first);
-        middle = ground + new Vec3(0, 0, 0.7 * half[2]);
-        reach = 1.1 * Math.Sqrt((half[0] * half[0]) + (half[1] * half[1]) + (half[2] * half[2]));
+        Middle = ground + new Vec3(0, 0, 0.7 * half[2]);
+        ReachM = 1.1 * Math.Sqrt((half[0] * half[0]) + (half[1] * half[1]) + (half[2] * half[2]));
         Vec3[] axes = [first, second, up];
         sides = new (Vec3, double)[7];
         for (int k = 0; k < 6; k++)
         {
             Vec3 n = dice.Fisher(axes[k / 2] * (k % 2 == 0 ? 1 : -1), 60);
-            sides[k] = (n, n.Dot(middle) + half[k / 2]);
+            sides[k] = (n, n.Dot(Middle) + half[k / 2]);
         }
 
         Vec3 corner = ((first * half[0]) + (second * half[1]) + (up * half[2])).Unit();
-        sides[6] = (corner, corner.Dot(middle) + (0.72 * reach / 1.1));
+        sides[6] = (corner, corner.Dot(Middle) + (0.72 * ReachM / 1.1));
     }
+
+    /// <summary>Middle of the block, local.</summary>
+    public Vec3 Middle { get; }
+
+    /// <summary>No part of it is farther from its middle [m].</summary>
+    public double ReachM { get; }
 
     /// <summary>Sides: outward unit normal and offset.</summary>
     public IReadOnlyList<(Vec3 Normal, double Offset)> Sides => sides;
@@ -41,10 +45,10 @@ internal sealed class LooseBlock
     /// <summary>Where a ray enters, and through which side.</summary>
     public bool Cast(Vec3 from, Vec3 toward, double start, double end, out double t, out int side)
     {
-        Vec3 d = middle - from;
+        Vec3 d = Middle - from;
         double along = d.Dot(toward), off2 = d.Dot(d) - (along * along);
         (t, side) = (start, -1);
-        if (off2 > reach * reach || along + reach < start || along - reach > end) return false;
+        if (off2 > ReachM * ReachM || along + ReachM < start || along - ReachM > end) return false;
         double leave = end;
         for (int k = 0; k < sides.Length; k++)
         {

@@ -5,18 +5,20 @@ namespace CloudStruct.Simulate.Rock;
 /// <summary>The whole outcrop as a solid: host blocks, dike blocks, what lies on them.</summary>
 internal sealed class Massif
 {
-    private readonly double bottomM;
+    private const double BottomM = -6;
+    private readonly SiteBox looseBox;
+    private readonly double looseTopM;
 
     /// <summary>An outcrop from its parts.</summary>
-    public Massif(Terrain terrain, JointTree host, DikeSheet[] dikes, JointTree[] dikeBlocks, GroundSheet sheet, LooseBlock[] loose, bool planed)
+    public Massif(Terrain terrain, JointTree host, DikeSheet[] dikes, JointTree[] dikeBlocks, GroundSheet[] sheets, LooseBlock[] loose, bool planed)
     {
         Terrain = terrain;
         Dikes = dikes;
-        Sheet = sheet;
+        Sheets = sheets;
         Loose = loose;
         Planed = planed;
         Trees = [host, .. dikeBlocks];
-        bottomM = -6;
+        (looseBox, looseTopM) = BoxOf(terrain, loose);
     }
 
     /// <summary>The ground that decided which blocks are there.</summary>
@@ -29,7 +31,7 @@ internal sealed class Massif
     public JointTree[] Trees { get; }
 
     /// <summary>What lies on the rock.</summary>
-    public GroundSheet Sheet { get; }
+    public GroundSheet[] Sheets { get; }
 
     /// <summary>Fallen blocks.</summary>
     public LooseBlock[] Loose { get; }
@@ -63,20 +65,20 @@ internal sealed class Massif
         if (!Clip(from, toward, farthest, out double start, out double end)) return false;
         bool met = false;
         double t = end;
-        if (Sheet.Cast(from, toward, start, end, out double ts))
+        for (int k = 0; k < Sheets.Length; k++)
         {
+            if (!Sheets[k].Cast(from, toward, start, t, out double ts)) continue;
             Vec3 p = from + (toward * ts);
             met = true;
             t = ts;
-            hit = new Hit { T = ts, Kind = Hit.Kinds.Sheet, Normal = Sheet.Normal(p), Rock = Planed ? RockAt(p) : 0 };
+            hit = new Hit { T = ts, Kind = Hit.Kinds.Sheet, Surface = k, Normal = Sheets[k].Normal(p), Rock = Planed ? RockAt(p) : 0 };
         }
 
-        for (int k = 0; k < Loose.Length; k++)
+        if (Loose.Length > 0 && CastLoose(from, toward, start, t, out Hit block))
         {
-            if (!Loose[k].Cast(from, toward, start, t, out double tl, out int side)) continue;
             met = true;
-            t = tl;
-            hit = new Hit { T = tl, Kind = Hit.Kinds.Loose, Surface = (8 * k) + side, Normal = Loose[k].Sides[side].Normal };
+            t = block.T;
+            hit = block;
         }
 
         if (!Planed && CastRock(from, toward, start, t, crossings, out Hit rock))
@@ -88,7 +90,46 @@ internal sealed class Massif
         return met && hit.T > start + 1e-6;
     }
 
+    private bool CastLoose(Vec3 from, Vec3 toward, double start, double end, out Hit hit)
+    {
+        hit = default;
+        (double a, double b) = Terrain.Site(from);
+        if (!SiteBox.Clip(a, toward.Dot(Terrain.Uphill), looseBox.FromA, looseBox.ToA, ref start, ref end)
+            || !SiteBox.Clip(b, toward.Dot(Terrain.Right), looseBox.FromB, looseBox.ToB, ref start, ref end)
+            || !SiteBox.Clip(from.Z, toward.Z, BottomM, looseTopM, ref start, ref end))
+        {
+            return false;
+        }
+
+        bool met = false;
+        for (int k = 0; k < Loose.Length; k++)
+        {
+            if (!Loose[k].Cast(from, toward, start, end, out double t, out int side)) continue;
+            met = true;
+            end = t;
+            hit = new Hit { T = t, Kind = Hit.Kinds.Loose, Surface = (8 * k) + side, Normal = Loose[k].Sides[side].Normal };
+        }
+
+        return met;
+    }
+
     private bool CastRock(Vec3 from, Vec3 toward, double start, double end, CrossingList crossings, out Hit hit)
+    {
+        // Before the ray comes near any dike it can only meet host blocks, and mostly it does.
+        double near = end;
+        foreach (DikeSheet dike in Dikes) near = Math.Min(near, dike.ComesNear(from, toward, start, end));
+        if (near > start && Trees[0].Cast(from, toward, start, near, out double first, out int plane))
+        {
+            hit = plane >= 0 ? OnPlane(first, 0, plane, toward) : OnMargin(first, 0, -1, from, toward);
+            return true;
+        }
+
+        if (near < end) return CastAmongDikes(from, toward, near, end, start, crossings, out hit);
+        hit = default;
+        return false;
+    }
+
+    private bool CastAmongDikes(Vec3 from, Vec3 toward, double start, double end, double rayStart, CrossingList crossings, out Hit hit)
     {
         crossings.Clear();
         foreach (DikeSheet dike in Dikes) dike.AddCrossings(from, toward, start, end, crossings);
@@ -102,7 +143,7 @@ internal sealed class Massif
                 int rock = RockAt(from + (toward * ((a + b) / 2)));
                 if (Trees[rock].Cast(from, toward, a, b, out double t, out int node))
                 {
-                    hit = node >= 0 ? OnPlane(t, rock, node, toward) : OnMargin(t, rock, margin, from, toward);
+                    hit = node >= 0 ? OnPlane(t, rock, node, toward) : OnMargin(margin < 0 ? rayStart : t, rock, margin, from, toward);
                     return true;
                 }
             }
@@ -135,18 +176,18 @@ internal sealed class Massif
     {
         (double a, double b) = Terrain.Site(from);
         (start, end) = (0, farthest);
-        return Between(a, toward.Dot(Terrain.Uphill), 0, Terrain.LengthM, ref start, ref end)
-            && Between(b, toward.Dot(Terrain.Right), 0, Terrain.BreadthM, ref start, ref end)
-            && Between(from.Z, toward.Z, bottomM, Terrain.TopM, ref start, ref end);
+        return SiteBox.Clip(a, toward.Dot(Terrain.Uphill), 0, Terrain.LengthM, ref start, ref end)
+            && SiteBox.Clip(b, toward.Dot(Terrain.Right), 0, Terrain.BreadthM, ref start, ref end)
+            && SiteBox.Clip(from.Z, toward.Z, BottomM, Terrain.TopM, ref start, ref end);
     }
 
-    private static bool Between(double at, double speed, double low, double high, ref double start, ref double end)
+    private static (SiteBox Box, double TopM) BoxOf(Terrain terrain, LooseBlock[] loose)
     {
-        if (Math.Abs(speed) < 1e-12) return at >= low && at <= high;
-        double t0 = (low - at) / speed, t1 = (high - at) / speed;
-        if (t0 > t1) (t0, t1) = (t1, t0);
-        start = Math.Max(start, t0);
-        end = Math.Min(end, t1);
-        return start < end;
+        if (loose.Length == 0) return default;
+        (double A, double B)[] at = [.. loose.Select(l => terrain.Site(l.Middle))];
+        double reach = loose.Max(l => l.ReachM);
+        return (
+            new(at.Min(p => p.A) - reach, at.Max(p => p.A) + reach, at.Min(p => p.B) - reach, at.Max(p => p.B) + reach),
+            loose.Max(l => l.Middle.Z) + reach);
     }
 }

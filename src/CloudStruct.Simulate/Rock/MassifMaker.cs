@@ -1,3 +1,4 @@
+using CloudStruct.Records.Classes;
 using CloudStruct.Records.Frame;
 using CloudStruct.Simulate.Chance;
 
@@ -6,7 +7,7 @@ namespace CloudStruct.Simulate.Rock;
 /// <summary>Draws the rock of a plan: ground, joint sets, dikes, blocks, and what lies on them.</summary>
 internal static class MassifMaker
 {
-    private const double HostPlacesPerM3 = 70, DikePlacesPerM3 = 420;
+    private const double HostPlacesPerM3 = 130, DikePlacesPerM3 = 420;
 
     /// <summary>Makes the rock.</summary>
     /// <returns>The solid, the mean poles of the host's joint sets, and those of the joint sets of each dike.</returns>
@@ -34,11 +35,12 @@ internal static class MassifMaker
                 p => Stands(plan, terrain, drape, p, dike.ReliefM));
         }
 
-        GroundSheet sheet = plan.Planed
-            ? new GroundSheet(terrain, 0.025, threads, (a, b) => (PlanedHeight(terrain, host, dikes, blocks, a, b), 0))
-            : new GroundSheet(terrain, 0.04, threads, drape.At);
+        var whole = new SiteBox(0, terrain.LengthM, 0, terrain.BreadthM);
+        GroundSheet[] sheets = plan.Planed
+            ? [new GroundSheet(terrain, RockClass.Unknown, whole, 0.025, threads, (a, b) => PlanedHeight(terrain, host, dikes, blocks, a, b))]
+            : [.. drape.Sheets(0.04, threads)];
         LooseBlock[] loose = [.. Fallen(plan, terrain, drape, seed)];
-        return (new Massif(terrain, host, dikes, blocks, sheet, loose, plan.Planed), Upward(hostSets), dikePoles);
+        return (new Massif(terrain, host, dikes, blocks, sheets, loose, plan.Planed), Upward(hostSets), dikePoles);
     }
 
     private static Vec3[] Upward(JointTreeMaker.Set[] sets) => [.. sets.Select(s => s.Pole.Z < 0 ? -s.Pole : s.Pole)];

@@ -26,7 +26,9 @@ internal static class Thinning
         {
             // By lot, not by order: the last camera must not lose most.
             ulong[] lots = [.. kept.Select(i => new Dice(seed, Purpose.Keep, (ulong)i).Bits())];
-            ulong limit = lots.Order().ElementAt(wanted);
+            var sorted = (ulong[])lots.Clone();
+            Array.Sort(sorted);
+            ulong limit = sorted[wanted];
             kept = [.. kept.Where((_, k) => lots[k] < limit)];
         }
 
