@@ -1,5 +1,6 @@
 using CloudStruct.Formats.Tables;
 using CloudStruct.Products.Plots;
+using CloudStruct.Products.Report;
 using CloudStruct.Products.Tables;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Points;
@@ -27,8 +28,9 @@ public sealed class ProductsWriter
         var files = new ResultFolder(folder);
         WriteTables(files, findings, facts);
         context.Progress(0.1);
-        PlotsWriter.Write(files, findings, drawings, facts, context);
+        List<DrawnPlot> plots = PlotsWriter.Write(files, findings, drawings, facts, context);
         context.Progress(0.5);
+        files.Write("report.html", new ReportPage(findings, facts, plots).Bytes());
         return files.Written;
     }
 

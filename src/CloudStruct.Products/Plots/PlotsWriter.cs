@@ -20,20 +20,26 @@ internal static class PlotsWriter
     public static Figure View(Findings findings, ViewImage view, RunFacts facts) =>
         ViewFigure.Make(view, findings.Intake.Frame.North != North.Model, facts.RunId);
 
-    /// <summary>Writes all below plots/.</summary>
-    public static void Write(ResultFolder files, Findings findings, DrawingsRecord drawings, RunFacts facts, StageContext context)
+    /// <summary>Writes all below plots/, and hands them to the report.</summary>
+    public static List<DrawnPlot> Write(ResultFolder files, Findings findings, DrawingsRecord drawings, RunFacts facts, StageContext context)
     {
+        var drawn = new List<DrawnPlot>();
         foreach (Figure figure in Figures(findings, drawings, facts))
         {
             context.Stop.ThrowIfCancellationRequested();
-            files.Write($"plots/{figure.Name}.svg", FigureFiles.Svg(figure, facts.RunId));
-            files.Write($"plots/{figure.Name}.pdf", FigureFiles.Pdf(figure, facts));
-            files.Write($"plots/{figure.Name}.png", FigureFiles.Png(figure, facts.RunId));
+            var plot = new DrawnPlot(figure.Name, figure.Title, figure.Words, FigureFiles.Svg(figure, facts.RunId), FigureFiles.Png(figure, facts.RunId));
+            files.Write($"plots/{plot.Name}.svg", plot.Svg);
+            files.Write($"plots/{plot.Name}.pdf", FigureFiles.Pdf(figure, facts));
+            files.Write($"plots/{plot.Name}.png", plot.Png);
+            drawn.Add(plot);
         }
         foreach (ViewImage view in drawings.Views)
         {
             context.Stop.ThrowIfCancellationRequested();
-            files.Write($"plots/{view.Name}.png", FigureFiles.Png(View(findings, view, facts), facts.RunId, ViewFigure.PerPoint(view)));
+            byte[] png = FigureFiles.Png(View(findings, view, facts), facts.RunId, ViewFigure.PerPoint(view));
+            files.Write($"plots/{view.Name}.png", png);
+            drawn.Add(new(view.Name, view.Title, view.Sentence, [], png));
         }
+        return drawn;
     }
 }

@@ -48,6 +48,9 @@ public sealed record IntakeRecord
     /// <summary>Edge of an overlap column [m].</summary>
     public double OwnerCellM { get; init; }
 
+    /// <summary>Numbers of places at which more than one point lies, sorted: only the first point at each is kept.</summary>
+    public long[] DoubledKeys { get; init; } = [];
+
     /// <summary>Residuals at control points.</summary>
     public ControlResidual[] Control { get; init; } = [];
 }

@@ -18,6 +18,9 @@ public sealed record TileFix
     /// <summary>Points dropped because another file, or this one, holds the same point.</summary>
     public long Doubled { get; init; }
 
+    /// <summary>Points left out because another file shows the same ground and was chosen there.</summary>
+    public long Overlapped { get; init; }
+
     /// <summary>Added to z so that overlapping tiles agree [m].</summary>
     public double ShiftZM { get; init; }
 

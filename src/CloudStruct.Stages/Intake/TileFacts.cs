@@ -1,0 +1,74 @@
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
+
+namespace CloudStruct.Stages.Intake;
+
+/// <summary>What one look through a file tells.</summary>
+internal sealed class TileFacts(IPointSource source, int sampleCapacity)
+{
+    /// <summary>The file's header.</summary>
+    public CloudHeader Header { get; } = source.Header;
+
+    /// <summary>Points read.</summary>
+    public long Read { get; private set; }
+
+    /// <summary>Points with a coordinate that is no number.</summary>
+    public long NotANumber { get; private set; }
+
+    /// <summary>Largest colour value of any channel; 0 without colour.</summary>
+    public int LargestColour { get; private set; }
+
+    /// <summary>Sum of the fingerprints: equal for the same points in any order.</summary>
+    public ulong Content { get; private set; }
+
+    /// <summary>A random sample of the finite points, map coordinates [m].</summary>
+    public TileSample Sample { get; } = new(sampleCapacity);
+
+    /// <summary>Whether the file holds colour that says something.</summary>
+    public bool HasColour => LargestColour > 0;
+
+    /// <summary>Reads the file once.</summary>
+    /// <param name="map">To map coordinates.</param>
+    /// <param name="seen">Takes the fingerprint of every finite point; null when nobody asks.</param>
+    /// <param name="progress">Takes the number of points of each block.</param>
+    /// <param name="stop">Checked per block.</param>
+    public void Look(PointMap map, MaybeSeen? seen, Action<int> progress, CancellationToken stop)
+    {
+        foreach (SourceBlock block in source.Read(stop))
+        {
+            using (block)
+            {
+                stop.ThrowIfCancellationRequested();
+                for (int i = 0; i < block.Count; i++)
+                {
+                    double x = block.X[i], y = block.Y[i], z = block.Z[i];
+                    if (!(double.IsFinite(x) && double.IsFinite(y) && double.IsFinite(z)))
+                    {
+                        NotANumber++;
+                        continue;
+                    }
+
+                    Vec3 place = map[x, y, z];
+                    ulong print = Fingerprint.Of(place);
+                    Content = unchecked(Content + print);
+                    seen?.Add(print);
+                    Sample.Offer(Read + i, place);
+                }
+
+                if (block.HasColour)
+                {
+                    int largest = LargestColour;
+                    for (int i = 0; i < block.Count; i++)
+                    {
+                        largest = Math.Max(largest, Math.Max(block.Red[i], Math.Max(block.Green[i], block.Blue[i])));
+                    }
+
+                    LargestColour = largest;
+                }
+
+                Read += block.Count;
+                progress(block.Count);
+            }
+        }
+    }
+}
