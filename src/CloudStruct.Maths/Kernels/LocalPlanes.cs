@@ -45,40 +45,38 @@ public sealed class LocalPlanes
     public static LocalPlanes Fit(WorkingCloud cloud, double radiusM, int threads, CancellationToken stop)
     {
         var planes = new LocalPlanes(cloud.Count);
-        SortedGrid grid = cloud.Grid;
-        (float[] x, float[] y, float[] z) = (cloud.X, cloud.Y, cloud.Z);
-        int[]? order = null;
-        if (radiusM > 2 * grid.CellM)
-        {
-            // Wider than the shared cells serve: cells of their own.
-            (grid, order) = GridBuilder.Build(x, y, z, (float)(0.5001 * radiusM));
-            x = Array.ConvertAll(order, i => cloud.X[i]);
-            y = Array.ConvertAll(order, i => cloud.Y[i]);
-            z = Array.ConvertAll(order, i => cloud.Z[i]);
-        }
-
-        int ring = radiusM <= grid.CellM ? 1 : 2;
-        BlockParallel.For(
-            grid.Keys.Length,
+        ForWindows(
+            cloud,
+            radiusM,
             threads,
             stop,
-            () => new CellWindow(grid, x, y, z, ring),
-            (from, to, window) =>
+            (i, x, y, z) => planes.Set(i, LocalMoments.About(x, y, z, cloud.X[i], cloud.Y[i], cloud.Z[i], (float)radiusM)));
+        return planes;
+    }
+
+    /// <summary>Fits the planes again, each point starting from the plane chosen for it and listening only to points near that.</summary>
+    /// <param name="cloud">Sorted points.</param>
+    /// <param name="source">The point whose plane each starts from.</param>
+    /// <param name="radiusM">Radius of the fit [m].</param>
+    /// <param name="cutM">Distance from the plane beyond which a point has no say [m].</param>
+    /// <param name="threads">Workers.</param>
+    /// <param name="stop">Checked per block.</param>
+    public LocalPlanes Refit(WorkingCloud cloud, int[] source, double radiusM, double cutM, int threads, CancellationToken stop)
+    {
+        var planes = new LocalPlanes(cloud.Count);
+        ForWindows(
+            cloud,
+            radiusM,
+            threads,
+            stop,
+            (i, x, y, z) =>
             {
-                window.StartAt(from);
-                for (int cell = from; cell < to; cell++)
-                {
-                    window.Gather(cell);
-                    ReadOnlySpan<float> wx = window.X.AsSpan(0, window.Padded);
-                    ReadOnlySpan<float> wy = window.Y.AsSpan(0, window.Padded);
-                    ReadOnlySpan<float> wz = window.Z.AsSpan(0, window.Padded);
-                    for (int i = grid.Starts[cell]; i < grid.Starts[cell + 1]; i++)
-                    {
-                        planes.Set(order is null ? i : order[i], LocalMoments.About(wx, wy, wz, x[i], y[i], z[i], (float)radiusM));
-                    }
-                }
-            },
-            256);
+                int s = source[i];
+                planes.Set(
+                    i,
+                    LocalMoments.AboutPlane(
+                        x, y, z, cloud.X[i], cloud.Y[i], cloud.Z[i], (float)radiusM, NormalX[s], NormalY[s], NormalZ[s], Passing(cloud, s, i), (float)cutM));
+            });
         return planes;
     }
 
@@ -129,14 +127,51 @@ public sealed class LocalPlanes
         return best;
     }
 
-    private bool Passes(WorkingCloud cloud, int plane, int i, float close)
+    private bool Passes(WorkingCloud cloud, int plane, int i, float close) => Math.Abs(Passing(cloud, plane, i)) <= close;
+
+    // Distance of a point's plane from another point, along the normal.
+    private float Passing(WorkingCloud cloud, int plane, int i) =>
+        Offset[plane]
+        - (NormalX[plane] * (cloud.X[i] - cloud.X[plane]))
+        - (NormalY[plane] * (cloud.Y[i] - cloud.Y[plane]))
+        - (NormalZ[plane] * (cloud.Z[i] - cloud.Z[plane]));
+
+    private static void ForWindows(WorkingCloud cloud, double radiusM, int threads, CancellationToken stop, PointBody body)
     {
-        float d = (NormalX[plane] * (cloud.X[i] - cloud.X[plane]))
-            + (NormalY[plane] * (cloud.Y[i] - cloud.Y[plane]))
-            + (NormalZ[plane] * (cloud.Z[i] - cloud.Z[plane]))
-            - Offset[plane];
-        return Math.Abs(d) <= close;
+        SortedGrid grid = cloud.Grid;
+        (float[] x, float[] y, float[] z) = (cloud.X, cloud.Y, cloud.Z);
+        int[]? order = null;
+        if (radiusM > 2 * grid.CellM)
+        {
+            // Wider than the shared cells serve: cells of their own.
+            (grid, order) = GridBuilder.Build(x, y, z, (float)(0.5001 * radiusM));
+            x = Array.ConvertAll(order, i => cloud.X[i]);
+            y = Array.ConvertAll(order, i => cloud.Y[i]);
+            z = Array.ConvertAll(order, i => cloud.Z[i]);
+        }
+
+        int ring = radiusM <= grid.CellM ? 1 : 2;
+        BlockParallel.For(
+            grid.Keys.Length,
+            threads,
+            stop,
+            () => new CellWindow(grid, x, y, z, ring),
+            (from, to, window) =>
+            {
+                window.StartAt(from);
+                for (int cell = from; cell < to; cell++)
+                {
+                    window.Gather(cell);
+                    ReadOnlySpan<float> wx = window.X.AsSpan(0, window.Padded);
+                    ReadOnlySpan<float> wy = window.Y.AsSpan(0, window.Padded);
+                    ReadOnlySpan<float> wz = window.Z.AsSpan(0, window.Padded);
+                    for (int i = grid.Starts[cell]; i < grid.Starts[cell + 1]; i++) body(order is null ? i : order[i], wx, wy, wz);
+                }
+            },
+            256);
     }
+
+    private delegate void PointBody(int i, ReadOnlySpan<float> x, ReadOnlySpan<float> y, ReadOnlySpan<float> z);
 
     private void Set(int i, in LocalMoments sums)
     {
