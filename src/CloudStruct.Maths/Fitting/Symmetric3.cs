@@ -30,6 +30,32 @@ public readonly record struct Symmetric3(double Xx, double Xy, double Xz, double
     /// <summary>vᵀ M v.</summary>
     public double Form(Vec3 v) => v.Dot(Times(v));
 
+    /// <summary>Determinant.</summary>
+    public double Determinant =>
+        (Xx * ((Yy * Zz) - (Yz * Yz))) - (Xy * ((Xy * Zz) - (Yz * Xz))) + (Xz * ((Xy * Yz) - (Yy * Xz)));
+
+    /// <summary>Inverse; infinities or NaN when singular.</summary>
+    public Symmetric3 Inverse()
+    {
+        double k = 1 / Determinant;
+        return new Symmetric3(
+            k * ((Yy * Zz) - (Yz * Yz)),
+            k * ((Xz * Yz) - (Xy * Zz)),
+            k * ((Xy * Yz) - (Xz * Yy)),
+            k * ((Xx * Zz) - (Xz * Xz)),
+            k * ((Xy * Xz) - (Xx * Yz)),
+            k * ((Xx * Yy) - (Xy * Xy)));
+    }
+
+    /// <summary>M C M, with M this matrix.</summary>
+    public Symmetric3 Around(Symmetric3 c)
+    {
+        // Columns of C M, then rows of M times them.
+        Vec3 m1 = new(Xx, Xy, Xz), m2 = new(Xy, Yy, Yz), m3 = new(Xz, Yz, Zz);
+        Vec3 c1 = c.Times(m1), c2 = c.Times(m2), c3 = c.Times(m3);
+        return new Symmetric3(m1.Dot(c1), m1.Dot(c2), m1.Dot(c3), m2.Dot(c2), m2.Dot(c3), m3.Dot(c3));
+    }
+
     /// <summary>Eigenvalues in falling order with unit eigenvectors, a right-handed triple up to sign.</summary>
     /// <remarks>Cyclic Jacobi turns: slower than the closed form, but exact to rounding also for equal and for tiny values,
     /// where the closed form loses half its digits. A null matrix gives the unit axes.</remarks>

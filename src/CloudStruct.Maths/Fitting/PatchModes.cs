@@ -1,0 +1,223 @@
+namespace CloudStruct.Maths.Fitting;
+
+/// <summary>Decomposes the residuals of a planar patch into waves and sums its pairs by distance, on a raster.</summary>
+/// <remarks>One per worker: it keeps its scratch memory. Cost: the square of the number of cells, which is bounded.</remarks>
+public sealed partial class PatchModes
+{
+    /// <summary>Most waves: all polynomials up to degree 5.</summary>
+    public const int MostWaves = 21;
+
+    private const int Lanes = 24;   // waves, one product column, padded to whole vectors
+    private const int MostCells = 480;
+
+    private readonly LagBins bins;
+    private readonly double finestM;
+    private double[] weight = [], square = [], residual = [], wave = [];
+    private int nx, ny;
+    private double cellM;
+
+    /// <summary>For patches of one cloud.</summary>
+    /// <param name="bins">Common to all patches.</param>
+    /// <param name="finestM">Smallest cell worth having: about the distance between points [m].</param>
+    public PatchModes(LagBins bins, double finestM)
+    {
+        this.bins = bins;
+        this.finestM = finestM;
+    }
+
+    /// <summary>The record of one patch.</summary>
+    /// <param name="u">First coordinate in the plane [m].</param>
+    /// <param name="v">Second coordinate in the plane [m].</param>
+    /// <param name="r">Distance from the fitted plane [m].</param>
+    /// <param name="w">Weight of each point in the fit; points of weight 0 do not count.</param>
+    /// <returns>Null when the points span no area.</returns>
+    public PatchRecord? Record(ReadOnlySpan<double> u, ReadOnlySpan<double> v, ReadOnlySpan<double> r, ReadOnlySpan<double> w)
+    {
+        double sw = 0, su = 0, sv = 0;
+        for (int i = 0; i < u.Length; i++)
+        {
+            sw += w[i];
+            su += w[i] * u[i];
+            sv += w[i] * v[i];
+        }
+
+        if (!(sw > 3)) return null;
+        double mu = su / sw, mv = sv / sw, uu = 0, uv = 0, vv = 0;
+        for (int i = 0; i < u.Length; i++)
+        {
+            double du = u[i] - mu, dv = v[i] - mv;
+            uu += w[i] * du * du;
+            uv += w[i] * du * dv;
+            vv += w[i] * dv * dv;
+        }
+
+        double turn = Math.Atan2(2 * uv, uu - vv) / 2, cos = Math.Cos(turn), sin = Math.Sin(turn);
+        if (!Rasterise(u, v, r, w, mu, mv, cos, sin, out double meanSquare)) return null;
+        int waves = Waves(sw);
+        if (waves < 3) return null;
+
+        double total = 0;
+        foreach (double c in weight.AsSpan(0, nx * ny)) total += c;
+        var squares = new double[waves];
+        var white = new double[waves];
+        for (int k = 0; k < waves; k++)
+        {
+            double q = 0, s = 0;
+            for (int c = 0; c < nx * ny; c++)
+            {
+                double f = wave[(c * Lanes) + k];
+                q += residual[c] * f;
+                s += square[c] * f * f;
+            }
+
+            squares[k] = q / total * (q / total);
+            white[k] = s / (total * total);
+        }
+
+        (double spreadU, double spreadV) = Spreads(total);
+        return new PatchRecord
+        {
+            Waves = waves,
+            Squares = squares,
+            WhiteShare = white,
+            LagSums = SumPairs(waves, total),
+            MeanSquare = meanSquare,
+            SpreadU = spreadU,
+            SpreadV = spreadV,
+            Turn = turn,
+        };
+    }
+
+    private bool Rasterise(
+        ReadOnlySpan<double> u,
+        ReadOnlySpan<double> v,
+        ReadOnlySpan<double> r,
+        ReadOnlySpan<double> w,
+        double mu,
+        double mv,
+        double cos,
+        double sin,
+        out double meanSquare)
+    {
+        double lowX = double.MaxValue, highX = double.MinValue, lowY = double.MaxValue, highY = double.MinValue;
+        for (int i = 0; i < u.Length; i++)
+        {
+            if (!(w[i] > 0)) continue;
+            double du = u[i] - mu, dv = v[i] - mv, x = (cos * du) + (sin * dv), y = (cos * dv) - (sin * du);
+            lowX = Math.Min(lowX, x);
+            highX = Math.Max(highX, x);
+            lowY = Math.Min(lowY, y);
+            highY = Math.Max(highY, y);
+        }
+
+        double lengthX = highX - lowX, lengthY = highY - lowY;
+        cellM = Math.Max(finestM, Math.Sqrt(lengthX * lengthY / MostCells));
+        cellM = Math.Max(cellM, lengthX / (MostCells / 2.0));   // a strip one cell wide
+        nx = Math.Max(1, (int)Math.Ceiling(lengthX / cellM));
+        ny = Math.Max(1, (int)Math.Ceiling(lengthY / cellM));
+        int cells = nx * ny;
+        meanSquare = 0;
+        if (nx < 2 || ny < 2) return false;
+        if (weight.Length < cells)
+        {
+            weight = new double[cells];
+            square = new double[cells];
+            residual = new double[cells];
+            wave = new double[cells * Lanes];
+        }
+
+        Array.Clear(weight, 0, cells);
+        Array.Clear(square, 0, cells);
+        Array.Clear(residual, 0, cells);
+        double sum = 0, sumW = 0;
+        for (int i = 0; i < u.Length; i++)
+        {
+            if (!(w[i] > 0)) continue;
+            double du = u[i] - mu, dv = v[i] - mv;
+            int x = Math.Clamp((int)(((cos * du) + (sin * dv) - lowX) / cellM), 0, nx - 1);
+            int y = Math.Clamp((int)(((cos * dv) - (sin * du) - lowY) / cellM), 0, ny - 1);
+            int c = (y * nx) + x;
+            weight[c] += w[i];
+            square[c] += w[i] * w[i];
+            residual[c] += w[i] * r[i];
+            sum += w[i] * r[i] * r[i];
+            sumW += w[i];
+        }
+
+        meanSquare = sum / sumW;
+        return true;
+    }
+
+    // Fills the polynomials up to degree 5 in order of degree, made orthonormal over the weighted cells; gives how many there are.
+    private int Waves(double total)
+    {
+        int cells = nx * ny, occupied = 0;
+        for (int c = 0; c < cells; c++)
+        {
+            if (weight[c] > 0) occupied++;
+        }
+
+        Array.Clear(wave, 0, cells * Lanes);
+        int most = Math.Min(MostWaves, occupied / 2), k = 0;
+        for (int degree = 0; degree <= 5; degree++)
+        {
+            for (int j = 0; j <= degree && k < most; j++)
+            {
+                for (int c = 0; c < cells; c++)
+                {
+                    if (!(weight[c] > 0)) continue;
+                    double x = (((c % nx) + 0.5) * 2 / nx) - 1, y = (((c / nx) + 0.5) * 2 / ny) - 1;
+                    wave[(c * Lanes) + k] = Math.Pow(x, degree - j) * Math.Pow(y, j);
+                }
+
+                if (Orthonormal(k, total)) k++;
+                else if (k < 3) return k;
+            }
+        }
+
+        return k;
+    }
+
+    private bool Orthonormal(int k, double total)
+    {
+        double before = Norm2(k, total);
+        for (int twice = 0; twice < 2; twice++)
+        {
+            for (int j = 0; j < k; j++)
+            {
+                double dot = 0;
+                for (int c = 0; c < nx * ny; c++) dot += weight[c] * wave[(c * Lanes) + j] * wave[(c * Lanes) + k];
+                dot /= total;
+                for (int c = 0; c < nx * ny; c++) wave[(c * Lanes) + k] -= dot * wave[(c * Lanes) + j];
+            }
+        }
+
+        double after = Norm2(k, total);
+        if (!(after > 1e-6 * before)) return false;
+        double scale = 1 / Math.Sqrt(after);
+        for (int c = 0; c < nx * ny; c++) wave[(c * Lanes) + k] *= scale;
+        return true;
+    }
+
+    private double Norm2(int k, double total)
+    {
+        double sum = 0;
+        for (int c = 0; c < nx * ny; c++) sum += weight[c] * wave[(c * Lanes) + k] * wave[(c * Lanes) + k];
+        return sum / total;
+    }
+
+    private (double U, double V) Spreads(double total)
+    {
+        double x = 0, y = 0, xx = 0, yy = 0;
+        for (int c = 0; c < nx * ny; c++)
+        {
+            double px = ((c % nx) + 0.5) * cellM, py = ((c / nx) + 0.5) * cellM;
+            x += weight[c] * px;
+            y += weight[c] * py;
+            xx += weight[c] * px * px;
+            yy += weight[c] * py * py;
+        }
+
+        return (Math.Sqrt((xx / total) - (x / total * (x / total))), Math.Sqrt((yy / total) - (y / total * (y / total))));
+    }
+}
