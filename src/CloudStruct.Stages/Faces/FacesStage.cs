@@ -1,0 +1,123 @@
+using CloudStruct.Maths.Blocks;
+using CloudStruct.Records.Faces;
+using CloudStruct.Records.Points;
+using CloudStruct.Records.Stages;
+using static System.FormattableString;
+
+namespace CloudStruct.Stages.Faces;
+
+/// <summary>Finds the planar faces of a described cloud and measures them: regions grow, labels compete for points, pieces of
+/// one plane are joined, weathered rock is refused, and what stays is fitted on all its points.</summary>
+/// <remarks>docs/methods-faces.md gives the formulas, their sources and the figures reached.</remarks>
+public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
+{
+    // The describe stage's figure is the scatter within small neighbourhoods, which correlated noise hardly shows in.
+    private const double FirstScatterFactor = 1.6;
+    private const double BandOverScatter = 2;
+
+    /// <inheritdoc/>
+    public string Name => "faces";
+
+    /// <inheritdoc/>
+    public FaceSet Run(DescribedCloud input, FaceSettings settings, StageContext context)
+    {
+        var surface = new Surface(input, settings, context.Threads, context.Stop);
+        double scatter = FirstScatter(input, surface);
+        double Band() => settings.ToleranceM ?? BandOverScatter * scatter;
+
+        var pieces = new Pieces(surface.Count);
+        new Growing(surface, Band()).Into(pieces);
+        pieces.Refit(surface, scatter, 2);
+        context.Progress(0.25);
+        scatter = SceneNoise.Scatter(surface, pieces, scatter);
+        new Competing(surface, scatter, Band()).Play(pieces, scatter, 2);
+        SceneNoise noise = SceneNoise.Learn(surface, pieces, scatter, 60);
+        new Joining(surface, scatter, noise.LengthM).Into(pieces);
+        context.Progress(0.45);
+
+        new Growing(surface, Band()).Into(pieces);
+        pieces.Refit(surface, scatter, 2);
+        new Competing(surface, scatter, Band()).Play(pieces, scatter, 3);
+        new Joining(surface, scatter, noise.LengthM).Into(pieces);
+        context.Progress(0.7);
+
+        scatter = SceneNoise.Scatter(surface, pieces, scatter);
+        bool[] refused = Refusing.Of(surface, pieces);
+        noise = SceneNoise.Learn(surface, pieces, scatter, 400);
+        context.Progress(0.8);
+        FaceSet found = Report(surface, pieces, refused, noise, input, Band());
+        Say(context, found, surface, pieces, refused);
+        context.Progress(1);
+        return found;
+    }
+
+    private static double FirstScatter(DescribedCloud input, Surface surface)
+    {
+        double least = Math.Max(0.02 * surface.SpacingM, 1e-4);   // float coordinates and fault-free made-up clouds
+        return double.IsFinite(input.NoiseM) ? Math.Max(least, FirstScatterFactor * input.NoiseM) : least;
+    }
+
+    private static FaceSet Report(
+        Surface surface, Pieces pieces, bool[] refused, SceneNoise noise, DescribedCloud input, double toleranceM)
+    {
+        var measured = new Face?[pieces.Count];
+        BlockParallel.For(
+            pieces.Count,
+            surface.Threads,
+            surface.Stop,
+            () => new Measuring(surface, pieces, noise, input.Cloud.Frame),
+            (from, to, measuring) =>
+            {
+                for (int k = Math.Max(1, from); k < to; k++)
+                {
+                    if (refused[k]) continue;
+                    Face face = measuring.Of(k);
+                    if (face.AreaM2 >= surface.Settings.SmallestFaceM2) measured[k] = face;
+                }
+            },
+            length: 4);
+
+        int[] order = [.. Enumerable.Range(0, pieces.Count).Where(k => measured[k] is not null)];
+        Array.Sort(order, (a, b) =>
+        {
+            int byArea = measured[b]!.AreaM2.CompareTo(measured[a]!.AreaM2);
+            return byArea != 0 ? byArea : pieces.Of(a)[0].CompareTo(pieces.Of(b)[0]);
+        });
+        var number = new int[pieces.Count];
+        for (int f = 0; f < order.Length; f++) number[order[f]] = f + 1;
+        return new FaceSet
+        {
+            Faces = [.. order.Select((k, f) => measured[k]! with { FaceId = f + 1 })],
+            FaceOfPoint = [.. pieces.Label.Select(l => number[l])],
+            SmallestFaceM2 = surface.Settings.SmallestFaceM2,
+            ToleranceM = toleranceM,
+            NoiseM = noise.ScatterM,
+            NoiseLengthM = noise.LengthM,
+        };
+    }
+
+    private void Say(StageContext context, FaceSet found, Surface surface, Pieces pieces, bool[] refused)
+    {
+        double area = 0;
+        int count = 0;
+        for (int k = 1; k < refused.Length; k++)
+        {
+            if (!refused[k]) continue;
+            count++;
+            area += pieces.Of(k).Length * surface.PointAreaM2;
+        }
+
+        if (count > 0)
+            context.Say(new Remark(Name, Invariant($"{count} flat pieces ({area:F1} m²) were refused as weathered rock or soil: their surface is rougher than that of the scene's large faces."), false));
+        if (found.Faces.Length == 0)
+        {
+            context.Say(new Remark(Name, Invariant($"No planar face of {found.SmallestFaceM2:G3} m² or more was found."), true));
+            return;
+        }
+
+        context.Say(new Remark(
+            Name,
+            Invariant($"{found.Faces.Length} faces of {found.Faces[^1].AreaM2:G3} to {found.Faces[0].AreaM2:G3} m²; points scatter about them by {found.NoiseM * 1000:F1} mm, correlated over {found.NoiseLengthM * 100:F0} cm."),
+            false));
+    }
+}

@@ -1,0 +1,161 @@
+using CloudStruct.Maths.Fitting;
+using CloudStruct.Records.Frame;
+
+namespace CloudStruct.Stages.Faces;
+
+/// <summary>Cuts labels into connected fragments and joins neighbouring fragments that are one plane.</summary>
+/// <remarks>Two fragments are one plane when offset and slopes differ by no more than their errors allow, errors taken as
+/// correlated over the noise length: with independent errors every large face would stay in pieces.</remarks>
+internal sealed class Joining
+{
+    // chi-square of 3 degrees of freedom is above 16.3 once in a thousand.
+    private const double Limit = 16.3;
+
+    // Geology beside noise: joints undulate, so that two halves of one face may differ by so much although both are well known.
+    private const double SlopeTolerance = 0.6 * Math.PI / 180;
+    private const double OffsetToleranceShare = 0.35;
+
+    // Beyond this a pair is never one plane, however poorly its pieces are known.
+    private const double MostTurnDeg = 8;
+
+    private readonly Surface surface;
+    private readonly double scatterM;
+    private readonly double noiseLengthM;
+
+    public Joining(Surface surface, double scatterM, double noiseLengthM)
+    {
+        this.surface = surface;
+        this.scatterM = scatterM;
+        this.noiseLengthM = noiseLengthM;
+    }
+
+    /// <summary>Cuts, joins, drops what stays smaller than half the smallest face.</summary>
+    public void Into(Pieces pieces)
+    {
+        int[] parent = Cut(pieces);
+        var sums = Sums(pieces);
+        for (int round = 0; round < 5; round++)
+        {
+            if (!JoinOnce(pieces, parent, sums)) break;
+        }
+
+        pieces.Compact(surface.SmallestPoints);
+        pieces.Refit(surface, scatterM, 3);
+    }
+
+    // Relabels by connected component of the graph; gives the label that each fragment came from.
+    private int[] Cut(Pieces pieces)
+    {
+        int[] label = pieces.Label;
+        var fragment = new int[label.Length];
+        var planes = new List<PlaneFit> { default };
+        var parent = new List<int> { 0 };
+        var stack = new Stack<int>();
+        for (int s = 0; s < label.Length; s++)
+        {
+            if (label[s] == 0 || fragment[s] != 0) continue;
+            int own = planes.Count;
+            planes.Add(pieces.Planes[label[s]]);
+            parent.Add(label[s]);
+            fragment[s] = own;
+            stack.Push(s);
+            while (stack.Count > 0)
+            {
+                int i = stack.Pop();
+                foreach (int j in surface.NeighboursOf(i))
+                {
+                    if (j < 0) break;
+                    if (fragment[j] != 0 || label[j] != label[s]) continue;
+                    fragment[j] = own;
+                    stack.Push(j);
+                }
+            }
+        }
+
+        pieces.Label = fragment;
+        pieces.Planes.Clear();
+        pieces.Planes.AddRange(planes);
+        return [.. parent];
+    }
+
+    private Moments[] Sums(Pieces pieces)
+    {
+        pieces.Sort();
+        var sums = new Moments[pieces.Count];
+        Vec3 shift = pieces.Label.Length > 0 ? surface.Place(0) : default;   // one shift for all, so that sums can be added
+        for (int k = 0; k < sums.Length; k++)
+        {
+            sums[k] = new Moments(shift);
+            if (k == 0) continue;
+            foreach (int i in pieces.Of(k)) sums[k].Add(surface.X[i], surface.Y[i], surface.Z[i]);
+        }
+
+        return sums;
+    }
+
+    private bool JoinOnce(Pieces pieces, int[] parent, Moments[] sums)
+    {
+        var candidates = new List<(double Cost, int A, int B)>();
+        foreach ((int a, int b) in Nearness.Pairs(surface, pieces.Label, surface.GapM))
+        {
+            double cost = Cost(parent[a] == parent[b], pieces.Planes[a], pieces.Planes[b], sums[a], sums[b]);
+            if (cost < Limit) candidates.Add((cost, a, b));
+        }
+
+        candidates.Sort();
+        var into = new int[pieces.Count];
+        var busy = new bool[pieces.Count];
+        for (int k = 0; k < into.Length; k++) into[k] = k;
+        bool any = false;
+        foreach ((_, int a, int b) in candidates)
+        {
+            if (busy[a] || busy[b]) continue;
+            busy[a] = busy[b] = any = true;
+            (int keep, int drop) = sums[a].Weight >= sums[b].Weight ? (a, b) : (b, a);
+            into[drop] = keep;
+            sums[keep].Add(sums[drop]);
+            pieces.Planes[keep] = PlaneFit.From(sums[keep]);
+        }
+
+        if (!any) return false;
+        for (int i = 0; i < pieces.Label.Length; i++) pieces.Label[i] = into[pieces.Label[i]];
+        return true;
+    }
+
+    private double Cost(bool sameParent, PlaneFit a, PlaneFit b, in Moments sumA, in Moments sumB)
+    {
+        // Splinters carry no plane of their own: they only go back to what they broke from.
+        if (sumA.Weight < 12 || sumB.Weight < 12) return sameParent ? 0 : double.PositiveInfinity;
+        (PlaneFit big, PlaneFit small) = sumA.Weight >= sumB.Weight ? (a, b) : (b, a);
+        double turn = big.Normal.Cross(small.Normal).Length;
+        if (turn > Math.Sin(MostTurnDeg * Math.PI / 180)) return double.PositiveInfinity;
+
+        // In the frame of the larger, about the middle of the smaller, where offset and slopes of the smaller are independent.
+        Vec3 n = big.Normal, m = small.Normal.Dot(n) < 0 ? -small.Normal : small.Normal;
+        Vec3 e1 = big.Eigen.V1, e2 = n.Cross(e1);
+        double offset = big.Distance(small.Centroid), slope1 = -m.Dot(e1), slope2 = -m.Dot(e2);
+        Vec3 d = small.Centroid - big.Centroid;
+        double vs = MeanVariance(small), vb = MeanVariance(big);
+        double l1 = Math.Max(big.Eigen.L1, 1e-12), l2 = Math.Max(big.Eigen.L2, 1e-12);
+        double u = d.Dot(e1), v = d.Dot(e2);
+        double offsetVariance = vs + (vb * (1 + (u * u / l1) + (v * v / l2))) + Square(OffsetToleranceShare * scatterM);
+        double s1 = (vs / Along(small, e1)) + (vb / l1) + Square(SlopeTolerance);
+        double s2 = (vs / Along(small, e2)) + (vb / l2) + Square(SlopeTolerance);
+        return (offset * offset / offsetVariance) + (slope1 * slope1 / s1) + (slope2 * slope2 / s2);
+    }
+
+    // Variance of the mean of correlated errors: a patch holds about area / (2 pi L²) independent ones.
+    private double MeanVariance(in PlaneFit fit)
+    {
+        double area = fit.Count * surface.PointAreaM2, cell = 2 * Math.PI * noiseLengthM * noiseLengthM;
+        return scatterM * scatterM * Math.Min(1, Math.Max(1 / fit.Count, cell / area));
+    }
+
+    private static double Along(in PlaneFit fit, Vec3 direction)
+    {
+        double c1 = fit.Eigen.V1.Dot(direction), c2 = fit.Eigen.V2.Dot(direction);
+        return Math.Max(1e-12, (fit.Eigen.L1 * c1 * c1) + (fit.Eigen.L2 * c2 * c2));
+    }
+
+    private static double Square(double x) => x * x;
+}

@@ -1,0 +1,139 @@
+using CloudStruct.Maths.Directions;
+using CloudStruct.Maths.Fitting;
+using CloudStruct.Records.Attitudes;
+using CloudStruct.Records.Faces;
+using CloudStruct.Records.Frame;
+
+namespace CloudStruct.Stages.Faces;
+
+/// <summary>One face as it is reported: attitude, region, size, scatter, outline. One per worker.</summary>
+internal sealed class Measuring
+{
+    private readonly Surface surface;
+    private readonly Pieces pieces;
+    private readonly SceneNoise noise;
+    private readonly SurveyFrame frame;
+    private readonly PatchModes modes;
+
+    public Measuring(Surface surface, Pieces pieces, SceneNoise noise, SurveyFrame frame)
+    {
+        this.surface = surface;
+        this.pieces = pieces;
+        this.noise = noise;
+        this.frame = frame;
+        modes = new PatchModes(noise.Bins, surface.SpacingM);
+    }
+
+    /// <summary>The face of a label, without its number.</summary>
+    public Face Of(int label)
+    {
+        PlaneFit found = pieces.Planes[label];
+        WidePatch patch = WidePatch.Of(surface, pieces, label, noise.ScatterM);
+        (double[] u, double[] v, double[] r, double[] pseudo, double[] w) = patch.Columns(surface);
+        Vec3 normal = patch.Plane.Normal;
+        (Symmetric3 covariance, double noiseM, double wavinessM) = Errors(patch, u, v, r, pseudo, w);
+        (double length, double height) = Extents(label, normal, patch.Plane.Centroid, out Vec3 middle);
+        return new Face
+        {
+            Middle = middle,
+            Normal = normal,
+            Attitude = Attitude.FromNormal(normal, frame.TurnDeg),
+            Region = PoleRegions.From(normal, covariance, frame.Reference),
+            AreaM2 = patch.Coverage.AreaM2(),
+            LengthM = length,
+            HeightM = height,
+            RmsM = Rms(r, w),
+            NoiseM = noiseM,
+            WavinessM = wavinessM,
+            Points = pieces.Of(label).Length,
+            InPlace = InPlace.Unknown,
+            Outline = Outline(patch, found),
+        };
+    }
+
+    private (Symmetric3 Covariance, double NoiseM, double WavinessM) Errors(
+        WidePatch patch, double[] u, double[] v, double[] r, double[] pseudo, double[] w)
+    {
+        double rms = Rms(r, w);
+        PatchRecord? record = modes.Record(u, v, pseudo, w);
+        if (record is null) return (new Symmetric3(10, 0, 0, 10, 0, 10), rms, 0);   // no extent, no attitude: 90 deg
+        SlopeError e = noise.Laws.Slopes(noise.Laws.Weigh(record, noise.Prior.Variance, noise.Prior.Freedom), noise.Prior);
+        Vec3 n = patch.Plane.Normal, along = (patch.Along - (n * patch.Along.Dot(n))).Unit(), across = n.Cross(along);
+        double cos = Math.Cos(record.Turn), sin = Math.Sin(record.Turn);
+        Vec3 e1 = (along * cos) + (across * sin), e2 = (across * cos) - (along * sin);
+
+        // A slope s along e tips the normal by -s e.
+        Symmetric3 covariance = Symmetric3.Outer(e1, e.VarianceU) + Symmetric3.Outer(e2, e.VarianceV)
+            + Symmetric3.Outer((e1 + e2) / Math.Sqrt(2), e.Covariance) + Symmetric3.Outer((e1 - e2) / Math.Sqrt(2), -e.Covariance);
+        double waviness = Waviness(record);
+        return (covariance * (e.Stretch * e.Stretch), Math.Sqrt(Math.Max(0, (rms * rms) - (waviness * waviness))), waviness);
+    }
+
+    // The power of the residual waves above what noise of the scene's length puts there.
+    private double Waviness(PatchRecord record)
+    {
+        int columns = record.Waves + 1;
+        double excess = 0;
+        for (int k = 3; k < record.Waves; k++)
+        {
+            double expected = 0;
+            for (int b = 0; b < noise.Bins.Count; b++)
+            {
+                double c = Correlation.At(CorrelationShape.Exponential, noise.Bins.DistanceM[b], noise.LengthM);
+                if (c < 1e-9) break;
+                expected += c * record.LagSums[(b * columns) + k];
+            }
+
+            excess += record.Squares[k] - (expected * noise.ScatterM * noise.ScatterM);
+        }
+
+        return Math.Sqrt(Math.Max(0, Math.Min(excess, record.MeanSquare)));
+    }
+
+    private (double Length, double Height) Extents(int label, Vec3 normal, Vec3 origin, out Vec3 middle)
+    {
+        (Vec3 along, Vec3 down) = PoleRegions.StrikeAndDip(normal);
+        double lowU = double.MaxValue, highU = double.MinValue, lowV = double.MaxValue, highV = double.MinValue, u = 0, v = 0;
+        ReadOnlySpan<int> own = pieces.Of(label);
+        foreach (int i in own)
+        {
+            Vec3 d = surface.Place(i) - origin;
+            double pu = d.Dot(along), pv = d.Dot(down);
+            (lowU, highU) = (Math.Min(lowU, pu), Math.Max(highU, pu));
+            (lowV, highV) = (Math.Min(lowV, pv), Math.Max(highV, pv));
+            u += pu;
+            v += pv;
+        }
+
+        middle = origin + (along * (u / own.Length)) + (down * (v / own.Length));
+        return (highU - lowU, highV - lowV);
+    }
+
+    private static double Rms(double[] r, double[] w)
+    {
+        double sum = 0, count = 0;
+        for (int i = 0; i < r.Length; i++)
+        {
+            sum += w[i] * r[i] * r[i];
+            count += w[i];
+        }
+
+        return count > 0 ? Math.Sqrt(sum / count) : 0;
+    }
+
+    // The raster's ring lies on the plane the face was found with; it is let down onto the measured one along the normal.
+    private static Vec3[] Outline(WidePatch patch, in PlaneFit found)
+    {
+        List<(double U, double V)> ring = Rings.Simplify(patch.Coverage.Outline(), 0.75 * patch.Coverage.CellM);
+        if (ring.Count < 3) return [];
+        var outline = new Vec3[ring.Count + 1];
+        for (int i = 0; i < ring.Count; i++)
+        {
+            Vec3 p = found.Centroid + (patch.Along * ring[i].U) + (patch.Up * ring[i].V);
+            outline[i] = p - (patch.Plane.Normal * patch.Plane.Distance(p));
+        }
+
+        outline[^1] = outline[0];
+        return outline;
+    }
+}

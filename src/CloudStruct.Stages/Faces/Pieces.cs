@@ -1,0 +1,103 @@
+using CloudStruct.Maths.Blocks;
+using CloudStruct.Maths.Fitting;
+using CloudStruct.Records.Frame;
+
+namespace CloudStruct.Stages.Faces;
+
+/// <summary>A labelling of the points and the plane of every label. Label 0 is no face; label k has Planes[k].</summary>
+internal sealed class Pieces
+{
+    public Pieces(int points)
+    {
+        Label = new int[points];
+        Planes = [default];
+        Starts = [0, points];
+        Members = [];
+    }
+
+    /// <summary>Label per point.</summary>
+    public int[] Label { get; set; }
+
+    /// <summary>Plane per label; entry 0 is unused.</summary>
+    public List<PlaneFit> Planes { get; }
+
+    /// <summary>Members of label k are Members[Starts[k]] .. Members[Starts[k + 1] - 1], ascending.</summary>
+    public int[] Starts { get; private set; }
+
+    /// <summary>Point indices sorted by label.</summary>
+    public int[] Members { get; private set; }
+
+    /// <summary>Labels in use, label 0 included.</summary>
+    public int Count => Planes.Count;
+
+    /// <summary>Points of a label, after <see cref="Sort"/>.</summary>
+    public ReadOnlySpan<int> Of(int label) => Members.AsSpan(Starts[label], Starts[label + 1] - Starts[label]);
+
+    /// <summary>Sorts the points by label.</summary>
+    public void Sort()
+    {
+        Starts = new int[Planes.Count + 1];
+        foreach (int l in Label) Starts[l + 1]++;
+        for (int k = 0; k < Planes.Count; k++) Starts[k + 1] += Starts[k];
+        if (Members.Length != Label.Length) Members = new int[Label.Length];
+        int[] next = Starts.AsSpan(0, Planes.Count).ToArray();
+        for (int i = 0; i < Label.Length; i++) Members[next[Label[i]]++] = i;
+    }
+
+    /// <summary>Refits every plane to its points by bisquare from where it is; sorts first.</summary>
+    /// <param name="surface">The points.</param>
+    /// <param name="scaleM">Standard deviation of good points [m].</param>
+    /// <param name="rounds">Rounds of reweighting.</param>
+    public void Refit(Surface surface, double scaleM, int rounds)
+    {
+        Sort();
+        var fitted = new PlaneFit[Planes.Count];
+        BlockParallel.For(
+            Planes.Count,
+            surface.Threads,
+            surface.Stop,
+            (from, to) =>
+            {
+                for (int k = Math.Max(1, from); k < to; k++) fitted[k] = RefitOne(surface, k, scaleM, rounds);
+            },
+            length: 16);
+        for (int k = 1; k < Planes.Count; k++) Planes[k] = fitted[k];
+    }
+
+    /// <summary>Drops empty and undersized labels and closes the numbering; order is kept.</summary>
+    /// <param name="smallest">Fewest points.</param>
+    public void Compact(int smallest)
+    {
+        Sort();
+        var number = new int[Planes.Count];
+        int next = 1;
+        for (int k = 1; k < Planes.Count; k++)
+        {
+            if (Starts[k + 1] - Starts[k] < smallest) continue;
+            number[k] = next;
+            Planes[next++] = Planes[k];
+        }
+
+        Planes.RemoveRange(next, Planes.Count - next);
+        for (int i = 0; i < Label.Length; i++) Label[i] = number[Label[i]];
+        Sort();
+    }
+
+    private PlaneFit RefitOne(Surface surface, int label, double scaleM, int rounds)
+    {
+        PlaneFit plane = Planes[label];
+        ReadOnlySpan<int> points = Of(label);
+        if (points.Length < 6) return plane;
+        double limit = RobustPlane.RefitConstant * scaleM;
+        for (int round = 0; round < rounds; round++)
+        {
+            var sums = new Moments(plane.Centroid);
+            foreach (int i in points)
+                sums.Add(surface.X[i], surface.Y[i], surface.Z[i], RobustPlane.Weight(surface.Distance(i, plane) / limit));
+            if (!(sums.Weight > 5)) return plane;
+            plane = PlaneFit.From(sums);
+        }
+
+        return plane;
+    }
+}

@@ -1,0 +1,136 @@
+using CloudStruct.Maths.Blocks;
+using CloudStruct.Maths.Fitting;
+
+namespace CloudStruct.Stages.Faces;
+
+/// <summary>What the faces of a scene say together about the errors of its points.</summary>
+internal sealed class SceneNoise
+{
+    /// <summary>How firmly a single face keeps to the variance of the scene.</summary>
+    private const double Freedom = 6;
+
+    private const double LargeM2 = 0.5;
+    private const int FewestLarge = 5;
+
+    private SceneNoise(double scatterM, double lengthM, LagBins bins, NoiseLaws laws, NoisePrior prior)
+    {
+        ScatterM = scatterM;
+        LengthM = lengthM;
+        Bins = bins;
+        Laws = laws;
+        Prior = prior;
+    }
+
+    /// <summary>Scatter of the points about large faces [m].</summary>
+    public double ScatterM { get; }
+
+    /// <summary>Length over which it is correlated [m].</summary>
+    public double LengthM { get; }
+
+    /// <summary>Distances of the pair sums.</summary>
+    public LagBins Bins { get; }
+
+    /// <summary>Laws of error considered.</summary>
+    public NoiseLaws Laws { get; }
+
+    /// <summary>Their shares in this scene.</summary>
+    public NoisePrior Prior { get; }
+
+    /// <summary>Scatter about large faces: the area-weighted median of their own [m].</summary>
+    /// <param name="surface">The points.</param>
+    /// <param name="pieces">Labels, sorted.</param>
+    /// <param name="scatterM">The value so far [m].</param>
+    public static double Scatter(Surface surface, Pieces pieces, double scatterM)
+    {
+        int[] chosen = Largest(surface, pieces, 200);
+        int large = chosen.Count(k => pieces.Of(k).Length * surface.PointAreaM2 >= LargeM2);
+        if (large >= FewestLarge) chosen = chosen[..large];
+        if (chosen.Length == 0) return scatterM;
+        double s = scatterM;
+        for (int round = 0; round < 3; round++)
+        {
+            var own = new (double Scale, double Points)[chosen.Length];
+            double now = s;
+            BlockParallel.For(
+                chosen.Length,
+                surface.Threads,
+                surface.Stop,
+                (from, to) =>
+                {
+                    for (int c = from; c < to; c++)
+                    {
+                        WidePatch patch = WidePatch.Of(surface, pieces, chosen[c], now);
+                        own[c] = (patch.ScaleM, patch.Points.Length);
+                    }
+                },
+                length: 4);
+            s = Middle(own);
+            if (Math.Abs(s - now) < 0.02 * now) break;
+        }
+
+        return s;
+    }
+
+    /// <summary>Scatter, length and the shares of the laws.</summary>
+    /// <param name="surface">The points.</param>
+    /// <param name="pieces">Labels, sorted.</param>
+    /// <param name="scatterM">Scatter about large faces [m].</param>
+    /// <param name="most">Most faces looked at.</param>
+    public static SceneNoise Learn(Surface surface, Pieces pieces, double scatterM, int most)
+    {
+        double h = surface.SpacingM;
+        var bins = new LagBins(h / 4, 4000 * h);
+        var laws = new NoiseLaws(bins, h, Math.Max(1.0, 20 * h));
+        int[] chosen = Largest(surface, pieces, most);
+        NoisePrior flat = laws.Flat(scatterM * scatterM, Freedom);
+        var likelihoods = new NoiseLikelihood?[chosen.Length];
+        BlockParallel.For(
+            chosen.Length,
+            surface.Threads,
+            surface.Stop,
+            () => new PatchModes(bins, h),
+            (from, to, modes) =>
+            {
+                for (int c = from; c < to; c++)
+                {
+                    (double[] u, double[] v, _, double[] pseudo, double[] w) = WidePatch.Of(surface, pieces, chosen[c], scatterM).Columns(surface);
+                    if (modes.Record(u, v, pseudo, w) is { } record) likelihoods[c] = laws.Weigh(record, flat.Variance, Freedom);
+                }
+            },
+            length: 4);
+        NoiseLikelihood[] told = [.. likelihoods.OfType<NoiseLikelihood>()];
+        NoisePrior prior = laws.Learn(told, flat);
+        return new SceneNoise(scatterM, told.Length == 0 ? 3 * h : Length(laws, told, prior), bins, laws, prior);
+    }
+
+    private static double Length(NoiseLaws laws, NoiseLikelihood[] told, NoisePrior prior)
+    {
+        double sum = 0;
+        foreach (NoiseLikelihood l in told) sum += Math.Log(laws.Slopes(l, prior).LengthM);
+        return Math.Exp(sum / told.Length);
+    }
+
+    private static int[] Largest(Surface surface, Pieces pieces, int most)
+    {
+        int[] all = [.. Enumerable.Range(1, pieces.Count - 1)];
+        Array.Sort(all, (a, b) =>
+        {
+            int byPoints = pieces.Of(b).Length.CompareTo(pieces.Of(a).Length);
+            return byPoints != 0 ? byPoints : a.CompareTo(b);
+        });
+        return all.Length > most ? all[..most] : all;
+    }
+
+    private static double Middle((double Scale, double Points)[] own)
+    {
+        Array.Sort(own);
+        double total = own.Sum(o => o.Points), sum = 0;
+        foreach ((double scale, double points) in own)
+        {
+            sum += points;
+            if (sum >= total / 2) return scale;
+        }
+
+        return own[^1].Scale;
+    }
+}
