@@ -53,19 +53,25 @@ public static class PoleRegions
     /// <param name="s1">One standard deviation, any unit.</param>
     /// <param name="s2">The other.</param>
     /// <returns>1.960 times the larger when the smaller is 0, 2.448 times when they are equal; 0 when both are 0.</returns>
+    public static double Cone95(double s1, double s2) => Circle(s1, s2, 0.05);
+
+    /// <summary>Radius of the circle about the middle outside of which a given share of a normal law lies.</summary>
+    /// <param name="s1">One standard deviation, any unit.</param>
+    /// <param name="s2">The other.</param>
+    /// <param name="outside">Share outside, 0.001 to 0.999.</param>
     /// <remarks>With x = s1 p cos f, y = s2 p sin f and p² exponential of mean 2, the share outside a circle of radius r is the
     /// mean over f of exp(-r² / (2 (s1² cos² f + s2² sin² f))). Solved by bisection. Agrees with H. L. Harter 1960, Circular
     /// error probabilities, J. Am. Stat. Assoc. 55, 723-731 (table from memory).</remarks>
-    public static double Cone95(double s1, double s2)
+    public static double Circle(double s1, double s2, double outside)
     {
         double big = Math.Max(s1, s2), small = Math.Min(s1, s2);
         if (!(big > 0)) return 0;
         if (double.IsInfinity(big)) return double.PositiveInfinity;
-        double ratio2 = small / big * (small / big), low = 1.9, high = 2.5;
+        double ratio2 = small / big * (small / big), low = 0, high = 4;
         for (int i = 0; i < 50; i++)
         {
             double middle = (low + high) / 2;
-            if (ShareOutside(middle * middle, ratio2) > 0.05) low = middle;
+            if (ShareOutside(middle * middle, ratio2) > outside) low = middle;
             else high = middle;
         }
 

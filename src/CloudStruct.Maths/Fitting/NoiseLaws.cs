@@ -49,7 +49,7 @@ public sealed class NoiseLaws
     /// <param name="variance">Typical variance of the errors [m²].</param>
     /// <param name="freedom">How firmly patches keep to it.</param>
     public NoisePrior Flat(double variance, double freedom) =>
-        new([.. Candidates.Select(_ => -Math.Log(Candidates.Length))], variance, freedom);
+        new([.. Candidates.Select(_ => -Math.Log(Candidates.Length))], [.. Candidates.Select(_ => 1.0 / Candidates.Length)], variance, freedom);
 
     /// <summary>Weighs the laws for one patch.</summary>
     /// <param name="patch">Its record.</param>
@@ -84,7 +84,29 @@ public sealed class NoiseLaws
             share = next;
         }
 
-        return flat with { LogShare = [.. share.Select(s => Math.Log((0.5 * s) + (0.5 / n)))] };
+        return flat with { LogShare = [.. share.Select(s => Math.Log((0.5 * s) + (0.5 / n)))], Share = share };
+    }
+
+    /// <summary>Expected squares of a patch's waves under the mean law of the scene, for errors of variance 1.</summary>
+    public double[] ExpectedSquares(PatchRecord patch, NoisePrior prior)
+    {
+        int columns = patch.Waves + 1;
+        double white = 0;
+        var covariance = new double[bins.Count];
+        for (int c = 0; c < Candidates.Length; c++)
+        {
+            white += prior.Share[c] * Candidates[c].WhiteShare;
+            for (int b = 0; b < bins.Count; b++) covariance[b] += prior.Share[c] * table[(c * bins.Count) + b];
+        }
+
+        var expected = new double[patch.Waves];
+        for (int k = 0; k < patch.Waves; k++)
+        {
+            expected[k] = white * patch.WhiteShare[k];
+            for (int b = 0; b < bins.Count; b++) expected[k] += covariance[b] * patch.LagSums[(b * columns) + k];
+        }
+
+        return expected;
     }
 
     /// <summary>Error of a patch's slopes under a prior.</summary>

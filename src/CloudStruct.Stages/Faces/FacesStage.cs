@@ -29,9 +29,9 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
         new Growing(surface, Band()).Into(pieces);
         pieces.Refit(surface, scatter, 2);
         context.Progress(0.25);
-        scatter = SceneNoise.Scatter(surface, pieces, scatter);
+        scatter = SceneNoise.Scatter(surface, pieces, Refusing.Spreads(surface, pieces), scatter);
         new Competing(surface, scatter, Band()).Play(pieces, scatter, 2);
-        SceneNoise noise = SceneNoise.Learn(surface, pieces, scatter, 60);
+        SceneNoise noise = SceneNoise.Learn(surface, pieces, Refusing.Spreads(surface, pieces), scatter, 60);
         new Joining(surface, scatter, noise.LengthM).Into(pieces);
         context.Progress(0.45);
 
@@ -41,14 +41,13 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
         new Joining(surface, scatter, noise.LengthM).Into(pieces);
         context.Progress(0.7);
 
-        scatter = SceneNoise.Scatter(surface, pieces, scatter);
-        bool[] refused = Refusing.Of(surface, pieces);
-        noise = SceneNoise.Learn(surface, pieces, scatter, 400);
+        double[] spread = Refusing.Spreads(surface, pieces);
+        scatter = SceneNoise.Scatter(surface, pieces, spread, scatter);
+        noise = SceneNoise.Learn(surface, pieces, spread, scatter, 400);
         context.Progress(0.8);
-        FaceSet found = Report(surface, pieces, refused, noise, input, Band());
-        Say(context, found, surface, pieces, refused);
+        FaceSet found = Report(surface, pieces, spread, noise, input, context);
         context.Progress(1);
-        return found;
+        return found with { ToleranceM = Band() };
     }
 
     private static double FirstScatter(DescribedCloud input, Surface surface)
@@ -57,10 +56,10 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
         return double.IsFinite(input.NoiseM) ? Math.Max(least, FirstScatterFactor * input.NoiseM) : least;
     }
 
-    private static FaceSet Report(
-        Surface surface, Pieces pieces, bool[] refused, SceneNoise noise, DescribedCloud input, double toleranceM)
+    private FaceSet Report(Surface surface, Pieces pieces, double[] spread, SceneNoise noise, DescribedCloud input, StageContext context)
     {
         var measured = new Face?[pieces.Count];
+        var refused = new bool[pieces.Count];
         BlockParallel.For(
             pieces.Count,
             surface.Threads,
@@ -70,14 +69,23 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
             {
                 for (int k = Math.Max(1, from); k < to; k++)
                 {
-                    if (refused[k]) continue;
-                    Face face = measuring.Of(k);
-                    if (face.AreaM2 >= surface.Settings.SmallestFaceM2) measured[k] = face;
+                    (Face face, Roughness rough) = measuring.Of(k);
+                    if (face.AreaM2 < surface.Settings.SmallestFaceM2) continue;
+                    refused[k] = Refusing.IsWeathered(spread[k], rough);
+                    measured[k] = face;
                 }
             },
             length: 4);
+        double refusedM2 = Enumerable.Range(0, pieces.Count).Where(k => refused[k]).Sum(k => measured[k]!.AreaM2);
+        FaceSet found = Number(surface, pieces, measured, refused, noise);
+        Say(context, found, refused.Count(r => r), refusedM2);
+        return found;
+    }
 
-        int[] order = [.. Enumerable.Range(0, pieces.Count).Where(k => measured[k] is not null)];
+    // Faces by falling area; equal areas by the first point.
+    private static FaceSet Number(Surface surface, Pieces pieces, Face?[] measured, bool[] refused, SceneNoise noise)
+    {
+        int[] order = [.. Enumerable.Range(0, pieces.Count).Where(k => measured[k] is not null && !refused[k])];
         Array.Sort(order, (a, b) =>
         {
             int byArea = measured[b]!.AreaM2.CompareTo(measured[a]!.AreaM2);
@@ -90,25 +98,21 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
             Faces = [.. order.Select((k, f) => measured[k]! with { FaceId = f + 1 })],
             FaceOfPoint = [.. pieces.Label.Select(l => number[l])],
             SmallestFaceM2 = surface.Settings.SmallestFaceM2,
-            ToleranceM = toleranceM,
             NoiseM = noise.ScatterM,
             NoiseLengthM = noise.LengthM,
         };
     }
 
-    private void Say(StageContext context, FaceSet found, Surface surface, Pieces pieces, bool[] refused)
+    private void Say(StageContext context, FaceSet found, int refused, double refusedM2)
     {
-        double area = 0;
-        int count = 0;
-        for (int k = 1; k < refused.Length; k++)
+        if (refused > 0)
         {
-            if (!refused[k]) continue;
-            count++;
-            area += pieces.Of(k).Length * surface.PointAreaM2;
+            context.Say(new Remark(
+                Name,
+                Invariant($"{refused} flat pieces ({refusedM2:F1} m²) were refused as weathered rock or soil: they are rougher than the scene's large faces."),
+                false));
         }
 
-        if (count > 0)
-            context.Say(new Remark(Name, Invariant($"{count} flat pieces ({area:F1} m²) were refused as weathered rock or soil: their surface is rougher than that of the scene's large faces."), false));
         if (found.Faces.Length == 0)
         {
             context.Say(new Remark(Name, Invariant($"No planar face of {found.SmallestFaceM2:G3} m² or more was found."), true));

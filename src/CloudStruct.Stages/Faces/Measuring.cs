@@ -24,39 +24,40 @@ internal sealed class Measuring
         modes = new PatchModes(noise.Bins, surface.SpacingM);
     }
 
-    /// <summary>The face of a label, without its number.</summary>
-    public Face Of(int label)
+    /// <summary>The face of a label, without its number, and how rough it is against the scene.</summary>
+    public (Face Face, Roughness Rough) Of(int label)
     {
         PlaneFit found = pieces.Planes[label];
         WidePatch patch = WidePatch.Of(surface, pieces, label, noise.ScatterM);
         (double[] u, double[] v, double[] r, double[] pseudo, double[] w) = patch.Columns(surface);
         Vec3 normal = patch.Plane.Normal;
-        (Symmetric3 covariance, double noiseM, double wavinessM) = Errors(patch, u, v, r, pseudo, w);
+        double rms = Rms(r, w);
+        PatchRecord? record = modes.Record(u, v, pseudo, w);
+        Roughness rough = Rough(record, rms);
+        double waviness = Math.Min(rms, rough.WavinessM);
         (double length, double height) = Extents(label, normal, patch.Plane.Centroid, out Vec3 middle);
-        return new Face
+        var face = new Face
         {
             Middle = middle,
             Normal = normal,
             Attitude = Attitude.FromNormal(normal, frame.TurnDeg),
-            Region = PoleRegions.From(normal, covariance, frame.Reference),
+            Region = PoleRegions.From(normal, Covariance(patch, record), frame.Reference),
             AreaM2 = patch.Coverage.AreaM2(),
             LengthM = length,
             HeightM = height,
-            RmsM = Rms(r, w),
-            NoiseM = noiseM,
-            WavinessM = wavinessM,
+            RmsM = rms,
+            NoiseM = Math.Sqrt((rms * rms) - (waviness * waviness)),
+            WavinessM = waviness,
             Points = pieces.Of(label).Length,
             InPlace = InPlace.Unknown,
             Outline = Outline(patch, found),
         };
+        return (face, rough);
     }
 
-    private (Symmetric3 Covariance, double NoiseM, double WavinessM) Errors(
-        WidePatch patch, double[] u, double[] v, double[] r, double[] pseudo, double[] w)
+    private Symmetric3 Covariance(WidePatch patch, PatchRecord? record)
     {
-        double rms = Rms(r, w);
-        PatchRecord? record = modes.Record(u, v, pseudo, w);
-        if (record is null) return (new Symmetric3(10, 0, 0, 10, 0, 10), rms, 0);   // no extent, no attitude: 90 deg
+        if (record is null) return new Symmetric3(10, 0, 0, 10, 0, 10);   // no extent, no attitude: 90 deg
         SlopeError e = noise.Laws.Slopes(noise.Laws.Weigh(record, noise.Prior.Variance, noise.Prior.Freedom), noise.Prior);
         Vec3 n = patch.Plane.Normal, along = (patch.Along - (n * patch.Along.Dot(n))).Unit(), across = n.Cross(along);
         double cos = Math.Cos(record.Turn), sin = Math.Sin(record.Turn);
@@ -65,29 +66,22 @@ internal sealed class Measuring
         // A slope s along e tips the normal by -s e.
         Symmetric3 covariance = Symmetric3.Outer(e1, e.VarianceU) + Symmetric3.Outer(e2, e.VarianceV)
             + Symmetric3.Outer((e1 + e2) / Math.Sqrt(2), e.Covariance) + Symmetric3.Outer((e1 - e2) / Math.Sqrt(2), -e.Covariance);
-        double waviness = Waviness(record);
-        return (covariance * (e.Stretch * e.Stretch), Math.Sqrt(Math.Max(0, (rms * rms) - (waviness * waviness))), waviness);
+        return covariance * (e.Stretch * e.Stretch);
     }
 
-    // The power of the residual waves above what noise of the scene's length puts there.
-    private double Waviness(PatchRecord record)
+    // Residual power, and the power of the residual waves, against what the noise of the scene puts there.
+    private Roughness Rough(PatchRecord? record, double rms)
     {
-        int columns = record.Waves + 1;
-        double excess = 0;
+        if (record is null || record.Waves <= 3) return new Roughness(rms / noise.ScatterM, 1, 0);
+        double[] expected = noise.Laws.ExpectedSquares(record, noise.Prior);
+        double variance = noise.ScatterM * noise.ScatterM, ratio = 0, excess = 0;
         for (int k = 3; k < record.Waves; k++)
         {
-            double expected = 0;
-            for (int b = 0; b < noise.Bins.Count; b++)
-            {
-                double c = Correlation.At(CorrelationShape.Exponential, noise.Bins.DistanceM[b], noise.LengthM);
-                if (c < 1e-9) break;
-                expected += c * record.LagSums[(b * columns) + k];
-            }
-
-            excess += record.Squares[k] - (expected * noise.ScatterM * noise.ScatterM);
+            ratio += record.Squares[k] / (variance * Math.Max(expected[k], 1e-9));
+            excess += record.Squares[k] - (variance * expected[k]);
         }
 
-        return Math.Sqrt(Math.Max(0, Math.Min(excess, record.MeanSquare)));
+        return new Roughness(Math.Sqrt(record.MeanSquare / variance), ratio / (record.Waves - 3), Math.Sqrt(Math.Max(0, excess)));
     }
 
     private (double Length, double Height) Extents(int label, Vec3 normal, Vec3 origin, out Vec3 middle)

@@ -3,15 +3,23 @@ using CloudStruct.Maths.Blocks;
 namespace CloudStruct.Stages.Faces;
 
 /// <summary>Tells faces from weathered rock and soil that happen to be flat on the whole.</summary>
-/// <remarks>What gives them away is how much the local normals spread about the plane, compared with the large faces of the
-/// same scene; residual scatter and curvature do not.</remarks>
+/// <remarks>Three signs are weighed, all relative to the scene so that neither its noise nor its rock matters: how much the local
+/// normals spread about the plane, how far the points scatter, and the power of the residual waves. The weights are those
+/// of a logistic regression on simulated outcrops, rounded; docs/methods-faces.md gives what each sign reaches alone.</remarks>
 internal static class Refusing
 {
-    private const double MiddleM2 = 0.25, SmallM2 = 0.1;
-    private const double SmallLimit = 1.25, MiddleLimit = 1.35, LargeLimit = 1.45;
+    private const double MiddleM2 = 0.25;
+    private const double SpreadWeight = 4, ScatterWeight = 2.5, WaveWeight = 2.5, Limit = 3.2;
 
-    /// <summary>Whether each label is refused; needs sorted pieces.</summary>
-    public static bool[] Of(Surface surface, Pieces pieces)
+    /// <summary>Whether a piece is weathered rock or soil.</summary>
+    /// <param name="spread">Spread of its local normals over the usual.</param>
+    /// <param name="rough">Its roughness against the scene.</param>
+    public static bool IsWeathered(double spread, Roughness rough) =>
+        (SpreadWeight * Log(spread)) + (ScatterWeight * Log(rough.Scatter)) + (WaveWeight * Log(rough.WavePower)) > Limit;
+
+    /// <summary>Rms sine between local normals and plane per label, over the area-weighted median of the scene's faces of middle
+    /// size and more (of all when there are none). Needs sorted pieces.</summary>
+    public static double[] Spreads(Surface surface, Pieces pieces)
     {
         var spread = new double[pieces.Count];
         BlockParallel.For(
@@ -24,18 +32,12 @@ internal static class Refusing
             },
             length: 16);
         double usual = Usual(surface, pieces, spread);
-        var refused = new bool[pieces.Count];
-        for (int k = 1; k < pieces.Count; k++)
-        {
-            double area = pieces.Of(k).Length * surface.PointAreaM2;
-            double limit = area < SmallM2 ? SmallLimit : area < MiddleM2 ? MiddleLimit : LargeLimit;
-            refused[k] = spread[k] > limit * usual;
-        }
-
-        return refused;
+        for (int k = 1; k < spread.Length; k++) spread[k] = usual > 0 ? spread[k] / usual : 1;
+        return spread;
     }
 
-    // Rms sine of the angle between local normals and the plane.
+    private static double Log(double ratio) => Math.Log(Math.Clamp(ratio, 0.05, 20));
+
     private static double Spread(Surface surface, Pieces pieces, int label)
     {
         double sum = 0;
@@ -49,7 +51,6 @@ internal static class Refusing
         return Math.Sqrt(Math.Max(0, sum / Math.Max(1, points.Length)));
     }
 
-    // Area-weighted median over the faces of middle size and more; over all when there are none.
     private static double Usual(Surface surface, Pieces pieces, double[] spread)
     {
         int[] all = [.. Enumerable.Range(1, pieces.Count - 1)];
@@ -63,6 +64,6 @@ internal static class Refusing
             if (2 * sum >= total) return spread[k];
         }
 
-        return double.PositiveInfinity;
+        return 0;
     }
 }

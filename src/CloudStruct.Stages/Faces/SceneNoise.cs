@@ -10,6 +10,7 @@ internal sealed class SceneNoise
     private const double Freedom = 6;
 
     private const double LargeM2 = 0.5;
+    private const double SoundSpread = 1.35;
     private const int FewestLarge = 5;
 
     private SceneNoise(double scatterM, double lengthM, LagBins bins, NoiseLaws laws, NoisePrior prior)
@@ -39,10 +40,11 @@ internal sealed class SceneNoise
     /// <summary>Scatter about large faces: the area-weighted median of their own [m].</summary>
     /// <param name="surface">The points.</param>
     /// <param name="pieces">Labels, sorted.</param>
+    /// <param name="spread">Spread of the normals per label over the usual (<see cref="Refusing.Spreads"/>).</param>
     /// <param name="scatterM">The value so far [m].</param>
-    public static double Scatter(Surface surface, Pieces pieces, double scatterM)
+    public static double Scatter(Surface surface, Pieces pieces, double[] spread, double scatterM)
     {
-        int[] chosen = Largest(surface, pieces, 200);
+        int[] chosen = Largest(pieces, spread, 200);
         int large = chosen.Count(k => pieces.Of(k).Length * surface.PointAreaM2 >= LargeM2);
         if (large >= FewestLarge) chosen = chosen[..large];
         if (chosen.Length == 0) return scatterM;
@@ -74,14 +76,15 @@ internal sealed class SceneNoise
     /// <summary>Scatter, length and the shares of the laws.</summary>
     /// <param name="surface">The points.</param>
     /// <param name="pieces">Labels, sorted.</param>
+    /// <param name="spread">Spread of the normals per label over the usual.</param>
     /// <param name="scatterM">Scatter about large faces [m].</param>
     /// <param name="most">Most faces looked at.</param>
-    public static SceneNoise Learn(Surface surface, Pieces pieces, double scatterM, int most)
+    public static SceneNoise Learn(Surface surface, Pieces pieces, double[] spread, double scatterM, int most)
     {
         double h = surface.SpacingM;
         var bins = new LagBins(h / 4, 4000 * h);
         var laws = new NoiseLaws(bins, h, Math.Max(1.0, 20 * h));
-        int[] chosen = Largest(surface, pieces, most);
+        int[] chosen = Largest(pieces, spread, most);
         NoisePrior flat = laws.Flat(scatterM * scatterM, Freedom);
         var likelihoods = new NoiseLikelihood?[chosen.Length];
         BlockParallel.For(
@@ -110,9 +113,10 @@ internal sealed class SceneNoise
         return Math.Exp(sum / told.Length);
     }
 
-    private static int[] Largest(Surface surface, Pieces pieces, int most)
+    // The largest labels among those that look like sound rock.
+    private static int[] Largest(Pieces pieces, double[] spread, int most)
     {
-        int[] all = [.. Enumerable.Range(1, pieces.Count - 1)];
+        int[] all = [.. Enumerable.Range(1, pieces.Count - 1).Where(k => spread[k] < SoundSpread)];
         Array.Sort(all, (a, b) =>
         {
             int byPoints = pieces.Of(b).Length.CompareTo(pieces.Of(a).Length);

@@ -1,0 +1,160 @@
+using CloudStruct.Maths.Directions;
+using CloudStruct.Maths.Fitting;
+using CloudStruct.Records.Faces;
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
+using CloudStruct.Simulate;
+using static System.FormattableString;
+
+namespace CloudStruct.Accuracy.Scores;
+
+/// <summary>Found faces against true ones, summed over outcrops.</summary>
+/// <remarks>
+/// Each reported face is matched to the true face that most of its points carry. It is <i>right</i> when that true face
+/// exists and holds at least half of its points, and the normals differ by at most 5 deg. Precision: area of right faces over the
+/// area of all reported. A true face is <i>found</i> when the faces matched to it hold at least half of its working points.
+/// Covered: share of the working points of true faces that lie in faces matched to them. Pieces: faces matched per found face.
+/// Joined: reported faces of which a second true face holds a fifth or more. Attitude error: of the largest face matched to a
+/// true face, classed by the true area. Coverage: share of right faces whose true normal lies in cone95_deg, classed by
+/// reported area. Sharpness: 1 when the median error is what the stated ellipse expects, above when cones are too wide.
+/// Floor: plain least squares on the points that truly belong to the face.
+/// </remarks>
+public sealed class FaceScore
+{
+    private static readonly (string Name, double From, double To)[] Classes =
+        [(">= 1 m2", 1, double.PositiveInfinity), ("0.25-1 m2", 0.25, 1), ("0.05-0.25 m2", 0.05, 0.25)];
+
+    private readonly double[] trueArea = new double[3], foundArea = new double[3], pointsTrue = new double[3], pointsCovered = new double[3];
+    private readonly int[] trueCount = new int[3], foundCount = new int[3], inside = new int[3], judged = new int[3], pieces = new int[3];
+    private readonly List<double>[] error = [[], [], []], floor = [[], [], []], relative = [[], [], []];
+    private readonly List<double> areaRatio = [];
+    private double reportedArea, rightArea, offArea;
+    private int reported, joined;
+
+    /// <summary>Share of the area of true faces of 0.25 m² or more that was found.</summary>
+    public double RecallByArea => (foundArea[0] + foundArea[1]) / (trueArea[0] + trueArea[1]);
+
+    /// <summary>The same, by number.</summary>
+    public double RecallByNumber => (double)(foundCount[0] + foundCount[1]) / (trueCount[0] + trueCount[1]);
+
+    /// <summary>Share of the reported area that is right.</summary>
+    public double Precision => rightArea / reportedArea;
+
+    /// <summary>Median attitude error of found faces of 0.25 m² or more [deg].</summary>
+    public double MedianErrorDeg => Quantile([.. error[0], .. error[1]], 0.5);
+
+    /// <summary>Share of right faces whose true normal lies in the cone, of all sizes.</summary>
+    public double Coverage => (double)inside.Sum() / judged.Sum();
+
+    /// <summary>Adds one outcrop.</summary>
+    public void Add(SimulatedOutcrop outcrop, WorkingCloud cloud, FaceSet found, int[] nearest)
+    {
+        int[] truth = [.. nearest.Select(j => j < 0 ? 0 : outcrop.TrueFace[j])];
+        var votes = new Dictionary<(int Found, int True), int>();
+        var own = new int[outcrop.Faces.Length + 1];
+        for (int i = 0; i < truth.Length; i++)
+        {
+            own[truth[i]]++;
+            if (found.FaceOfPoint[i] == 0) continue;
+            votes[(found.FaceOfPoint[i], truth[i])] = votes.GetValueOrDefault((found.FaceOfPoint[i], truth[i])) + 1;
+        }
+
+        var match = new (int True, int Votes, int Second)[found.Faces.Length + 1];
+        foreach (((int f, int t), int n) in votes.OrderBy(v => v.Key))
+        {
+            if (n > match[f].Votes) match[f] = (t, n, t == 0 ? 0 : match[f].True != 0 ? match[f].Votes : 0);
+            else if (t != 0) match[f].Second = Math.Max(match[f].Second, n);
+        }
+
+        var covered = new int[own.Length];
+        var largest = new Face?[own.Length];
+        var count = new int[own.Length];
+        foreach (Face f in found.Faces) Judge(f, outcrop, match[f.FaceId], covered, largest, count);
+        AddTrue(outcrop, own, covered, largest, count);
+        AddFloor(outcrop, cloud, truth);
+    }
+
+    /// <summary>Prints the table.</summary>
+    public void Print(string title)
+    {
+        Console.WriteLine(Invariant($"{title}: {reported} faces reported, precision by area {Precision:F3}, off any plane {offArea / reportedArea:F3}, joined {(double)joined / Math.Max(1, reported):F3}, recall >= 0.25 m2 {RecallByArea:F3}, area ratio {Quantile(areaRatio, 0.5):F3}"));
+        Console.WriteLine("  class          true  recall(area) recall(number) covered pieces |  error med   p95  floor med   p95 | coverage      n sharpness");
+        for (int c = 0; c < 3; c++)
+        {
+            Console.WriteLine(Invariant(
+                $"  {Classes[c].Name,-13} {trueCount[c],5} {foundArea[c] / trueArea[c],13:F3} {(double)foundCount[c] / trueCount[c],14:F3} {pointsCovered[c] / pointsTrue[c],7:F3} {(double)pieces[c] / Math.Max(1, foundCount[c]),6:F2} |") + Invariant(
+                $" {Quantile(error[c], 0.5),10:F3} {Quantile(error[c], 0.95),5:F2} {Quantile(floor[c], 0.5),10:F3} {Quantile(floor[c], 0.95),5:F2} | {(double)inside[c] / Math.Max(1, judged[c]),8:F3} {judged[c],6} {1 / Quantile(relative[c], 0.5),9:F2}"));
+        }
+    }
+
+    private static int ClassOf(double area) => area >= 1 ? 0 : area >= 0.25 ? 1 : area >= 0.05 ? 2 : -1;
+
+    private static double Angle(Vec3 a, Vec3 b) => Math.Atan2(a.Cross(b).Length, Math.Abs(a.Dot(b))) * 180 / Math.PI;
+
+    private static double Quantile(List<double> values, double q)
+    {
+        if (values.Count == 0) return double.NaN;
+        double[] sorted = [.. values.Order()];
+        return sorted[(int)Math.Min(sorted.Length - 1, q * sorted.Length)];
+    }
+
+    private void Judge(Face f, SimulatedOutcrop outcrop, (int True, int Votes, int Second) m, int[] covered, Face?[] largest, int[] count)
+    {
+        reported++;
+        reportedArea += f.AreaM2;
+        if (m.True == 0)
+        {
+            offArea += f.AreaM2;
+            return;
+        }
+
+        if (m.Second >= 0.2 * f.Points) joined++;
+        covered[m.True] += m.Votes;
+        count[m.True]++;
+        if (largest[m.True] is not { } other || f.AreaM2 > other.AreaM2) largest[m.True] = f;
+        double off = Angle(f.Normal, outcrop.Faces[m.True - 1].Normal);
+        if (m.Votes < 0.5 * f.Points || off > 5) return;
+        rightArea += f.AreaM2;
+        int c = ClassOf(f.AreaM2);
+        if (c < 0) return;
+        judged[c]++;
+        if (off <= f.Region.Cone95Deg) inside[c]++;
+        double s1 = f.Region.Ellipse95MajorDeg, s2 = f.Region.Ellipse95MinorDeg;
+        relative[c].Add(off / f.Region.Cone95Deg * PoleRegions.Cone95(s1, s2) / PoleRegions.Circle(s1, s2, 0.5));
+    }
+
+    private void AddTrue(SimulatedOutcrop outcrop, int[] own, int[] covered, Face?[] largest, int[] count)
+    {
+        foreach (SimulatedFace t in outcrop.Faces)
+        {
+            int c = ClassOf(t.AreaM2);
+            if (c < 0) continue;
+            trueCount[c]++;
+            trueArea[c] += t.AreaM2;
+            pointsTrue[c] += own[t.Id];
+            pointsCovered[c] += covered[t.Id];
+            if (covered[t.Id] < 0.5 * own[t.Id] || covered[t.Id] == 0) continue;
+            foundCount[c]++;
+            foundArea[c] += t.AreaM2;
+            pieces[c] += count[t.Id];
+            error[c].Add(Angle(largest[t.Id]!.Normal, t.Normal));
+            if (count[t.Id] == 1) areaRatio.Add(largest[t.Id]!.AreaM2 / t.AreaM2);
+        }
+    }
+
+    private void AddFloor(SimulatedOutcrop outcrop, WorkingCloud cloud, int[] truth)
+    {
+        var sums = new Moments[outcrop.Faces.Length + 1];
+        for (int f = 0; f < outcrop.Faces.Length; f++) sums[f + 1] = new Moments(outcrop.Faces[f].Middle - cloud.Frame.Origin);
+        for (int i = 0; i < truth.Length; i++)
+        {
+            if (truth[i] != 0) sums[truth[i]].Add(cloud.X[i], cloud.Y[i], cloud.Z[i]);
+        }
+
+        foreach (SimulatedFace t in outcrop.Faces)
+        {
+            int c = ClassOf(t.AreaM2);
+            if (c >= 0 && sums[t.Id].Weight >= 6) floor[c].Add(Angle(PlaneFit.From(sums[t.Id]).Normal, t.Normal));
+        }
+    }
+}
