@@ -5,7 +5,7 @@ using CloudStruct.Simulate;
 namespace CloudStruct.Accuracy.Scores;
 
 /// <summary>Which simulated point each working point is, or lies next to.</summary>
-internal static class TruthOfPoints
+public static class TruthOfPoints
 {
     /// <summary>Index of the nearest simulated point per working point; -1 where none lies within one spacing.</summary>
     public static int[] Nearest(WorkingCloud cloud, SimulatedOutcrop outcrop)
