@@ -1,8 +1,10 @@
 using CloudStruct.Formats.Tables;
+using CloudStruct.Products.Clouds;
 using CloudStruct.Products.Plots;
 using CloudStruct.Products.Report;
 using CloudStruct.Products.Tables;
 using CloudStruct.Records.Drawings;
+using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
 
@@ -30,8 +32,22 @@ public sealed class ProductsWriter
         context.Progress(0.1);
         List<DrawnPlot> plots = PlotsWriter.Write(files, findings, drawings, facts, context);
         context.Progress(0.5);
+        WriteCloud(files, findings, pieces, facts, settings, context with { Progress = done => context.Progress(0.5 + (0.45 * done)) });
         files.Write("report.html", new ReportPage(findings, facts, plots).Bytes());
+        context.Progress(1);
         return files.Written;
+    }
+
+    private static void WriteCloud(
+        ResultFolder files, Findings findings, IPieces pieces, RunFacts facts, ProductSettings settings, StageContext context)
+    {
+        if (settings.Clouds == "none") return;
+        CrsInfo crs = findings.Intake.Frame.Crs;
+        if (crs is not { HorizontalUnitM: 1, VerticalUnitM: 1 })
+            context.Say(new Remark("products", $"{ClassifiedCloudWriter.FileName} is in metres and names no coordinate system, because {crs.Name} is not in metres.", false));
+        using Stream stream = files.Create(ClassifiedCloudWriter.FileName);
+        if (settings.Clouds == "thinned") ClassifiedCloudWriter.WriteThinned(stream, findings, facts);
+        else ClassifiedCloudWriter.WriteAll(stream, findings, pieces, facts, context);
     }
 
     private static void WriteTables(ResultFolder files, Findings findings, RunFacts facts)

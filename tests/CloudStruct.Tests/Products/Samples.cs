@@ -61,7 +61,7 @@ internal static class Samples
             Faces =
             [
                 FaceOf(1, 123.456, 78.9, 4.2, 0.8, 1.1), FaceOf(2, 359.998, 45, 2.02, 1.9, 2.4),
-                FaceOf(3, 30, 88.5, 0.61, 3.9, 4.4), FaceOf(4, 212.25, 12.125, 0.25, 5.1, 6.0), FaceOf(5, 120, 80, 0.0512, 8, 8.2),
+                FaceOf(3, 30, 88.5, 0.61, 3.9, 4.4), FaceOf(4, 212.25, 12.126, 0.25, 5.1, 6.0), FaceOf(5, 120, 80, 0.0512, 8, 8.2),
             ],
             FaceOfPoint = [1, 2, 0, 1],
             SmallestFaceM2 = 0.05,
@@ -90,7 +90,7 @@ internal static class Samples
             [
                 new DikeSummary
                 {
-                    Dike = 1, Mean = new Attitude(45.2, 84.5), Normal = new Vec3(0.7, -0.7, 0.1),
+                    Dike = 1, Mean = new Attitude(45.2, 84.6), Normal = new Vec3(0.7, -0.7, 0.1),
                     Region = new PoleRegion { Cone95Deg = 1.2, Cone95TotalDeg = 1.4 },
                     TrendDeg = 45.2, SeenLengthM = 3, HiddenLengthM = 2,
                     WidthMeanM = new(2.5, 2.44, 2.56), WidthMedianM = new(2.5, 2.43, 2.57), WidthMinM = new(2.4, 2.3, 2.5), WidthMaxM = new(2.6, 2.5, 2.7),
