@@ -1,7 +1,7 @@
 namespace CloudStruct.Maths.Mixtures;
 
 /// <summary>Small symmetric positive matrices, row-major in spans: the factor, its logarithmic determinant, distances.</summary>
-internal static class Cholesky
+public static class Cholesky
 {
     /// <summary>Turns the lower triangle of a matrix into its factor L, a = L Lᵀ; false when it is not positive.</summary>
     public static bool Factor(Span<double> a, int d)

@@ -1,0 +1,122 @@
+using CloudStruct.Records.Classes;
+using CloudStruct.Records.Stages;
+
+namespace CloudStruct.Stages.Classify;
+
+/// <summary>Draws the outline of one dike: log odds of the rock's look, drawn toward the sheet, smoothed by a graph cut.</summary>
+internal sealed class DikeCut
+{
+    private readonly Patches patches;
+    private readonly Features features;
+    private readonly ClassifySettings settings;
+    private readonly StageContext context;
+
+    public DikeCut(Patches patches, Features features, ClassifySettings settings, StageContext context)
+    {
+        this.patches = patches;
+        this.features = features;
+        this.settings = settings;
+        this.context = context;
+    }
+
+    /// <summary>Chooses the patches of a dike.</summary>
+    /// <param name="dike">The dike.</param>
+    /// <param name="free">Rock that no other dike has taken.</param>
+    /// <param name="labels">Hand labels; train labels join what is learnt.</param>
+    /// <returns>Per patch whether it is dike, and the log odds with the pull of the sheet (0 far away).</returns>
+    public (bool[] Inside, float[] Odds, Looks[] Looks) Run(FoundDike dike, bool[] free, PatchLabels labels)
+    {
+        Sheet sheet = dike.Sheet;
+        double width = sheet.WidthM, reach = (0.2 * width) + 0.1;
+        var active = new bool[patches.Count];
+        var inside = new bool[patches.Count];
+        var depth = new float[patches.Count];
+        var train = new List<int>(dike.Train);
+        var side = new List<byte>(dike.Side);
+        for (int i = 0; i < patches.Count; i++)
+        {
+            depth[i] = (float)sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]);
+            active[i] = free[i] && depth[i] > -reach;
+            inside[i] = free[i] && depth[i] > 0;
+            if (labels.Train.Length == 0 || labels.Train[i] is not ((byte)RockClass.Dike or (byte)RockClass.Host)) continue;
+            train.Add(i);
+            side.Add((byte)(labels.Train[i] == (byte)RockClass.Dike ? 1 : 0));
+        }
+
+        Looks[] looks = Learn(dike, train, side);
+        var odds = new float[patches.Count];
+        Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                if (active[i]) odds[i] = (float)(LookOdds(looks, i) + Pull(depth[i], width, dike.ByColour));
+            }
+        });
+        PatchCut.Run(patches, odds, active, inside, free, settings.SmoothingPerM);
+        for (int i = 0; i < inside.Length; i++) inside[i] &= active[i];
+        Fill(inside, free, active);
+        return (inside, odds, looks);
+    }
+
+    /// <summary>Log odds that follow from the place alone: sure rock deep inside, none well outside.</summary>
+    /// <param name="depthM">Depth inside the sheet [m].</param>
+    /// <param name="widthM">Width of the sheet [m].</param>
+    /// <param name="byColour">Colour sees the margin sharper than the sheet does; texture does not.</param>
+    internal static double Pull(double depthM, double widthM, bool byColour)
+    {
+        double soft = byColour ? (0.12 * widthM) + 0.04 : (0.05 * widthM) + 0.03;
+        return Math.Clamp(depthM / soft, -3.5, 1.6);
+    }
+
+    internal float LookOdds(Looks[] looks, int patch)
+    {
+        float sum = 0;
+        foreach (Looks look in looks) sum += look.LogOdds(features, patch, Appearance.Clip);
+        return Math.Clamp(sum, -Appearance.Clip, Appearance.Clip);
+    }
+
+    private Looks[] Learn(FoundDike dike, List<int> train, List<byte> side)
+    {
+        int c = features.ColourColumns;
+        List<int> fold = [.. Enumerable.Repeat(0, train.Count)];
+        var looks = new List<Looks>();
+        if (c > 0 && Looks.Learn(features, [.. Enumerable.Range(0, c)], train, side, fold, -1, curved: true) is { } colour) looks.Add(colour);
+        if (!dike.ByColour && Looks.Learn(features, [.. Enumerable.Range(c, features.Columns - c)], train, side, fold, -1, curved: false) is { } texture) looks.Add(texture);
+        return [.. looks];
+    }
+
+    /// <summary>Turns islands that are smaller than the limit over to what encloses them: clasts and lichen inside, specks outside.</summary>
+    private void Fill(bool[] inside, bool[] free, bool[] active)
+    {
+        var seen = new bool[inside.Length];
+        var stack = new Stack<int>();
+        var island = new List<int>();
+        for (int start = 0; start < inside.Length; start++)
+        {
+            if (seen[start] || !active[start]) continue;
+            island.Clear();
+            double area = 0;
+            bool touchesFar = false, kind = inside[start];
+            stack.Push(start);
+            seen[start] = true;
+            while (stack.Count > 0)
+            {
+                int i = stack.Pop();
+                island.Add(i);
+                area += patches.AreaM2[i];
+                for (int k = 0; k < 27; k++)
+                {
+                    int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
+                    if (j < 0 || !free[j]) continue;
+                    touchesFar |= !active[j];
+                    if (seen[j] || !active[j] || inside[j] != kind) continue;
+                    seen[j] = true;
+                    stack.Push(j);
+                }
+            }
+
+            if (area >= settings.FillIslandsM2 || (touchesFar && !kind)) continue;
+            foreach (int i in island) inside[i] = !kind;
+        }
+    }
+}

@@ -1,0 +1,144 @@
+namespace CloudStruct.Stages.Classify;
+
+/// <content>Corridors, training sides, and following a sheet along strike.</content>
+internal sealed partial class DikeFinder
+{
+    /// <summary>Patches of rock about a sheet, sorted by s.</summary>
+    private sealed record Corridor(List<int> Patch, List<int> Fold, double[] S, double[] V, double[] T)
+    {
+        public SheetFitter Fitter(Patches patches, float[] odds) =>
+            new(patches.SizeM, S, V, T, odds, [.. Patch.Select(p => patches.AreaM2[p])]);
+    }
+
+    /// <summary>A fold per stretch: five in turn, so that each fold has stretches from all over the sheet.</summary>
+    private static int FoldOf(double s, double foldM)
+    {
+        int k = (int)Math.Floor(s / foldM) % Folds;
+        return k < 0 ? k + Folds : k;
+    }
+
+    private Corridor CorridorOf(Sheet sheet, double reachM)
+    {
+        double width = sheet.WidthM, from = sheet.Knots[0].S, to = sheet.Knots[^1].S;
+        var found = new List<(double S, double V, double T, int Patch)>();
+        for (int i = 0; i < patches.Count; i++)
+        {
+            if (!rock[i] || taken[i]) continue;
+            (double s, double v, double t) = sheet.At(patches.X[i], patches.Y[i], patches.Z[i]);
+            if (Math.Abs(s) > reachM && sheet.Knots.Count == 1 && !double.IsInfinity(reachM)) continue;
+            (double a, double b) = sheet.Margins(s, v);
+            // Beyond the ends the sheet may bend away by some twenty degrees.
+            double beyond = Math.Max(0, Math.Max(from - s, s - to)), slack = (2.2 * width) + (0.35 * beyond);
+            if (t > a - slack && t < b + slack) found.Add((s, v, t, i));
+        }
+
+        found.Sort((p, q) => p.S != q.S ? p.S.CompareTo(q.S) : p.Patch.CompareTo(q.Patch));
+        double foldM = Math.Max(2, width);
+        return new Corridor(
+            [.. found.Select(f => f.Patch)], [.. found.Select(f => FoldOf(f.S, foldM))], [.. found.Select(f => f.S)], [.. found.Select(f => f.V)], [.. found.Select(f => f.T)]);
+    }
+
+    /// <summary>Patches to learn from: well inside, and on the flanks up to one and a half widths away.</summary>
+    private (List<int> Train, List<byte> Side, List<int> Fold) Sides(Sheet sheet, Corridor corridor, double foldM)
+    {
+        var train = new List<int>();
+        var side = new List<byte>();
+        var fold = new List<int>();
+        double from = sheet.Knots[0].S - sheet.Knots[0].HalfM, to = sheet.Knots[^1].S + sheet.Knots[^1].HalfM;
+        for (int i = 0; i < corridor.Patch.Count; i++)
+        {
+            double s = corridor.S[i];
+            if (s < from || s > to) continue;
+            (double a, double b) = sheet.Margins(s, corridor.V[i]);
+            double width = b - a, outside = Math.Max(a - corridor.T[i], corridor.T[i] - b), reach = Math.Max(1.5 * width, 0.6);
+            int which = outside < -0.1 * width ? 1 : outside > 0.12 * width && outside < reach ? 0 : -1;
+            if (which < 0) continue;
+            train.Add(corridor.Patch[i]);
+            side.Add((byte)which);
+            fold.Add(FoldOf(s, foldM));
+        }
+
+        return (train, side, fold);
+    }
+
+    /// <summary>Fits knots along strike from the middle outward, over hidden stretches too, until the rock no longer shows it.</summary>
+    private void Follow(Sheet sheet, Corridor corridor, float[] odds)
+    {
+        SheetFitter fitter = corridor.Fitter(patches, odds);
+        double width = sheet.WidthM, half = Math.Max(Math.Max(0.75 * width, 0.75), 8 * patches.SizeM), step = half;
+        Knot start = sheet.Knots[sheet.Knots.Count / 2];
+        // A refitted sheet keeps its own knots as guesses; a fresh one is followed out of its window.
+        var old = sheet.Knots.ToList();
+        Knot? first = fitter.Fit(
+            new Knot { S = start.S, HalfM = old.Count == 1 ? Math.Max(half, start.HalfM / 2) : half, V = start.V, A = start.A, B = start.B, G = start.G },
+            0, 0.35 * width, tilts: 8, tiltSpread: old.Count == 1 ? 0.16 : 0.08);
+        var knots = new List<Knot>();
+        if (first != null)
+        {
+            double reachGap = Math.Max(4 * width, 8);
+            var up = new List<Knot>();
+            var down = new List<Knot>();
+            March(+1, first, up);
+            March(-1, first, down);
+            down.Reverse();
+            knots = [.. down, first, .. up];
+
+            void March(int direction, Knot from, List<Knot> into)
+            {
+                Knot last = from, before = from;
+                double sceneEnd = direction > 0 ? corridor.S[^1] : corridor.S[0];
+                int failed = 0;
+                for (int k = 1; ; k++)
+                {
+                    double at = from.S + (direction * k * step);
+                    if ((direction > 0 ? at - half > sceneEnd : at + half < sceneEnd) || Math.Abs(at - last.S) > reachGap + step) break;
+                    double run = last.S - before.S, yaw = run != 0 ? (last.A + last.B - before.A - before.B - ((before.G + last.G) * (last.V - before.V))) / 2 / run : 0;
+                    yaw = Math.Clamp(0.7 * yaw, -0.3, 0.3);
+                    double away = at - last.S, reach = Math.Min(0.5 * width, (0.15 * width) + (0.12 * Math.Abs(away)));
+                    var guess = new Knot { S = at, HalfM = half, V = last.V, A = last.A + (yaw * away), B = last.B + (yaw * away), G = last.G };
+                    Knot? knot = fitter.Fit(guess, yaw, reach, tilts: 3, tiltSpread: 0.06);
+                    if (knot == null) continue;   // nothing to be seen here: cover or a hole
+                    bool holds = knot.Inside > 0.3 && (knot.AnyMargin || double.IsNaN(knot.FlankA) || double.IsNaN(knot.FlankB)) && knot.B - knot.A > 0.3 * width && knot.B - knot.A < 2.5 * width;
+                    if (!holds)
+                    {
+                        // Rock shows, but not this rock: the end, unless it is a local blemish.
+                        if (++failed == 3) break;
+                        continue;
+                    }
+
+                    failed = 0;
+                    into.Add(knot);
+                    (before, last) = (last, knot);
+                }
+            }
+        }
+
+        sheet.Knots.Clear();
+        sheet.Knots.AddRange(Smoothed(knots));
+    }
+
+    /// <summary>Draws each knot toward its neighbours where they are sure and it is not: gains are the weights.</summary>
+    private static IEnumerable<Knot> Smoothed(List<Knot> knots)
+    {
+        var result = new List<Knot>(knots.Count);
+        for (int k = 0; k < knots.Count; k++)
+        {
+            Knot here = knots[k];
+            double g = 0, weight = 0;
+            for (int j = Math.Max(0, k - 1); j <= Math.Min(knots.Count - 1, k + 1); j++)
+            {
+                double w = (Math.Max(0, knots[j].Gain) + 1e-6) * (j == k ? 2 : 1);
+                g += w * knots[j].G;
+                weight += w;
+            }
+
+            result.Add(new Knot
+            {
+                S = here.S, HalfM = here.HalfM, V = here.V, A = here.A, B = here.B, G = g / weight, Gain = here.Gain,
+                Inside = here.Inside, FlankA = here.FlankA, FlankB = here.FlankB,
+            });
+        }
+
+        return result;
+    }
+}

@@ -1,0 +1,187 @@
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Stages;
+
+namespace CloudStruct.Stages.Classify;
+
+/// <summary>Turns slab candidates into dikes: learns what is inside, follows the sheet along strike, and judges its shape.</summary>
+internal sealed partial class DikeFinder
+{
+    /// <summary>Folds along strike: what is learnt on some stretches is judged on the others.</summary>
+    private const int Folds = 4;
+
+    private readonly Patches patches;
+    private readonly Features features;
+    private readonly bool[] rock;
+    private readonly bool[] taken;
+    private readonly StageContext context;
+    private readonly int[] colour, texture, hue;
+
+    public DikeFinder(Patches patches, Features features, bool[] rock, StageContext context)
+    {
+        this.patches = patches;
+        this.features = features;
+        this.rock = rock;
+        this.context = context;
+        taken = new bool[patches.Count];
+        int c = features.ColourColumns;
+        colour = [.. Enumerable.Range(0, c)];
+        hue = [.. Enumerable.Range(0, c).Skip(1)];
+        texture = [.. Enumerable.Range(c, features.Columns - c)];
+    }
+
+    /// <summary>What was found of every candidate looked at, accepted or not, in the order of looking.</summary>
+    public List<(DikeJudgement Judgement, bool Accepted)> Looked { get; } = [];
+
+    /// <summary>The dikes, in the order they were accepted.</summary>
+    /// <param name="narrowestM">Narrowest to look for.</param>
+    /// <param name="widestM">Widest to look for.</param>
+    /// <param name="most">Most dikes.</param>
+    /// <param name="labels">Hand labels; may be empty.</param>
+    public List<FoundDike> Run(double narrowestM, double widestM, int most, PatchLabels labels)
+    {
+        var found = new List<FoundDike>();
+        if (most == 0) return found;
+        var use = new float[patches.Count];
+        for (int i = 0; i < use.Length; i++) use[i] = rock[i] ? patches.AreaM2[i] : 0;
+        List<SlabCandidate> candidates = new SlabSearch(patches, features, context).Run(use, narrowestM, widestM);
+        var tried = new List<SlabCandidate>();
+        foreach (SlabCandidate candidate in candidates)
+        {
+            context.Stop.ThrowIfCancellationRequested();
+            // Never stop at the first rejection: stains and benches may outrank the dike.
+            if (found.Count == most || tried.Count == 8 + (4 * found.Count)) break;
+            if (tried.Exists(t => SlabSearch.Alike(t, candidate)) || found.Exists(d => Covers(d.Sheet, candidate))) continue;
+            tried.Add(candidate);
+            FoundDike? dike = Try(candidate, narrowestM, widestM, labels);
+            if (dike == null) continue;
+            found.Add(dike);
+            for (int i = 0; i < taken.Length; i++)
+            {
+                if (dike.Sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]) > -0.1 * dike.Sheet.WidthM) taken[i] = true;
+            }
+        }
+
+        return found;
+    }
+
+    private static bool Covers(Sheet sheet, SlabCandidate candidate) =>
+        sheet.Depth((float)candidate.Middle.X, (float)candidate.Middle.Y, (float)candidate.Middle.Z) > -0.8 * Math.Max(sheet.WidthM, candidate.WidthM)
+        && Math.Abs(sheet.N.Dot(candidate.Normal)) > 0.7;
+
+    private FoundDike? Try(SlabCandidate candidate, double narrowestM, double widestM, PatchLabels labels)
+    {
+        var sheet = new Sheet(candidate.Middle, candidate.Normal);
+        double half = candidate.WindowM / 2;
+        sheet.Knots.Add(new Knot { S = 0, HalfM = half, A = -candidate.WidthM / 2, B = candidate.WidthM / 2 });
+        for (int round = 0; round < 3; round++)
+        {
+            Corridor corridor = CorridorOf(sheet, round == 0 ? half : double.PositiveInfinity);
+            (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, foldM: Math.Max(2, sheet.WidthM));
+            float[]? odds = Appearance.LogOdds(features, colour, texture, train, side, fold, corridor.Patch, corridor.Fold, 1);
+            if (odds == null) return null;
+            if (Tells(corridor, odds, train, side) < 0.7) return null;
+            Follow(sheet, corridor, odds);
+            if (sheet.Knots.Count == 0 || !(sheet.WidthM >= narrowestM && sheet.WidthM <= 1.3 * widestM)) return null;
+        }
+
+        return Judge(sheet, labels);
+    }
+
+    /// <summary>Separation of the training sides by their own odds: too good by nature, so what fails it is nothing.</summary>
+    private static double Tells(Corridor corridor, float[] odds, List<int> train, List<byte> side)
+    {
+        var place = new Dictionary<int, int>(corridor.Patch.Count);
+        for (int i = 0; i < corridor.Patch.Count; i++) place[corridor.Patch[i]] = i;
+        var inside = new List<float>();
+        var outside = new List<float>();
+        for (int i = 0; i < train.Count; i++) (side[i] == 1 ? inside : outside).Add(odds[place[train[i]]]);
+        return Appearance.Auc(inside, outside);
+    }
+
+    private FoundDike? Judge(Sheet sheet, PatchLabels labels)
+    {
+        Corridor corridor = CorridorOf(sheet, double.PositiveInfinity);
+        double width = sheet.WidthM;
+        (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, Math.Max(2, width));
+        double textureAuc = HeldOut([], texture), colourAuc = colour.Length > 0 ? HeldOut(colour, []) : 0.5;
+        double allAuc = colour.Length > 0 ? HeldOut(colour, texture) : textureAuc, hueAuc = colour.Length > 0 ? HeldOut(hue, []) : 0.5;
+        float[] slopes = [.. train.Select(p => features.Level06[p])];
+        double slopeAuc = Math.Max(Worse(slopes), Worse([.. slopes.Select(v => -v)]));
+        bool byColour = colourAuc >= textureAuc - 0.05;
+        float[]? odds = Appearance.LogOdds(features, byColour ? colour : [], byColour ? [] : texture, train, side, fold, corridor.Patch, corridor.Fold, Folds);
+        if (odds == null) return null;
+        odds = Averaged(corridor.Patch, odds);
+        var fitter = corridor.Fitter(patches, odds);
+        double wander = fitter.Wander(sheet, Math.Max(0.5, 0.2 * width));
+        int both = sheet.Knots.Count(k => k.BothMargins);
+        double length = both == 0 ? 0 : sheet.Knots.Where(k => k.BothMargins).Max(k => k.S + k.HalfM) - sheet.Knots.Where(k => k.BothMargins).Min(k => k.S - k.HalfM);
+        var judgement = new DikeJudgement(width, length, wander, (double)both / sheet.Knots.Count, colourAuc, textureAuc, allAuc, hueAuc, slopeAuc);
+        // A hand that has labelled dike and host knows better than the shape.
+        bool accepted = labels.Verdict(patches, sheet) ?? IsDike(judgement);
+        Looked.Add((judgement, accepted));
+        return accepted ? new FoundDike(sheet, judgement, train, side, byColour) : null;
+
+        // The worse of the two flanks: a bench edge or a bed differs from one side only.
+        double HeldOut(int[] ofColour, int[] ofTexture)
+        {
+            float[]? o = Appearance.LogOdds(features, ofColour, ofTexture, train, side, fold, train, fold, Folds);
+            return o == null ? 0.5 : Worse(Averaged(train, o));
+        }
+
+        double Worse(float[] o)
+        {
+            var inside = new List<float>();
+            var flank = new[] { new List<float>(), new List<float>() };
+            for (int i = 0; i < train.Count; i++)
+            {
+                if (side[i] == 1)
+                {
+                    inside.Add(o[i]);
+                    continue;
+                }
+
+                (double s, double v, double t) = sheet.At(patches.X[train[i]], patches.Y[train[i]], patches.Z[train[i]]);
+                (double a, double b) = sheet.Margins(s, v);
+                flank[t < (a + b) / 2 ? 0 : 1].Add(o[i]);
+            }
+
+            return Math.Min(Appearance.Auc(inside, flank[0]), Appearance.Auc(inside, flank[1]));
+        }
+    }
+
+    /// <summary>Odds averaged over each patch and its neighbours in the list: one lichen spot does not make an outlier.</summary>
+    private float[] Averaged(List<int> list, float[] odds)
+    {
+        var place = new int[patches.Count];
+        Array.Fill(place, -1);
+        for (int i = 0; i < list.Count; i++) place[list[i]] = i;
+        var mean = new float[odds.Length];
+        Maths.Blocks.BlockParallel.For(list.Count, context.Threads, context.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                int p = list[i], count = 0;
+                float sum = 0;
+                for (int k = 0; k < 27; k++)
+                {
+                    int j = patches.Map.Find(patches.Cell[3 * p] + (k % 3) - 1, patches.Cell[(3 * p) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * p) + 2] + (k / 9) - 1);
+                    if (j < 0 || place[j] < 0) continue;
+                    sum += odds[place[j]];
+                    count++;
+                }
+
+                mean[i] = sum / count;
+            }
+        });
+        return mean;
+    }
+
+    /// <summary>The decision by shape: long enough, both margins seen, margins that keep to the sheet; and rock that differs.</summary>
+    internal static bool IsDike(DikeJudgement j)
+    {
+        if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
+        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.06 * j.WidthM);
+        bool byTexture = j.TextureAuc >= 0.85 && j.SlopeAuc <= 0.62 && j.LengthM > 8 * j.WidthM && j.WanderM <= Math.Max(0.1, 0.06 * j.WidthM);
+        return byColour || byTexture;
+    }
+}

@@ -1,0 +1,123 @@
+using System.Numerics;
+using CloudStruct.Maths.Mixtures;
+using CloudStruct.Records.Points;
+using CloudStruct.Records.Stages;
+
+namespace CloudStruct.Stages.Classify;
+
+/// <summary>Draws the outline anew at the full spacing of the points, in the band where patches of both kinds meet.</summary>
+internal static class PointCut
+{
+    private const int Near = 8;
+
+    /// <summary>Chooses for the points of the band.</summary>
+    /// <param name="described">The cloud.</param>
+    /// <param name="patches">Patches.</param>
+    /// <param name="features">Features.</param>
+    /// <param name="dike">The dike.</param>
+    /// <param name="looks">What it looks like.</param>
+    /// <param name="inside">Patches of the dike.</param>
+    /// <param name="free">Rock that no other dike has.</param>
+    /// <param name="perM">Price of a metre of boundary.</param>
+    /// <param name="say">[in, out] Whether each point is dike; given as its patch has it.</param>
+    /// <param name="context">Context.</param>
+    public static void Run(
+        DescribedCloud described, Patches patches, Features features, FoundDike dike, Looks[] looks, bool[] inside, bool[] free, double perM, bool[] say, StageContext context)
+    {
+        WorkingCloud cloud = described.Cloud;
+        bool[] band = Band(patches, inside, free);
+        var node = new int[cloud.Count];
+        int n = 0;
+        for (int i = 0; i < node.Length; i++) node[i] = band[patches.OfPoint[i]] ? n++ : -1;
+        if (n == 0) return;
+        var odds = new float[n];
+        double width = dike.Sheet.WidthM;
+        Maths.Blocks.BlockParallel.For(cloud.Count, context.Threads, context.Stop, (from, to) =>
+        {
+            Span<float> row = stackalloc float[3];
+            for (int i = from; i < to; i++)
+            {
+                if (node[i] < 0) continue;
+                float sum = 0;
+                foreach (Looks look in looks)
+                {
+                    if (!look.IsColour)
+                    {
+                        sum += look.LogOdds(features, patches.OfPoint[i], Appearance.Clip);
+                        continue;
+                    }
+
+                    Colour(described, features, patches.OfPoint[i], i, row);
+                    sum += look.LogOdds(row, Appearance.Clip);
+                }
+
+                double pull = DikeCut.Pull(dike.Sheet.Depth(cloud.X[i], cloud.Y[i], cloud.Z[i]), width, dike.ByColour);
+                odds[node[i]] = (float)(Math.Clamp(sum, -Appearance.Clip, Appearance.Clip) + pull);
+            }
+        });
+
+        // Points of density 1/h² with their eight nearest: a metre of line crosses 2.7/h edges.
+        double price = perM * cloud.SpacingM / 2.7;
+        var flow = new MaxFlow(n, Near * n);
+        for (int i = 0; i < cloud.Count; i++)
+        {
+            if (node[i] < 0) continue;
+            double evidence = odds[node[i]] * described.AreaM2[i] / SheetFitter.IndependentM2, source = Math.Max(0, evidence), sink = Math.Max(0, -evidence);
+            for (int k = 0; k < Near; k++)
+            {
+                int j = cloud.Neighbours[(i * WorkingCloud.K) + k];
+                if (j < 0) break;
+                if (node[j] >= 0) flow.AddEdge(node[i], node[j], price / 2, price / 2);
+                else if (free[patches.OfPoint[j]] && inside[patches.OfPoint[j]]) source += price;
+                else if (free[patches.OfPoint[j]]) sink += price;
+            }
+
+            flow.AddTerminal(node[i], source, sink);
+        }
+
+        flow.Solve();
+        for (int i = 0; i < cloud.Count; i++)
+        {
+            if (node[i] >= 0) say[i] = flow.WithSource(node[i]);
+        }
+    }
+
+    /// <summary>Colour of a point as the features have it, averaged over the point and its nearest neighbours.</summary>
+    private static void Colour(DescribedCloud described, Features features, int patch, int i, Span<float> row)
+    {
+        float l = described.LStar[i], red = described.LogRedGreen[i], blue = described.LogBlueGreen[i];
+        int count = 1;
+        for (int k = 0; k < Near; k++)
+        {
+            int j = described.Cloud.Neighbours[(i * WorkingCloud.K) + k];
+            if (j < 0) break;
+            l += described.LStar[j];
+            red += described.LogRedGreen[j];
+            blue += described.LogBlueGreen[j];
+            count++;
+        }
+
+        var normal = new Vector3(described.NormalX[i], described.NormalY[i], described.NormalZ[i]);
+        row[0] = features.Standard(0, l / count, normal, patch);
+        row[1] = features.Standard(1, 100 * red / count, normal, patch);
+        row[2] = features.Standard(2, 100 * blue / count, normal, patch);
+    }
+
+    private static bool[] Band(Patches patches, bool[] inside, bool[] free)
+    {
+        var edge = new bool[inside.Length];
+        for (int i = 0; i < inside.Length; i++)
+        {
+            if (!inside[i]) continue;
+            for (int k = 0; k < 27; k++)
+            {
+                int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
+                if (j >= 0 && free[j] && !inside[j]) edge[i] = edge[j] = true;
+            }
+        }
+
+        bool[] grown = PatchCut.Grown(patches, edge, 1);
+        for (int i = 0; i < grown.Length; i++) grown[i] &= free[i];
+        return grown;
+    }
+}
