@@ -20,7 +20,7 @@ internal sealed class WktReader
     public static CrsFound Read(string text)
     {
         var reader = new WktReader();
-        reader.Top(WktText.Parse(text), 0);
+        foreach (WktNode node in WktText.Parse(text)) reader.Top(node, 0);
         reader.draft.Source = reader.isSecond ? "WKT2" : "WKT1";
         return new CrsFound(reader.draft.Done(), [.. reader.problems]);
     }

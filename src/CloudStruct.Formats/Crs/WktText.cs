@@ -15,15 +15,21 @@ internal sealed class WktText
 
     private WktText(string text) => this.text = text;
 
-    /// <summary>Parses one element and nothing after it.</summary>
+    /// <summary>Parses the text: one element, or a horizontal and a vertical one with a comma between, as some programs write.</summary>
     /// <exception cref="FormatException">The text is not well-known text; the message says at which character.</exception>
-    public static WktNode Parse(string text)
+    public static IReadOnlyList<WktNode> Parse(string text)
     {
         var parser = new WktText(text);
-        WktNode node = parser.Node(0);
+        var nodes = new List<WktNode> { parser.Node(0) };
         parser.Blanks();
+        while (parser.at < text.Length && text[parser.at] == ',')
+        {
+            parser.at++;
+            nodes.Add(parser.Node(0));
+            parser.Blanks();
+        }
         if (parser.at < text.Length) throw parser.Fault("text after the last bracket");
-        return node;
+        return nodes;
     }
 
     private WktNode Node(int depth)
