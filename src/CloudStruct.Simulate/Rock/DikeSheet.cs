@@ -73,6 +73,9 @@ internal sealed class DikeSheet
     /// <summary>Half the extent along strike for which the bounds of the margins hold [m].</summary>
     public double HalfReachM { get; }
 
+    /// <summary>Between these places across, both margins lie everywhere [m].</summary>
+    public (double FromM, double ToM) AcrossM => (boundsA.Min, boundsB.Max);
+
     /// <summary>Along strike, up dip and across, of a local place.</summary>
     public (double S, double V, double W) Inside(Vec3 p)
     {

@@ -7,7 +7,7 @@ namespace CloudStruct.Simulate.Rock;
 /// <summary>Draws the rock of a plan: ground, joint sets, dikes, blocks, and what lies on them.</summary>
 internal static class MassifMaker
 {
-    private const double HostPlacesPerM3 = 130, DikePlacesPerM3 = 420;
+    private const double HostPlacesPerM3 = 130, DikePlacesPerM3 = 420, SparseShare = 0.06, LowestM = -3.5, RimM = 0.8;
 
     /// <summary>Makes the rock.</summary>
     /// <returns>The solid, the mean poles of the host's joint sets, and those of the joint sets of each dike.</returns>
@@ -17,9 +17,8 @@ internal static class MassifMaker
         var drape = new Drape(plan, terrain, seed);
         DikeSheet[] dikes = [.. plan.Dikes.Select((d, i) => PlaceDike(d, terrain, seed, i + 1))];
         JointTreeMaker.Set[] hostSets = [.. plan.HostJoints.Select((s, i) => DrawSet(s, terrain, seed, i))];
-        bool InHost(Vec3 p) => !Array.Exists(dikes, d => d.Contains(p));
         JointTree host = JointTreeMaker.Make(
-            hostSets, Places(terrain, seed, 0, HostPlacesPerM3, InHost), seed, Purpose.HostJoints, p => Stands(plan, terrain, drape, p, 0));
+            hostSets, HostPlaces(terrain, dikes, seed), seed, Purpose.HostJoints, p => Stands(plan, terrain, drape, p, 0));
         var blocks = new JointTree[dikes.Length];
         var dikePoles = new Vec3[dikes.Length][];
         for (int i = 0; i < dikes.Length; i++)
@@ -29,7 +28,7 @@ internal static class MassifMaker
             dikePoles[i] = Upward(sets);
             blocks[i] = JointTreeMaker.Make(
                 sets,
-                Places(terrain, seed, i + 1, DikePlacesPerM3, dike.Contains),
+                DikePlaces(terrain, dike, seed),
                 seed + (ulong)i,
                 Purpose.DikeJoints,
                 p => Stands(plan, terrain, drape, p, dike.ReliefM));
@@ -79,25 +78,70 @@ internal static class MassifMaker
         return p.Z < terrain.Height(a, b) + reliefM - drape.Lowering(a, b);
     }
 
-    /// <summary>Random places in one rock: dense near the surface, sparse elsewhere.</summary>
-    private static Vec3[] Places(Terrain terrain, ulong seed, int rock, double perM3, Func<Vec3, bool> inRock)
+    /// <summary>Random places in the host: dense near the surface, sparse elsewhere.</summary>
+    private static Vec3[] HostPlaces(Terrain terrain, DikeSheet[] dikes, ulong seed)
     {
-        var dice = new Dice(seed, Purpose.Samples, (ulong)rock);
-        const double rim = 0.8;
-        double low = -3.5, volume = (terrain.LengthM + (2 * rim)) * (terrain.BreadthM + (2 * rim)) * (terrain.TopM - low);
-        int tries = (int)(volume * perM3);
+        var dice = new Dice(seed, Purpose.Samples);
         var places = new List<Vec3>();
-        for (int i = 0; i < tries; i++)
+        double area = (terrain.LengthM + (2 * RimM)) * (terrain.BreadthM + (2 * RimM)), height = terrain.TopM - LowestM;
+        // Every place of a column is tried at the sparse density; its band near the surface at the full one.
+        for (int i = (int)(area * HostPlacesPerM3 * SparseShare * height); i > 0; i--)
         {
-            double a = dice.Between(-rim, terrain.LengthM + rim), b = dice.Between(-rim, terrain.BreadthM + rim), z = dice.Between(low, terrain.TopM);
-            double lot = dice.Unit();
-            (double lowest, double highest) = terrain.HeightsWithin(a, b, 1.1);
-            if ((z < lowest - 2 || z > highest + 1.2) && lot > 0.06) continue;
-            Vec3 p = terrain.Place(a, b, z);
-            if (inRock(p)) places.Add(p);
+            AddUnlessInDike(dikes, Anywhere(terrain, ref dice, LowestM, terrain.TopM), places);
+        }
+
+        const double columnM2 = 0.25;
+        for (int i = (int)(area / columnM2); i > 0; i--)
+        {
+            double a = dice.Between(-RimM, terrain.LengthM + RimM), b = dice.Between(-RimM, terrain.BreadthM + RimM);
+            (double low, double high) = Band(terrain, a, b);
+            for (double left = (high - low) * HostPlacesPerM3 * columnM2; left > dice.Unit(); left--)
+            {
+                // Strewn about the column, not on one vertical line.
+                double da = dice.Between(-0.3, 0.3), db = dice.Between(-0.3, 0.3);
+                AddUnlessInDike(dikes, terrain.Place(a + da, b + db, dice.Between(low, high)), places);
+            }
         }
 
         return [.. places];
+    }
+
+    private static Vec3 Anywhere(Terrain terrain, ref Dice dice, double low, double high) => terrain.Place(
+        dice.Between(-RimM, terrain.LengthM + RimM), dice.Between(-RimM, terrain.BreadthM + RimM), dice.Between(low, high));
+
+    private static void AddUnlessInDike(DikeSheet[] dikes, Vec3 p, List<Vec3> places)
+    {
+        if (!Array.Exists(dikes, d => d.Contains(p))) places.Add(p);
+    }
+
+    /// <summary>Random places in a dike: dense near the surface, sparse elsewhere.</summary>
+    private static Vec3[] DikePlaces(Terrain terrain, DikeSheet dike, ulong seed)
+    {
+        var dice = new Dice(seed, Purpose.Samples, (ulong)dike.Number);
+        var places = new List<Vec3>();
+        double half = dike.HalfReachM, reach = (terrain.TopM - LowestM) / dike.Up.Z;
+        (double lowW, double highW) = dike.AcrossM;
+        for (int i = (int)(DikePlacesPerM3 * 2 * half * 2 * reach * (highW - lowW)); i > 0; i--)
+        {
+            double s = dice.Between(-half, half), v = dice.Between(-reach, reach), w = dice.Between(lowW, highW), lot = dice.Unit();
+            Vec3 p = dike.Place(s, v, w);
+            (double a, double b) = terrain.Site(p);
+            if (p.Z < LowestM || p.Z > terrain.TopM || a < -RimM || b < -RimM || a > terrain.LengthM + RimM || b > terrain.BreadthM + RimM) continue;
+            (double low, double high) = Band(terrain, a, b);
+            if ((p.Z > low && p.Z < high) || lot < SparseShare)
+            {
+                if (dike.Contains(p)) places.Add(p);
+            }
+        }
+
+        return [.. places];
+    }
+
+    /// <summary>Heights between which blocks can show.</summary>
+    private static (double Low, double High) Band(Terrain terrain, double a, double b)
+    {
+        (double lowest, double highest) = terrain.HeightsWithin(a, b, 1.1);
+        return (Math.Max(LowestM, lowest - 2), Math.Min(terrain.TopM, highest + 1.2));
     }
 
     /// <summary>Ice-worn surface: level blocks a centimetre or two apart in height, furrows along joints.</summary>

@@ -7,7 +7,7 @@ namespace CloudStruct.Tests.Simulate;
 
 public class DemoSurveyTests
 {
-    private readonly DemoSurvey survey = DemoSurvey.Make(31, 60_000);
+    private readonly DemoSurvey survey = DemoSurvey.Make(31, 20_000);
 
     [Fact]
     public void Tiles_hold_every_point_once_and_overlap()

@@ -114,7 +114,7 @@ public class DikeTruthTests(SimulatedFixture made) : IClassFixture<SimulatedFixt
     [Fact]
     public void A_long_dike_bends_tapers_and_holds_clasts()
     {
-        SimulatedOutcrop made = Outcrop.Make(OutcropPlan.ByName("long"), 12, 150_000);
+        SimulatedOutcrop made = Outcrop.Make(OutcropPlan.ByName("long"), 12, 50_000);
         SimulatedDike dike = made.Dikes[0];
         double[] widths = [.. dike.CentreLine.Select(dike.WidthAt)];
         Assert.True(widths.Max() / widths.Min() > 1.12);
