@@ -13,16 +13,19 @@ internal static class DikeTruth
     /// person would bridge, up to about a metre, do not count as hidden.</summary>
     private const int ReachBins = 2;
 
-    /// <summary>Points of each rock that make it visible there.</summary>
-    private const int Enough = 6;
+    /// <summary>Share of the strip beside the margin that must show each rock.</summary>
+    private const double EnoughShare = 0.08;
 
     /// <summary>The truth about one dike.</summary>
     /// <param name="sheet">Its body.</param>
     /// <param name="places">Points before noise, local.</param>
     /// <param name="classes">True class of each.</param>
     /// <param name="origin">Map coordinates of the local origin.</param>
-    public static SimulatedDike Make(DikeSheet sheet, Func<int, Vec3> places, byte[] classes, Vec3 origin)
+    /// <param name="spacingM">Mean distance of neighbouring points [m].</param>
+    public static SimulatedDike Make(DikeSheet sheet, Func<int, Vec3> places, byte[] classes, Vec3 origin, double spacingM)
     {
+        double stripM2 = BesideM * BinM * ((2 * ReachBins) + 1);
+        int enough = (int)Math.Max(3, EnoughShare * stripM2 / (spacingM * spacingM));
         int half = (int)(sheet.HalfReachM / BinM), bins = 2 * half;
         var near = new int[bins, 2, 2];   // bin, margin, side of it
         var line = new (Vec3 Sum, int Count)[bins];
@@ -45,18 +48,18 @@ internal static class DikeTruth
         return new SimulatedDike(sheet, origin)
         {
             Extent = ((first - half) * BinM, (last + 1 - half) * BinM),
-            Hidden = [.. Hidden(near, first, last, half)],
+            Hidden = [.. Hidden(near, first, last, half, enough)],
             CentreLine = [.. line.Where(l => l.Count > 0).Select(l => (l.Sum / l.Count) + origin)],
         };
     }
 
-    private static IEnumerable<HiddenStretch> Hidden(int[,,] near, int first, int last, int half)
+    private static IEnumerable<HiddenStretch> Hidden(int[,,] near, int first, int last, int half, int enough)
     {
         int from = -1;
         (bool A, bool B) state = default;
         for (int bin = first; bin <= last + 1; bin++)
         {
-            (bool A, bool B) now = bin > last ? default : (Misses(near, bin, 0), Misses(near, bin, 1));
+            (bool A, bool B) now = bin > last ? default : (Misses(near, bin, 0, enough), Misses(near, bin, 1, enough));
             if (from >= 0 && now != state)
             {
                 yield return new((from - half) * BinM, (bin - half) * BinM, state.A, state.B);
@@ -67,7 +70,7 @@ internal static class DikeTruth
         }
     }
 
-    private static bool Misses(int[,,] near, int bin, int margin)
+    private static bool Misses(int[,,] near, int bin, int margin, int enough)
     {
         int host = 0, dike = 0;
         for (int k = Math.Max(0, bin - ReachBins); k <= Math.Min(near.GetLength(0) - 1, bin + ReachBins); k++)
@@ -76,6 +79,6 @@ internal static class DikeTruth
             dike += near[k, margin, 1 - margin];
         }
 
-        return host < Enough || dike < Enough;
+        return host < enough || dike < enough;
     }
 }

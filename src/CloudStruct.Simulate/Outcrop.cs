@@ -87,7 +87,7 @@ public static class Outcrop
             TrueClass = classes,
             TrueDike = dikeOf,
             Faces = faces,
-            Dikes = [.. massif.Dikes.Select(d => DikeTruth.Make(d, i => sights[i].Place, classes, Origin))],
+            Dikes = [.. massif.Dikes.Select(d => DikeTruth.Make(d, i => sights[i].Place, classes, Origin, spacing))],
             Crs = InventedPlace.Crs,
             Origin = Origin,
             UphillDeg = massif.Terrain.UphillDeg,
@@ -114,13 +114,16 @@ public static class Outcrop
         return tree.BlockOf(tree.Find(s.Place - (n * 0.002))).Lot;
     }
 
-    /// <summary>Root of the area per point, from the points in cubes of 0.25 m that a flat patch would fill.</summary>
+    /// <summary>Root of the area per point, from cubes large enough to hold many points each.</summary>
     private static double Spacing(Sight[] sights)
     {
         if (sights.Length == 0) return 0;
-        // A plane that lies anyhow passes through 1.5 cubes per area of a cube's side.
-        var cubes = new HashSet<(int, int, int)>();
-        foreach (Sight s in sights) cubes.Add(((int)Math.Floor(s.X * 4), (int)Math.Floor(s.Y * 4), (int)Math.Floor(s.Z * 4)));
-        return Math.Sqrt(cubes.Count * 0.25 * 0.25 / 1.5 / sights.Length);
+        for (double edge = 0.25; ; edge *= 1.4)
+        {
+            var cubes = new HashSet<(int, int, int)>();
+            foreach (Sight s in sights) cubes.Add(((int)Math.Floor(s.X / edge), (int)Math.Floor(s.Y / edge), (int)Math.Floor(s.Z / edge)));
+            // A plane that lies anyhow passes through 1.5 cubes per area of a cube's side.
+            if (sights.Length > 10 * cubes.Count || edge > 4) return Math.Sqrt(cubes.Count * edge * edge / 1.5 / sights.Length);
+        }
     }
 }

@@ -64,9 +64,11 @@ public class OutcropTests
     [Fact]
     public void Two_rocks_differ_in_colour_except_where_the_plan_says_they_do_not()
     {
-        Assert.True(Contrast("demo") > 1.0);
-        Assert.InRange(Contrast("low-contrast"), 0.15, 1.0);
-        Assert.True(Contrast("texture-only") < 0.15);
+        double plain = Contrast("demo"), low = Contrast("low-contrast"), none = Contrast("texture-only");
+        Assert.True(plain > 1, $"{plain}");
+        Assert.InRange(low, 0.3, 0.7 * plain);
+        // A joint is a dark line and a small block has more of them: that much stays without any difference in paint.
+        Assert.True(none < 0.7 * low, $"{none}");
     }
 
     [Fact]
@@ -74,7 +76,7 @@ public class OutcropTests
     {
         // More than one block of points; what they look like does not matter here.
         double[] column = [.. Enumerable.Range(0, 70_000).Select(i => i * 0.001)];
-        byte[] colour = [.. Enumerable.Range(0, 70_000).Select(i => (byte)i)];
+        byte[] colour = [.. Enumerable.Range(0, 70_000).Select(i => (byte)(i % 256))];
         var made = new SimulatedOutcrop { X = column, Y = column, Z = column, Red = colour, Green = colour, Blue = colour };
         var source = made.AsSource();
         int at = 0;
