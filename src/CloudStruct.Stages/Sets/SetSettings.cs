@@ -18,13 +18,13 @@ public sealed record SetSettings : IStageSettings
 
     /// <summary>Two clusters of poles are one set when the density between them never falls below this part of the lower
     /// summit. Near 1 every dent parts two sets, near 0 only an empty gap does.</summary>
-    public double ValleyDepth { get; init; } = 0.5;
+    public double ValleyDepth { get; init; } = 0.6;
 
     /// <summary>A cluster whose poles scatter by more than this (one standard deviation, in its widest direction) is no set [deg].</summary>
     public double WidestDeg { get; init; } = 20;
 
-    /// <summary>Faces farther apart than this are never taken for pieces of one plane [m]. Empty: four times the square root of
-    /// the larger face's area, at least 2 m.</summary>
+    /// <summary>Faces farther apart than this are never taken for pieces of one plane [m]. Empty: six times the square root of
+    /// the larger face's area, at least 5 m.</summary>
     public double? ReachM { get; init; }
 
     /// <summary>Breadth of the lanes along a set's normal in which its planes are counted for spacing [m]. Empty: the mean
