@@ -28,7 +28,7 @@ public sealed record SetSettings : IStageSettings
     public double? ReachM { get; init; }
 
     /// <summary>Breadth of the lanes along a set's normal in which its planes are counted for spacing [m]. Empty: the mean
-    /// exposed length of the set's faces, at least ten times the spacing of the points.</summary>
+    /// exposed length of the set's faces, at least twenty times the spacing of the points.</summary>
     public double? LaneM { get; init; }
 
     /// <inheritdoc/>

@@ -19,7 +19,7 @@ internal static class SetSpacing
 
     // Along the normal the rock is seen in steps of this part of a lane; a gap of one step is bridged, being as wide as a face
     // seen edge-on may hide.
-    private const int StepsInLane = 4;
+    private const int StepsInLane = 10;
 
     /// <summary>Spacing with its 95 % limits, or null when too few planes or too little rock was seen.</summary>
     /// <param name="cloud">The cloud.</param>

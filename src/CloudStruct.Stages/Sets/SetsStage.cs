@@ -101,7 +101,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         Array.Fill(planeOfFace, -1);
         for (int p = 0; p < planes.Length; p++) foreach (int f in planes[p].Faces) planeOfFace[f] = p;
         double length = own.Average(f => faces[f].LengthM);
-        double lane = settings.LaneM ?? Math.Max(length, 10 * input.Described.Cloud.SpacingM);
+        double lane = settings.LaneM ?? Math.Max(length, 20 * input.Described.Cloud.SpacingM);
         return new OrientationSet
         {
             Set = name,
