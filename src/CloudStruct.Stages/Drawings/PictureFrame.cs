@@ -1,0 +1,74 @@
+using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
+
+namespace CloudStruct.Stages.Drawings;
+
+/// <summary>How the cloud is looked at: three unit vectors, and the window on the plane of the picture.</summary>
+internal sealed record PictureFrame
+{
+    // Finer pixels than this part of the spacing of the points show only the splats.
+    private const double PixelsInSpacing = 4;
+
+    // Outliers beyond these shares of the points do not widen the window.
+    private const double Tail = 0.0005;
+
+    /// <summary>Points right on the picture.</summary>
+    public Vec3 Right { get; private init; }
+
+    /// <summary>Points up on the picture.</summary>
+    public Vec3 Up { get; private init; }
+
+    /// <summary>Points from the picture to the eye.</summary>
+    public Vec3 Toward { get; private init; }
+
+    /// <summary>Left border [m along <see cref="Right"/>].</summary>
+    public double Left { get; private init; }
+
+    /// <summary>Upper border [m along <see cref="Up"/>].</summary>
+    public double Top { get; private init; }
+
+    /// <summary>Metres per pixel.</summary>
+    public double PixelM { get; private init; }
+
+    /// <summary>Pixels.</summary>
+    public int Width { get; private init; }
+
+    /// <summary>Pixels.</summary>
+    public int Height { get; private init; }
+
+    /// <summary>Fits the window around the cloud.</summary>
+    /// <param name="cloud">At least one point.</param>
+    /// <param name="right">Unit vector.</param>
+    /// <param name="up">Unit vector square to it.</param>
+    /// <param name="sizePx">Longer side.</param>
+    public static PictureFrame Around(WorkingCloud cloud, Vec3 right, Vec3 up, int sizePx)
+    {
+        (double left, double rightmost) = Extent(cloud, right);
+        (double bottom, double top) = Extent(cloud, up);
+        double margin = Math.Max(0.02 * Math.Max(rightmost - left, top - bottom), Math.Max(1e-3, cloud.SpacingM));
+        (left, rightmost, bottom, top) = (left - margin, rightmost + margin, bottom - margin, top + margin);
+        double pixel = Math.Max(Math.Max(rightmost - left, top - bottom) / sizePx, cloud.SpacingM / PixelsInSpacing);
+        return new PictureFrame
+        {
+            Right = right,
+            Up = up,
+            Toward = right.Cross(up),
+            Left = left,
+            Top = top,
+            PixelM = pixel,
+            Width = Math.Max(1, (int)Math.Ceiling((rightmost - left) / pixel)),
+            Height = Math.Max(1, (int)Math.Ceiling((top - bottom) / pixel)),
+        };
+    }
+
+    private static (double Low, double High) Extent(WorkingCloud cloud, Vec3 axis)
+    {
+        // A sample in equal steps of the grid's order: a hundred thousand points place the tails well enough.
+        int step = Math.Max(1, cloud.Count / 100_000);
+        var along = new List<double>();
+        for (int i = 0; i < cloud.Count; i += step) along.Add(cloud.Place(i).Dot(axis));
+        along.Sort();
+        int tail = (int)(Tail * along.Count);
+        return (along[tail], along[^(tail + 1)]);
+    }
+}
