@@ -58,7 +58,8 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
             BoxMax = Corner(boxes, tiles, b => b.Max, Math.Max) - origin,
         }
         : record with { BoxMin = new Vec3(-1e12, -1e12, -1e12), BoxMax = new Vec3(1e12, 1e12, 1e12) };
-        record = SecondLook(input, record, tiles, again, context);
+        record = SecondLook(input, record, tiles, again, settings.JoinTiles, context);
+        record = WithControl(input, record, context);
         SayWhatWasDropped(record, context);
         context.Progress(1);
         return new Pieces(input, record);
@@ -80,8 +81,12 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         for (int i = 0; i < tiles.Length; i++)
         {
             tiles[i] = new TileFacts(input.Sources[i], capacity);
+            int before = seen?.Again.Count ?? 0;
             tiles[i].Look(map, seen, n => context.Progress(Math.Min(0.5, 0.5 * (done += n) / announced)), context.Stop);
             CheckSteps(tiles[i], map, input.OffsetM);
+
+            // All points of a copy have been seen before; the copy is left out as a whole, and its list would be long.
+            if (seen is not null && tiles.Take(i).Any(t => t.IsCopyOf(tiles[i]))) seen.Again.RemoveRange(before, seen.Again.Count - before);
             if (tiles[i].Read > 0 && tiles[i].Read == tiles[i].NotANumber)
             {
                 throw new InputException(tiles[i].Header.Name, "no point has usable coordinates", Invariant($"{tiles[i].Read} points, all with a coordinate that is not a number"), "Export the cloud again");
@@ -125,8 +130,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         {
             for (int j = 0; j < i && !isCopy[i] && tiles[i].Read > 0; j++)
             {
-                if (isCopy[j] || tiles[j].Content != tiles[i].Content) continue;
-                if (tiles[j].Read - tiles[j].NotANumber != tiles[i].Read - tiles[i].NotANumber) continue;
+                if (isCopy[j] || !tiles[j].IsCopyOf(tiles[i])) continue;
                 isCopy[i] = true;
                 context.Say(new Remark("intake", $"{tiles[i].Header.Name} holds the same points as {tiles[j].Header.Name} and was left out.", true));
             }
@@ -181,7 +185,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
     }
 
     private static IntakeRecord SecondLook(
-        SurveyInput input, IntakeRecord record, TileFacts[] tiles, List<ulong> again, StageContext context)
+        SurveyInput input, IntakeRecord record, TileFacts[] tiles, List<ulong> again, bool join, StageContext context)
     {
         (Vec3[] seeds, double guess, bool whole) = Guess(record, tiles, context.Stop);
         var cubes = whole || guess <= 0 ? null : new LocalCubes(seeds, guess);
@@ -189,12 +193,15 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         var dropped = new List<ulong>();
         var box = new Extent();
         long total = Math.Max(1, tiles.Sum(t => t.Read)), done = 0;
+        bool several = record.Tiles.Count(t => !t.IsCopy && t.PointsRead > 0) > 1;
+        SharedGround? ground = join && several ? new SharedGround(ColumnEdge(guess, seeds)) : null;
         foreach (PointBlock block in new Pieces(input, record).Read(counts, new DoubledPlaces(again), dropped, context.Stop))
         {
             using (block)
             {
                 box.Add(block);
                 cubes?.Add(block);
+                ground?.Add(block);
                 done += block.Count;
                 context.Progress(0.5 + (0.4 * done / total));
             }
@@ -208,13 +215,53 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         Vec3 size = box.Max - box.Min;
         if (Math.Max(size.X, Math.Max(size.Y, size.Z)) > MostExtentM) throw TooWide(size, tiles[0].Header.Name, tiles[^1].Header.Name);
         double spacing = cubes?.SpacingM(context.Stop) ?? guess;
-        return WithCounts(record, counts) with
+        record = WithCounts(record, counts) with
         {
             DoubledKeys = [.. dropped.Distinct().Select(p => unchecked((long)p)).Order()],
             BoxMin = box.Min,
             BoxMax = box.Max,
             InputSpacingM = spacing > 0 ? spacing : guess,
         };
+        return ground is null || record.InputSpacingM <= 0 ? record : Joined(input, record, tiles, ground, context);
+    }
+
+    // What is left when each shared column is taken from one file has to be counted once more.
+    private static IntakeRecord Joined(
+        SurveyInput input, IntakeRecord record, TileFacts[] tiles, SharedGround ground, StageContext context)
+    {
+        Vec3[] middles = [.. tiles.Select(t => t.Sample.Places.Length == 0 ? default : ((Body(t).Min + Body(t).Max) * 0.5) - record.Frame.Origin)];
+        record = TileJoin.Join(input, record, ground, middles, context);
+        if (record.OwnerKeys.Length == 0) return record;
+        var counts = new TileCounts[tiles.Length];
+        var places = new DoubledPlaces(Array.ConvertAll(record.DoubledKeys, k => unchecked((ulong)k)));
+        foreach (PointBlock block in new Pieces(input, record).Read(counts, places, [], context.Stop)) block.Dispose();
+        return WithCounts(record, counts);
+    }
+
+    private static IntakeRecord WithControl(SurveyInput input, IntakeRecord record, StageContext context)
+    {
+        if (input.Control.Length == 0) return record;
+        var control = new ControlFit(input.Control, record.Frame.Origin, record.InputSpacingM);
+        if (control.NeedsSurface)
+        {
+            foreach (PointBlock block in new Pieces(input, record).Read(context.Stop))
+            {
+                using (block) control.Add(block);
+            }
+        }
+
+        return record with
+        {
+            Control = control.Residuals(),
+            Frame = record.Frame with { Reference = ControlFit.Estimate(input.Control, record.Frame.Reference, context) },
+        };
+    }
+
+    // Columns of some thirty spacings, wider when the survey is so wide that there would be too many.
+    private static double ColumnEdge(double guess, Vec3[] seeds)
+    {
+        double wide = seeds.Max(p => Math.Max(Math.Abs(p.X), Math.Abs(p.Y)));
+        return Math.Max(30 * guess, Math.Max(1e-3, wide / 1000));
     }
 
     private static IntakeRecord WithCounts(IntakeRecord record, TileCounts[] counts) => record with

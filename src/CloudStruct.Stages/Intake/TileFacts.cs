@@ -27,6 +27,10 @@ internal sealed class TileFacts(IPointSource source, int sampleCapacity)
     /// <summary>Whether the file holds colour that says something.</summary>
     public bool HasColour => LargestColour > 0;
 
+    /// <summary>Whether both files hold the same points, in any order.</summary>
+    public bool IsCopyOf(TileFacts other) =>
+        Content == other.Content && Read - NotANumber == other.Read - other.NotANumber && Read > NotANumber;
+
     /// <summary>Reads the file once.</summary>
     /// <param name="map">To map coordinates.</param>
     /// <param name="seen">Takes the fingerprint of every finite point; null when nobody asks.</param>
