@@ -10,10 +10,10 @@ internal static class PicturePoints
     private const int Band = 32;
 
     // A disc this much wider than the spacing closes the gaps of an even cloud.
-    private const double DiscInSpacing = 0.8;
+    private const double DiscInSpacing = 0.9;
 
-    private const int ClosingRounds = 3;
-    private const int FewestNeighbours = 5;
+    // Gaps are closed up to about the spacing from each side: more would bridge what the flight did not see.
+    private const int FewestNeighbours = 4;
 
     /// <summary>Index of the point per pixel, row-major from the top; -1 where nothing was seen.</summary>
     public static int[] Seen(WorkingCloud cloud, PictureFrame frame, int threads, CancellationToken stop)
@@ -49,7 +49,8 @@ internal static class PicturePoints
                 }
             }
         }, 1);
-        for (int round = 0; round < ClosingRounds; round++) seen = Closed(seen, frame, threads, stop);
+        int rounds = 1 + (int)Math.Ceiling(radius);
+        for (int round = 0; round < rounds; round++) seen = Closed(seen, frame, threads, stop);
         return seen;
     }
 
