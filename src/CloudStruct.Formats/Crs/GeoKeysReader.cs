@@ -146,8 +146,17 @@ internal sealed class GeoKeysReader
             if (doubles.TryGetValue(2059, out double f)) d.InverseFlattening = f;
             else if (doubles.TryGetValue(2058, out double b) && b < a) d.InverseFlattening = a / (a - b);
         }
-        d.GeographicName = Text(2049, Code(2048) > 0 ? Invariant($"EPSG:{Code(2048)}") : "unknown");
+        d.GeographicName = GeographicName();
         d.DatumName = d.GeographicName;
+    }
+
+    // Some writers put several facts into the citation: "GCS Name = NAD83(HARN)|Primem = Greenwich".
+    private string GeographicName()
+    {
+        int code = Code(2048);
+        string name = Text(2049, code is > 0 and < UserDefined ? Invariant($"EPSG:{code}") : "unknown").Split('|')[0];
+        int equals = name.IndexOf('=', StringComparison.Ordinal);
+        return equals < 0 ? name.Trim() : name[(equals + 1)..].Trim();
     }
 
     private void Geographic(CrsDraft d, int model)

@@ -11,7 +11,7 @@ namespace CloudStruct.Formats.Las;
 /// <see cref="SourceBlock.Withheld"/>.</remarks>
 internal sealed class LasSource : IPointSource
 {
-    // A block of format 3 is 2.2 MiB. Larger reads were no faster from disk or from the cache.
+    // About one block of points in the shorter formats, so that a block takes one or two reads.
     private const int BufferBytes = 1 << 21;
 
     private readonly string path;
@@ -79,8 +79,7 @@ internal sealed class LasSource : IPointSource
         }
     }
 
-    // Column by column over records that are in the second-level cache: on the same file about a third faster than
-    // point by point, since each loop has one destination.
+    // Column by column: each loop has one type, one offset and one destination.
     private void Unpack(ReadOnlySpan<byte> records, int n, SourceBlock block)
     {
         int start = block.Count;

@@ -9,6 +9,9 @@ public sealed record TileFix
     /// <summary>Points read.</summary>
     public long PointsRead { get; init; }
 
+    /// <summary>Points that the file itself marks as deleted; not among those read.</summary>
+    public long Withheld { get; init; }
+
     /// <summary>Points dropped because a coordinate was not a number.</summary>
     public long NotANumber { get; init; }
 

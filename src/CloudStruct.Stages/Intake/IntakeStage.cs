@@ -42,6 +42,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
             {
                 Name = t.Header.Name,
                 PointsRead = t.Read,
+                Withheld = t.Withheld,
                 NotANumber = t.NotANumber,
                 ColourShift = TileColour.ShiftOf(t.LargestColour),
                 IsCopy = isCopy[i],
@@ -311,6 +312,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
             if (n > 0) context.Say(new Remark("intake", Invariant($"{n} points ({percent:0.###} %) were dropped: {why}"), percent > 1));
         }
 
+        Say(record.Tiles.Sum(t => t.Withheld), "the file marks them as deleted.");
         Say(record.Tiles.Sum(t => t.NotANumber), "a coordinate is not a number.");
         Say(record.Tiles.Sum(t => t.FarOutliers), "they lie far outside the body of the cloud.");
         Say(record.Tiles.Sum(t => t.Doubled), "another point lies at the very same place.");

@@ -12,6 +12,9 @@ internal sealed class TileFacts(IPointSource source, int sampleCapacity)
     /// <summary>Points read.</summary>
     public long Read { get; private set; }
 
+    /// <summary>Points that the file marks as deleted and the reader left out.</summary>
+    public long Withheld { get; private set; }
+
     /// <summary>Points with a coordinate that is no number.</summary>
     public long NotANumber { get; private set; }
 
@@ -71,6 +74,7 @@ internal sealed class TileFacts(IPointSource source, int sampleCapacity)
                 }
 
                 Read += block.Count;
+                Withheld += block.Withheld;
                 progress(block.Count);
             }
         }

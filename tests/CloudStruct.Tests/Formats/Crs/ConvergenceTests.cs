@@ -1,4 +1,5 @@
 using System.Globalization;
+using CloudStruct.Formats;
 using CloudStruct.Formats.Crs;
 using CloudStruct.Records.Frame;
 using CloudStruct.Tests.Kit;
@@ -76,5 +77,16 @@ public class ConvergenceTests
         double expected = (3.2 - 2.33722917) * Math.Sin(46.8 * Math.PI / 180);
         foreach (CrsSample text in CrsSample.All().Where(t => t.Code == "27572"))
             Assert.Equal(expected, Convergence.At(CrsText.Parse(text.Text), 667321.095761, 2066990.803604)!.Value, 1e-6);
+    }
+
+    // Grids that only GeoTIFF keys describe: their parameters given to invproj and proj -V of PROJ 9.1.1 by hand.
+    [Theory]
+    [InlineData("pd_prec3.las", 636034.83, 848941.72, -1.79573793)]        // Lambert, international feet
+    [InlineData("pd_lots_of_vlr.las", 715001.346, 839349.171, 0.70683784)] // transverse Mercator, US survey feet
+    public void Parameters_from_keys_give_the_convergence(string file, double x, double y, double expected)
+    {
+        CrsInfo crs = CloudFiles.Inspect(Repo.Path("testdata/las/" + file)).Crs;
+        Assert.Equal(expected, Convergence.At(crs, x, y)!.Value, 1e-6);
+        Assert.Equal(expected, Convergence.At(CrsText.Parse(crs.Wkt), x, y)!.Value, 1e-6);
     }
 }
