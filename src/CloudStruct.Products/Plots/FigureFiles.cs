@@ -77,7 +77,8 @@ internal static class FigureFiles
         figure.Draw(new Pen(canvas, outlines: false));
         using SKImage image = surface.Snapshot();
         using SKPixmap pixels = image.PeekPixels();
-        using SKData png = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.AllFilters, 9))
+        // On a crowded net of column width level 9 took three to five times as long as level 6 and saved 2 %.
+        using SKData png = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.Sub | SKPngEncoderFilterFlags.Up, 6))
             ?? throw new InvalidOperationException($"the picture {figure.Name} could not be encoded");
         return PngChunks.WithFacts(png.ToArray(), perPoint * 72, figure.Title, runId);
     }

@@ -121,7 +121,8 @@ internal static class NetFigure
     private static string Legend(NetDrawing net)
     {
         var parts = new List<string>();
-        if (net.Poles.Length > 0) parts.Add(net.Poles.Any(p => p.AreaM2 > 0) ? "marks: poles, wider for larger faces" : "marks: poles");
+        // Marks without an area are poles or directions of contacts: the key names them.
+        if (net.Poles.Any(p => p.AreaM2 > 0)) parts.Add("marks: poles, wider for larger faces");
         if (net.Curves.Any(c => c.Kind == "great_circle")) parts.Add("coloured curves: mean planes");
         if (net.Curves.Any(c => c.Kind == "cone")) parts.Add("black rings: 95 % cones");
         if (net.Curves.Any(c => c.Kind == "contour")) parts.Add("grey: contours, darker for denser");

@@ -16,11 +16,11 @@ internal sealed partial class ReportPage
         .kicker, nav, dt, .limits, .note, figcaption, table, .strip text { font-family: system-ui, "Segoe UI", "Helvetica Neue", Arial, sans-serif; }
         .kicker { margin: 0; color: var(--quiet); font-size: .85rem; }
         .lead { margin: 0; max-width: 46rem; }
-        .numbers dl { display: grid; grid-template-columns: repeat(auto-fit, minmax(11.5rem, 1fr)); gap: 0; margin: 1.2rem 0 0; border-top: 2px solid var(--ink); border-bottom: 1px solid var(--rule); }
+        .numbers dl { display: grid; grid-template-columns: repeat(auto-fit, minmax(10.5rem, 1fr)); gap: 0; margin: 1.2rem 0 0; border-top: 2px solid var(--ink); border-bottom: 1px solid var(--rule); }
         .numbers div { padding: .7rem .9rem .8rem 0; }
         .numbers dt { font-size: .8rem; color: var(--quiet); }
         .numbers dd { margin: 0; }
-        .value { font-size: 1.35rem; line-height: 1.25; font-weight: 600; }
+        .value { font-size: 1.25rem; line-height: 1.25; font-weight: 600; }
         .limits { font-size: .85rem; font-weight: 600; } .note { font-size: .8rem; color: var(--quiet); line-height: 1.4; }
         .doubts { margin: 1rem 0 0; padding: .2rem 1rem .6rem; background: var(--tint); border-left: 5px solid var(--warn); }
         .doubts h2 { border: 0; margin: .4rem 0 .2rem; padding: 0; font-size: 1.05rem; color: var(--warn); }
@@ -39,12 +39,13 @@ internal sealed partial class ReportPage
         thead th { border-bottom: 1px solid var(--ink); font-weight: 600; line-height: 1.2; }
         tbody th, .word { text-align: left !important; } thead th:first-child { text-align: left; }
         tr:target { background: #ffe9c7; }
-        td code, td { overflow-wrap: anywhere; }
+        td { white-space: nowrap; } td code { white-space: normal; overflow-wrap: anywhere; }
         pre { white-space: pre-wrap; overflow-wrap: anywhere; background: var(--tint); padding: .8rem 1rem; font-size: .8rem; }
         .facts { display: grid; grid-template-columns: max-content 1fr; gap: .15rem 1.2rem; } .facts dd { margin: 0; overflow-wrap: anywhere; }
         @media print {
           @page { margin: 16mm; }
           body { max-width: none; padding: 0; background: #fff; font-size: 10pt; } nav, .skip { display: none; }
+          .numbers dl { grid-template-columns: repeat(5, 1fr); } .value { font-size: 1rem; } .limits, .note { font-size: .7rem; } table { font-size: .68rem; } th, td { padding-right: .45rem; }
           figure, tr, .numbers, .doubts, .strip { break-inside: avoid; } h2 { break-after: avoid; }
           .scroll { overflow: visible; } .strip svg { min-width: 0; } a { color: inherit; }
         }
