@@ -17,19 +17,20 @@ internal static class FrameWords
     {
         RunId = facts.RunId,
         Frame = "x east, y north, z up, map coordinates in metres",
-        North = facts.NorthText.Length > 0 ? facts.NorthText : North(findings.Intake.Frame),
+        North = NorthSentence(findings.Intake.Frame, facts),
         Crs = Crs(findings.Intake.Frame.Crs),
         Licence = facts.Licence,
         Citation = facts.Citation,
     };
 
-    /// <summary>The north of every azimuth.</summary>
-    public static string North(SurveyFrame frame) => frame.North switch
-    {
-        Records.Frame.North.True => Invariant($"true north (grid azimuth plus a meridian convergence of {frame.ConvergenceDeg ?? 0:F2} deg)"),
-        Records.Frame.North.Grid => "grid north (the y axis of the map grid)",
-        _ => "the y axis of the model, which nothing ties to the ground",
-    };
+    /// <summary>The north of every azimuth in a sentence: the run's own words, else what the frame says.</summary>
+    public static string NorthSentence(SurveyFrame frame, RunFacts facts) =>
+        facts.NorthText.Length > 0 ? facts.NorthText.TrimEnd('.') + "." : frame.North switch
+        {
+            North.True => Invariant($"Azimuths are from true north: grid azimuth plus a meridian convergence of {frame.ConvergenceDeg ?? 0:F2} deg."),
+            North.Grid => "Azimuths are from grid north, the y axis of the map grid.",
+            _ => "Azimuths are from the y axis of the model, which nothing ties to the ground.",
+        };
 
     /// <summary>Name and code of the coordinate system.</summary>
     public static string Crs(CrsInfo crs)
@@ -45,7 +46,7 @@ internal static class FrameWords
     {
         double? trend = findings.Width.Dikes.FirstOrDefault(d => d.Dike == dike)?.TrendDeg;
         if (trend is not { } t || !double.IsFinite(t)) return "along the centre line";
-        return findings.Intake.Frame.North == Records.Frame.North.Model
+        return findings.Intake.Frame.North == North.Model
             ? Invariant($"toward {t:000}° of the model") : Invariant($"toward {t:000}° ({Compass(t)})");
     }
 

@@ -16,12 +16,11 @@ internal sealed partial class ReportPage
     {
         IntakeRecord intake = findings.Intake;
         WorkingCloud cloud = findings.Described.Cloud;
-        string north = facts.NorthText.Length > 0 ? facts.NorthText : FrameWords.North(intake.Frame);
         return El("p", At("class", "lead"), Clean(
             $"Measured on {Say.Count(intake.Points, "point", "points")} of {Say.Count(intake.Tiles.Length, "file", "files")}, "
             + Invariant($"thinned to {Say.Count(cloud.Count)} points {cloud.SpacingM:0.###} m apart. ")
             + (intake.HasColour ? "" : "The cloud has no colour: texture alone had to tell dike from host. ")
-            + $"Coordinate system: {FrameWords.Crs(intake.Frame.Crs)}. Azimuths refer to {north.TrimEnd('.')}."));
+            + $"Coordinate system: {FrameWords.Crs(intake.Frame.Crs)}. {FrameWords.NorthSentence(intake.Frame, facts)}"));
     }
 
     // Five numbers, the same five places on every report; what there is not is said in its place.

@@ -143,7 +143,7 @@ internal static class Samples
         Recipe = "thin:\n  spacing_m: 0.05   # <b>bold</b>\n",
         Inputs = [new InputFile("clouds/ravine.las", 123456, new string('a', 64))],
         Seed = 7,
-        NorthText = "true north; meridian convergence of 0.42 deg added to grid azimuths",
+        NorthText = "Azimuths are from true north: grid azimuth plus a meridian convergence of 0.42 deg.",
         Versions = [new HeaderFact("CloudStruct", "0.1.0"), new HeaderFact(".NET", "10.0.0")],
     };
 

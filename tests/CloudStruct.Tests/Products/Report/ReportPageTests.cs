@@ -82,6 +82,7 @@ public partial class ReportPageTests
         string text = Plain(Page(Samples.Nothing(), new()).Html);
         Assert.Contains("none thicker than 0.25 m would have been missed", text, StringComparison.Ordinal);
         Assert.Contains("The cloud has no colour", text, StringComparison.Ordinal);
+        Assert.Contains("Azimuths are from true north", text, StringComparison.Ordinal);
         Assert.Contains("Coordinate system: none stated", text, StringComparison.Ordinal);
     }
 
