@@ -74,14 +74,15 @@ internal static class NetFigure
             float px = x + (float)(pole.At.X * radius), py = y - (float)(pole.At.Y * radius);
             pen.Mark(Style(net, pole.Group), px, py, Size(pole.AreaM2) * shrink);
         }
-        // White beneath, so that curves stay readable where marks are dense.
+        // White beneath, so that curves stay readable where marks are dense; cones of single poles are many and stay thin.
+        HashSet<string> planes = [.. net.Curves.Where(c => c.Kind == "great_circle").Select(c => c.Group)];
         foreach (NetCurve curve in net.Curves.Where(c => c.Kind != "contour"))
         {
             GroupStyle style = Style(net, curve.Group);
-            bool cone = curve.Kind == "cone";
+            bool cone = curve.Kind == "cone", ofMean = planes.Contains(curve.Group);
             SKPoint[] points = Place(curve.Points, x, y, radius);
-            pen.Line(points, SKColors.White, cone ? 2.4f : 2f);
-            pen.Line(points, cone ? Palette.Ink : style.Colour, cone ? 0.9f : 1.1f, cone ? null : style.Dashes);
+            if (ofMean) pen.Line(points, SKColors.White, cone ? 2.4f : 2f);
+            pen.Line(points, cone && ofMean ? Palette.Ink : style.Colour, cone ? (ofMean ? 0.9f : 0.5f) : 1.1f, cone ? null : style.Dashes);
         }
     }
 
@@ -124,7 +125,7 @@ internal static class NetFigure
         // Marks without an area are poles or directions of contacts: the key names them.
         if (net.Poles.Any(p => p.AreaM2 > 0)) parts.Add("marks: poles, wider for larger faces");
         if (net.Curves.Any(c => c.Kind == "great_circle")) parts.Add("coloured curves: mean planes");
-        if (net.Curves.Any(c => c.Kind == "cone")) parts.Add("black rings: 95 % cones");
+        if (net.Curves.Any(c => c.Kind == "cone")) parts.Add("rings about poles: 95 % cones");
         if (net.Curves.Any(c => c.Kind == "contour")) parts.Add("grey: contours, darker for denser");
         if (parts.Count == 0) return "";
         string text = string.Join("; ", parts) + ".";

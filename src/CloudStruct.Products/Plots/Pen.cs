@@ -58,7 +58,7 @@ internal sealed partial class Pen(SKCanvas canvas, bool outlines)
 
     /// <summary>A picture.</summary>
     public void Picture(SKImage image, SKRect at) =>
-        canvas.DrawImage(image, at, new SKSamplingOptions(SKFilterMode.Linear, SKMipmapMode.None), null);
+        canvas.DrawImage(image, at, new SKSamplingOptions(SKFilterMode.Linear, SKMipmapMode.Linear), null);
 
     private static SKPaint Stroke(SKColor colour, float width) => new()
     {

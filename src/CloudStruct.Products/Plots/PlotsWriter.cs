@@ -8,6 +8,9 @@ namespace CloudStruct.Products.Plots;
 /// <summary>Writes every plot as SVG, PDF and PNG, and every view as PNG.</summary>
 internal static class PlotsWriter
 {
+    /// <summary>Pixels per point of the views inside the report: as wide as the page on a screen, a quarter of the bytes.</summary>
+    private const float ScreenPerPoint = 2;
+
     /// <summary>Lays out nets and width profiles, in the order of the drawings.</summary>
     public static IEnumerable<Figure> Figures(Findings findings, DrawingsRecord drawings, RunFacts facts)
     {
@@ -36,9 +39,9 @@ internal static class PlotsWriter
         foreach (ViewImage view in drawings.Views)
         {
             context.Stop.ThrowIfCancellationRequested();
-            byte[] png = FigureFiles.Png(View(findings, view, facts), facts.RunId, ViewFigure.PerPoint(view));
-            files.Write($"plots/{view.Name}.png", png);
-            drawn.Add(new(view.Name, view.Title, view.Sentence, [], png));
+            Figure figure = View(findings, view, facts);
+            files.Write($"plots/{view.Name}.png", FigureFiles.Png(figure, facts.RunId, ViewFigure.PerPoint(view)));
+            drawn.Add(new(view.Name, view.Title, view.Sentence, [], FigureFiles.Png(figure, facts.RunId, ScreenPerPoint)));
         }
         return drawn;
     }

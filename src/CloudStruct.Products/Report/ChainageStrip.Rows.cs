@@ -123,7 +123,7 @@ internal sealed partial class ChainageStrip
     {
         foreach (Contact c in contacts)
         {
-            double y = LaneTop + 8 + ((c.Margin == Margin.A ? 2 : 3) * LaneStep), x = X(along, c.ChainageFromM) + 0.75, width = X(along, c.ChainageToM) - x - 0.75;
+            double y = EvidenceY(c.Margin, c.Segment - 1), x = X(along, c.ChainageFromM) + 0.75, width = X(along, c.ChainageToM) - x - 0.75;
             bool plane = c.Constraint == Constraint.Plane, a = c.Margin == Margin.A;
             string evidence = c.Evidence switch { Evidence.Surface => "surface", Evidence.Trace => "trace", Evidence.BothMargins => "both", _ => "prior" };
             string fixes = plane ? c.Region is { } r && double.IsFinite(r.Cone95Deg) ? Invariant($"plane, 95 % cone {r.Cone95Deg:F1} deg") : "plane" : "a direction only";
@@ -141,10 +141,13 @@ internal sealed partial class ChainageStrip
             yield return link;
         }
         foreach (Margin m in new[] { Margin.A, Margin.B })
-            yield return Text(Left - 8, LaneTop + 19 + ((m == Margin.A ? 2 : 3) * LaneStep), "end", m + " evidence");
+            yield return Text(Left - 8, EvidenceY(m, 0) + 11, "end", m + " evidence");
     }
 
-    private static IEnumerable<XElement> Axis(NiceScale along)
+    private double EvidenceY(Margin margin, int place) =>
+        EvidenceTop + ((margin == Margin.A ? place % linesA : linesA + (place % linesB)) * LaneStep);
+
+    private IEnumerable<XElement> Axis(NiceScale along)
     {
         yield return Line(Left, AxisTop - 8, Right, AxisTop - 8, "#1a1a1a", 1.2);
         foreach (double tick in along.Ticks())

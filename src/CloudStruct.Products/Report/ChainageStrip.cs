@@ -16,12 +16,17 @@ internal sealed partial class ChainageStrip(int dike, Station[] stations, Contac
 {
     // User units; the page scales the whole to its width.
     private const double Width = 1080, Left = 132, Right = 1068, WidthTop = 16, WidthHeight = 150, LeanTop = 190, LeanHeight = 84,
-        LaneTop = 292, LaneHeight = 13, LaneStep = 19, AxisTop = 392, Height = 432;
+        LaneTop = 292, LaneHeight = 13, LaneStep = 19, EvidenceTop = LaneTop + (2 * LaneStep) + 8;
 
     private static readonly XNamespace Svg0 = "http://www.w3.org/2000/svg";
 
     private readonly List<Stretch> stretches = Stretch.Of([.. stations.Select(s => new WidthPoint(
         s.ChainageM, s.TrueWidthM, s.TrueWidthLow95M, s.TrueWidthHigh95M, s.Status == StationStatus.Unconstrained ? s.ApparentWidthM : null, s.VisibleWidthM, s.Status))]);
+
+    // Windows may overlap: then neighbours take turns on two lines, or their bars would hide each other.
+    private readonly int linesA = LinesFor(contacts, Margin.A), linesB = LinesFor(contacts, Margin.B);
+
+    private double AxisTop => EvidenceTop + ((linesA + linesB) * LaneStep) + 10;
 
     /// <summary>True when there is nothing to draw.</summary>
     public bool IsEmpty => stations.Length == 0 && contacts.Length == 0;
@@ -30,10 +35,16 @@ internal sealed partial class ChainageStrip(int dike, Station[] stations, Contac
     public XElement Svg()
     {
         NiceScale along = Along(), across = Across(), lean = Lean();
-        var svg = new XElement(Svg0 + "svg", A("viewBox", Invariant($"0 0 {Width} {Height}")), A("role", "group"), A("font-size", "13"),
+        var svg = new XElement(Svg0 + "svg", A("viewBox", Invariant($"0 0 {Width} {AxisTop + 40}")), A("role", "group"), A("font-size", "13"),
             new XElement(Svg0 + "title", Invariant($"Width, lean, visibility and evidence along dike {dike}")), Hatching());
         svg.Add(HiddenBoxes(along), WidthRow(along, across), LeanRow(along, lean), Lanes(along), EvidenceLanes(along), Axis(along));
         return svg;
+    }
+
+    private static int LinesFor(Contact[] all, Margin margin)
+    {
+        Contact[] own = [.. all.Where(c => c.Margin == margin).OrderBy(c => c.ChainageFromM)];
+        return own.Zip(own.Skip(1)).Any(p => p.Second.ChainageFromM < p.First.ChainageToM - 1e-6) ? 2 : 1;
     }
 
     private NiceScale Along()

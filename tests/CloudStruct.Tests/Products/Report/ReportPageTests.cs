@@ -112,6 +112,22 @@ public partial class ReportPageTests
     }
 
     [Fact]
+    public void Bars_of_overlapping_windows_do_not_hide_each_other()
+    {
+        Findings f = Samples.Dike();
+        f = f with { Contacts = f.Contacts with { Contacts = [.. Enumerable.Range(0, 5).Select(i => f.Contacts.Contacts[0] with { Segment = i + 1, ChainageFromM = 2 * i, ChainageToM = (2 * i) + 3.5 })] } };
+        XNamespace svg = "http://www.w3.org/2000/svg";
+        double Of(XElement bar, string name) => double.Parse(bar.Attribute(name)!.Value, CultureInfo.InvariantCulture);
+        XElement[] bars = [.. Page(f, new()).Html.Descendants(svg + "a").Select(a => a.Element(svg + "rect")!)];
+        Assert.Equal(5, bars.Length);
+        foreach (XElement a in bars)
+        {
+            foreach (XElement b in bars.Where(b => b != a && Of(b, "y") == Of(a, "y")))
+                Assert.True(Of(a, "x") + Of(a, "width") <= Of(b, "x") || Of(b, "x") + Of(b, "width") <= Of(a, "x"));
+        }
+    }
+
+    [Fact]
     public void A_dike_of_which_only_a_direction_is_known_has_no_strike_and_dip()
     {
         Findings f = Samples.Dike();
