@@ -12,6 +12,12 @@ public sealed record DemoSurvey
     /// <summary>How much higher the second tile lies than the first, as two flights differ [m].</summary>
     public const double TileOffsetM = 0.025;
 
+    /// <summary>First line of its survey.yaml: by it an earlier demonstration survey is known.</summary>
+    public const string Mark = "# An invented survey: CloudStruct made this outcrop, nobody has stood on it.";
+
+    /// <summary>Invented day of the flight, yyyy-MM-dd.</summary>
+    public const string FlightDate = "2026-05-14";
+
     /// <summary>Extent of the overlap up the slope [m].</summary>
     private const double OverlapM = 3;
 
@@ -63,7 +69,7 @@ public sealed record DemoSurvey
     }
 
     private static string Yaml(SimulatedOutcrop outcrop) => $"""
-        # An invented survey: CloudStruct made this outcrop, nobody has stood on it.
+        {Mark}
         name: {outcrop.Name}
         crs: EPSG:{outcrop.Crs.Epsg.ToString(CultureInfo.InvariantCulture)}
         reference:
@@ -71,7 +77,7 @@ public sealed record DemoSurvey
           tilt_sigma_deg: 0.15
           azimuth_sigma_deg: 0.10
           scale_sigma: 0.0005
-        flight_date: 2026-05-14
+        flight_date: {FlightDate}
         operator: the simulator
         licence: CC0-1.0
         citation: Simulated outcrop of CloudStruct, plan {outcrop.Plan.Name}, seed {outcrop.Seed.ToString(CultureInfo.InvariantCulture)}

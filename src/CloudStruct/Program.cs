@@ -1,1 +1,3 @@
-return 0;
+using CloudStruct.Commands;
+
+return new CommandLine(Console.Out, Console.Error).Run(args);

@@ -1,0 +1,14 @@
+namespace CloudStruct.Recipes;
+
+/// <summary>Which classified cloud is written.</summary>
+internal enum CloudsWanted
+{
+    /// <summary>Every input point.</summary>
+    Las,
+
+    /// <summary>The working points only.</summary>
+    Thinned,
+
+    /// <summary>None.</summary>
+    None,
+}

@@ -1,0 +1,14 @@
+namespace CloudStruct.Runs.Board;
+
+/// <summary>Shows how a run goes on; never affects it.</summary>
+internal interface IBoard
+{
+    /// <summary>A stage starts; the returned action takes the share done, 0 to 1, from any thread.</summary>
+    Action<double> Begin(string stage);
+
+    /// <summary>The stage ended.</summary>
+    /// <param name="stage">Its name.</param>
+    /// <param name="seconds">Wall time.</param>
+    /// <param name="note">"from the store", points per second, or nothing.</param>
+    void End(string stage, double seconds, string note);
+}

@@ -1,0 +1,14 @@
+using static System.FormattableString;
+
+namespace CloudStruct.Runs.Board;
+
+/// <summary>A line per stage, for logs and pipes.</summary>
+internal sealed class PlainBoard(TextWriter to) : IBoard
+{
+    /// <inheritdoc/>
+    public Action<double> Begin(string stage) => _ => { };
+
+    /// <inheritdoc/>
+    public void End(string stage, double seconds, string note) =>
+        to.WriteLine(Invariant($"{stage,-9} {seconds,7:0.0} s{(note.Length > 0 ? "  " + note : "")}"));
+}
