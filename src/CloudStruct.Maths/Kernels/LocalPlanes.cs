@@ -9,6 +9,9 @@ namespace CloudStruct.Maths.Kernels;
 /// <remarks>Weights (1 - d²/r²)², see <see cref="LocalMoments.About"/>.</remarks>
 public sealed class LocalPlanes
 {
+    // A refit needs as much say as three points half way to the rim have (0.56 each), or it keeps the plane it had.
+    private const float LeastWeight = 1.7f;
+
     private LocalPlanes(int count)
     {
         NormalX = new float[count];
@@ -72,10 +75,11 @@ public sealed class LocalPlanes
             (i, x, y, z) =>
             {
                 int s = source[i];
-                planes.Set(
-                    i,
-                    LocalMoments.AboutPlane(
-                        x, y, z, cloud.X[i], cloud.Y[i], cloud.Z[i], (float)radiusM, NormalX[s], NormalY[s], NormalZ[s], Passing(cloud, s, i), (float)cutM));
+                float passing = Passing(cloud, s, i);
+                LocalMoments sums = LocalMoments.AboutPlane(
+                    x, y, z, cloud.X[i], cloud.Y[i], cloud.Z[i], (float)radiusM, NormalX[s], NormalY[s], NormalZ[s], passing, (float)cutM);
+                if (sums.W >= LeastWeight) planes.Set(i, sums);
+                else planes.Keep(i, this, s, passing);
             });
         return planes;
     }
@@ -173,9 +177,14 @@ public sealed class LocalPlanes
 
     private delegate void PointBody(int i, ReadOnlySpan<float> x, ReadOnlySpan<float> y, ReadOnlySpan<float> z);
 
+    private void Keep(int i, LocalPlanes from, int s, float offset)
+    {
+        (NormalX[i], NormalY[i], NormalZ[i]) = (from.NormalX[s], from.NormalY[s], from.NormalZ[s]);
+        (Offset[i], Scatter[i], Planarity[i]) = (offset, from.Scatter[s], from.Planarity[s]);
+    }
+
     private void Set(int i, in LocalMoments sums)
     {
-        // The point itself has weight 1; three points at half the radius would add 1.7.
         (double l1, double l2, double l3) = SmallestAxis.Of(sums.Covariance, out Vec3 n);
         NormalX[i] = (float)n.X;
         NormalY[i] = (float)n.Y;

@@ -11,7 +11,7 @@ public sealed record DescribeSettings : IStageSettings
     public double? NormalRadiusM { get; init; }
 
     /// <summary>Radius for the roughness, the rms of the neighbours about their own plane [m]. To compare surveys give
-    /// the same value to each. Default: the first of 0.15, 0.2, 0.3, 0.5, 0.75, 1, 1.5, ... that is eight spacings or more.</summary>
+    /// the same value to each. Default: the first of 0.15, 0.2, 0.3, 0.5, 0.75, 1, 1.5, ... that is eight spacings or more; less for small models.</summary>
     public double? RoughnessRadiusM { get; init; }
 
     /// <inheritdoc/>

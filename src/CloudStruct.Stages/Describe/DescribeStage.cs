@@ -28,7 +28,12 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
     // Small patches follow the noise: the smoothest tenth scatters by this much less than the noise. From simulated rock.
     private const double NoiseOfSmoothestTenth = 1.45;
 
-    private static readonly double[] RoughnessLadderM = [0.15, 0.2, 0.3, 0.5, 0.75, 1, 1.5, 2, 3, 5, 7.5, 10, 15, 20, 30, 50];
+    // A cloud without noise (a mesh, a drawing) would leave no room for rounding and gentle curves.
+    private const double LeastNoiseSpacings = 0.02;
+
+    private const double RoughnessSpacings = 8;
+    private const double LeastRoughnessRadiusM = 0.15;
+    private static readonly double[] LadderDigits = [1, 1.5, 2, 3, 5, 7.5];
 
     /// <inheritdoc/>
     public string Name => "describe";
@@ -39,12 +44,11 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
         double spacing = input.SpacingM;
         double normalRadius = settings.NormalRadiusM
             ?? Math.Max(NormalSpacings * spacing, Math.Min(NoisePatchM, NoisePatchMostSpacings * spacing));
-        double roughnessRadius = settings.RoughnessRadiusM
-            ?? RoughnessLadderM.FirstOrDefault(r => r >= 8 * spacing, 8 * spacing);
+        double roughnessRadius = settings.RoughnessRadiusM ?? RoughnessRadius(input);
         double[] radii = [FindShare * normalRadius, 2 * normalRadius, 4 * normalRadius];
 
         var found = LocalPlanes.Fit(input, FindShare * normalRadius, context.Threads, context.Stop);
-        double noise = Math.Max(1e-4 * spacing, NoiseOfSmoothestTenth * Quantile(found.Scatter, 0.1));
+        double noise = Math.Max(LeastNoiseSpacings * spacing, NoiseOfSmoothestTenth * Quantile(found.Scatter, 0.1));
         context.Progress(0.3);
         int[] best = found.Best(input, CloseNoises * noise, EdgeRounds, context.Threads, context.Stop);
         LocalPlanes planes = found.Refit(input, best, normalRadius, CutNoises * noise, context.Threads, context.Stop);
@@ -96,6 +100,22 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
             context);
         context.Progress(1);
         return described;
+    }
+
+    /// <summary>Eight spacings and 0.15 m at least, rounded up to 1, 1.5, 2, 3, 5, 7.5 so that surveys of like density get
+    /// the same; for a model smaller than three metres no more than a twentieth of its size is asked for.</summary>
+    private static double RoughnessRadius(WorkingCloud cloud)
+    {
+        SortedGrid g = cloud.Grid;
+        double size = g.CellM * Math.Sqrt(((double)g.NX * g.NX) + ((double)g.NY * g.NY) + ((double)g.NZ * g.NZ));
+        double least = Math.Max(RoughnessSpacings * cloud.SpacingM, Math.Min(LeastRoughnessRadiusM, size / 20));
+        double decade = Math.Pow(10, Math.Floor(Math.Log10(least)));
+        foreach (double digit in LadderDigits)
+        {
+            if (digit * decade >= least * (1 - 1e-9)) return digit * decade;
+        }
+
+        return 10 * decade;
     }
 
     /// <summary>+1 or -1. Up, unless the surface is so steep that up says little: then toward the side where the ground

@@ -17,6 +17,9 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
     private const float CellSpacings = 3;
     private const double LeastSpacingM = 0.01;
 
+    // Surveys of rock hold up to some hundredths of stray points; beyond, density varies so much that sparse is not stray.
+    private const double MostStray = 0.1;
+
     /// <inheritdoc/>
     public string Name => "thin";
 
@@ -137,8 +140,16 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         bool[] stray = StrayPoints.Mark(cloud.Grid, reach, cloud.Neighbours, cloud.SpacingM, clusterPoints, context);
         int working = stray.Count(s => s);
 
-        // A handful of points, or points all over the place: nothing tells surface from stray.
-        if (working == 0 || working > cloud.Count / 2) return cloud;
+        if (working == 0) return cloud;
+        if (working > MostStray * cloud.Count)
+        {
+            context.Say(new Remark(
+                "thin",
+                Invariant($"{100.0 * working / cloud.Count:0.#} % of the points have hardly a neighbour. With so many this is an uneven cloud, not stray points, so nothing was dropped; faces are only found where points lie densely."),
+                true));
+            return cloud;
+        }
+
         long input = 0;
         for (int i = 0; i < stray.Length; i++)
         {

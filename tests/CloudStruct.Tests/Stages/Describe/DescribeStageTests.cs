@@ -87,6 +87,21 @@ public class DescribeStageTests
     }
 
     [Fact]
+    public void A_small_smooth_ball_without_noise_gets_its_normals_and_radii_of_its_own_size()
+    {
+        // A hand specimen of 6 cm: points on a sphere, radial normals known.
+        Vec3[] places = [.. Clouds.Patch(new Vec3(), new Vec3(0, 0, 1), 2, 2, 40_000, 3, 1).Select(p => p.Unit() * 0.03)];
+        WorkingCloud cloud = Clouds.Thin(places);
+        DescribedCloud d = Clouds.Describe(cloud);
+        Assert.Equal(40_000, cloud.Support.Sum() + cloud.StrayPoints);
+        Assert.True(cloud.SpacingM < 0.001 && d.RoughnessRadiusM < 0.02);
+        double[] off = [.. Enumerable.Range(0, cloud.Count).Select(i => d.Normal(i).Cross((cloud.Place(i) + cloud.Frame.Origin).Unit()).Length).Order()];
+        Assert.True(off[off.Length / 2] < 0.05, $"median sine {off[off.Length / 2]}");
+        Assert.True(off[^(off.Length / 50)] < 0.25, $"98 % sine {off[^(off.Length / 50)]}");
+        Assert.InRange(d.AreaM2.Sum() / (4 * Math.PI * 0.03 * 0.03), 0.95, 1.05);
+    }
+
+    [Fact]
     public void Threads_change_no_byte()
     {
         Vec3[] places = [.. Clouds.Patch(new Vec3(), new Vec3(0.2, 0, 1), 8, 8, 40_000, 3, 0.005), .. Clouds.Patch(new Vec3(4, 0, -2), new Vec3(1, 0.1, 0), 8, 4, 20_000, 4, 0.005), new Vec3(0, 0, 3)];

@@ -102,6 +102,16 @@ public class ThinStageTests
     }
 
     [Fact]
+    public void A_cloud_of_scattered_points_is_uneven_not_stray_and_it_is_said()
+    {
+        Vec3[] places = [.. Clouds.Patch(new Vec3(), new Vec3(0, 0, 1), 4, 4, 4000, 4), .. Clouds.Patch(new Vec3(40, 0, 0), new Vec3(0, 0, 1), 60, 60, 1000, 5)];
+        var remarks = new List<Remark>();
+        WorkingCloud cloud = new ThinStage().Run(Clouds.Intake(Clouds.Survey(new MemorySource(places))), new ThinSettings(), StageContext.Plain(say: remarks.Add));
+        Assert.Equal(0, cloud.StrayPoints);
+        Assert.Contains(remarks, r => r.Doubtful && r.Text.Contains("uneven", StringComparison.Ordinal));
+    }
+
+    [Fact]
     public void Automatic_spacing_follows_the_input_and_the_limit()
     {
         Vec3[] places = Clouds.Patch(new Vec3(), new Vec3(0.2, 0.2, 1), 20, 20, 100_000, 4);
