@@ -112,7 +112,7 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
         double decade = Math.Pow(10, Math.Floor(Math.Log10(least)));
         foreach (double digit in LadderDigits)
         {
-            if (digit * decade >= least * (1 - 1e-9)) return digit * decade;
+            if (digit * decade >= least * (1 - 1e-9)) return Math.Round(digit * decade, 9);   // 0.3, not 3 times 0.1
         }
 
         return 10 * decade;

@@ -51,7 +51,7 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         double forMemory = Math.Sqrt(1.4 * area / settings.MaxPoints);
         double wanted = Math.Max(Math.Max(input, least), forMemory);
         double digit = Math.Pow(10, Math.Floor(Math.Log10(wanted)) - 1);
-        return Math.Ceiling((wanted / digit) - 1e-9) * digit;
+        return Math.Round(Math.Ceiling((wanted / digit) - 1e-9) * digit, 9);
     }
 
     private static double Reach(IntakeRecord record)
