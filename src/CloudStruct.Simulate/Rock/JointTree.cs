@@ -7,6 +7,9 @@ namespace CloudStruct.Simulate.Rock;
 /// and ends at the planes above it in the tree, as joints abut on older joints. A block is there or broken away.</remarks>
 internal sealed class JointTree
 {
+    /// <summary>Cuts halve pieces more or less: a million blocks lie about 30 deep. Deeper trees fail loudly.</summary>
+    private const int MostDepth = 96;
+
     private readonly Node[] nodes;
     private readonly Block[] blocks;
     private readonly State[] states;
@@ -37,6 +40,9 @@ internal sealed class JointTree
     /// <summary>Blocks.</summary>
     public int BlockCount => blocks.Length;
 
+    /// <summary>Node 0, or the only block of a rock without joints.</summary>
+    private int Root => nodes.Length == 0 ? ~0 : 0;
+
     /// <summary>Plane of a node: unit normal and offset (normal · place = offset).</summary>
     public (Vec3 Normal, double Offset) Plane(int node) => (new(nodes[node].X, nodes[node].Y, nodes[node].Z), nodes[node].Offset);
 
@@ -49,8 +55,7 @@ internal sealed class JointTree
     /// <summary>The block that holds a place.</summary>
     public int Find(Vec3 p)
     {
-        if (nodes.Length == 0) return 0;
-        int node = 0;
+        int node = Root;
         while (node >= 0)
         {
             ref readonly Node n = ref nodes[node];
@@ -66,7 +71,7 @@ internal sealed class JointTree
     /// <summary>Planes that bound the block at a place, nearest to the leaf last: nodes into a caller's buffer.</summary>
     public int Path(Vec3 p, Span<int> path)
     {
-        int count = 0, node = 0;
+        int count = 0, node = Root;
         while (node >= 0 && count < path.Length)
         {
             path[count++] = node;
@@ -86,9 +91,9 @@ internal sealed class JointTree
     /// <param name="node">[out] Plane through which the block was entered; -1 when the ray started in it.</param>
     public bool Cast(Vec3 from, Vec3 toward, double start, double end, out double t, out int node)
     {
-        Span<Pending> stack = stackalloc Pending[64];
+        Span<Pending> stack = stackalloc Pending[MostDepth];
         int depth = 0;
-        int at = 0, entry = -1;
+        int at = Root, entry = -1;
         double a = start, b = end;
         while (true)
         {
@@ -108,7 +113,7 @@ internal sealed class JointTree
                 double cross = -side / speed;   // infinite or NaN for a ray along the plane: then no crossing
                 if (cross > a && cross < b)
                 {
-                    if (depth < stack.Length) stack[depth++] = new(above ? n.Below : n.Above, at, cross, b);
+                    stack[depth++] = new(above ? n.Below : n.Above, at, cross, b);
                     b = cross;
                 }
 
@@ -126,7 +131,7 @@ internal sealed class JointTree
         }
     }
 
-    private State StateOf(int child) => child >= 0 ? states.Length == 0 ? State.Empty : states[child] : blocks[~child].Present ? State.Full : State.Empty;
+    private State StateOf(int child) => child >= 0 ? states[child] : blocks[~child].Present ? State.Full : State.Empty;
 
     /// <summary>A plane of the tree.</summary>
     internal readonly record struct Node(double X, double Y, double Z, double Offset, int Below, int Above, int Set);

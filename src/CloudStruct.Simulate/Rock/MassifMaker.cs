@@ -121,20 +121,42 @@ internal static class MassifMaker
         var places = new List<Vec3>();
         double half = dike.HalfReachM, reach = (terrain.TopM - LowestM) / dike.Up.Z;
         (double lowW, double highW) = dike.AcrossM;
-        for (int i = (int)(DikePlacesPerM3 * 2 * half * 2 * reach * (highW - lowW)); i > 0; i--)
+        for (int i = (int)(DikePlacesPerM3 * SparseShare * 2 * half * 2 * reach * (highW - lowW)); i > 0; i--)
         {
-            double s = dice.Between(-half, half), v = dice.Between(-reach, reach), w = dice.Between(lowW, highW), lot = dice.Unit();
-            Vec3 p = dike.Place(s, v, w);
-            (double a, double b) = terrain.Site(p);
-            if (p.Z < LowestM || p.Z > terrain.TopM || a < -RimM || b < -RimM || a > terrain.LengthM + RimM || b > terrain.BreadthM + RimM) continue;
+            AddIfInDike(terrain, dike, dike.Place(dice.Between(-half, half), dice.Between(-reach, reach), dice.Between(lowW, highW)), places);
+        }
+
+        const double columnM2 = 0.04;
+        for (int i = (int)(2 * half * (highW - lowW) / columnM2); i > 0; i--)
+        {
+            // Along the dip to the ground, then strewn about it.
+            double s = dice.Between(-half, half), w = dice.Between(lowW, highW), v = 0;
+            for (int round = 0; round < 4; round++) v += Gap(terrain, dike.Place(s, v, w)) / dike.Up.Z;
+            Vec3 ground = dike.Place(s, v, w);
+            (double a, double b) = terrain.Site(ground);
             (double low, double high) = Band(terrain, a, b);
-            if ((p.Z > low && p.Z < high) || lot < SparseShare)
+            for (double left = (high - low) / dike.Up.Z * DikePlacesPerM3 * columnM2; left > dice.Unit(); left--)
             {
-                if (dike.Contains(p)) places.Add(p);
+                double up = (dice.Between(low, high) - ground.Z) / dike.Up.Z;
+                Vec3 p = dike.Place(s + dice.Between(-0.12, 0.12), v + up, w + dice.Between(-0.12, 0.12));
+                AddIfInDike(terrain, dike, p, places);
             }
         }
 
         return [.. places];
+    }
+
+    private static double Gap(Terrain terrain, Vec3 p)
+    {
+        (double a, double b) = terrain.Site(p);
+        return terrain.Height(a, b) - p.Z;
+    }
+
+    private static void AddIfInDike(Terrain terrain, DikeSheet dike, Vec3 p, List<Vec3> places)
+    {
+        (double a, double b) = terrain.Site(p);
+        if (p.Z < LowestM || p.Z > terrain.TopM || a < -RimM || b < -RimM || a > terrain.LengthM + RimM || b > terrain.BreadthM + RimM) return;
+        if (dike.Contains(p)) places.Add(p);
     }
 
     /// <summary>Heights between which blocks can show.</summary>

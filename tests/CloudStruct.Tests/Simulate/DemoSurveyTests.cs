@@ -7,7 +7,8 @@ namespace CloudStruct.Tests.Simulate;
 
 public class DemoSurveyTests
 {
-    private readonly DemoSurvey survey = DemoSurvey.Make(31, 20_000);
+    private static readonly DemoSurvey Made = DemoSurvey.Make(31, 20_000);
+    private readonly DemoSurvey survey = Made;
 
     [Fact]
     public void Tiles_hold_every_point_once_and_overlap()

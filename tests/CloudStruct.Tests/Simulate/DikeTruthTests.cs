@@ -4,9 +4,9 @@ using CloudStruct.Simulate;
 
 namespace CloudStruct.Tests.Simulate;
 
-public class DikeTruthTests(SimulatedFixture made) : IClassFixture<SimulatedFixture>
+public class DikeTruthTests
 {
-    private readonly SimulatedOutcrop demo = made.Demo;
+    private readonly SimulatedOutcrop demo = SimulatedOutcrops.Demo;
 
     [Fact]
     public void Class_of_each_rock_point_agrees_with_the_signed_distances()
@@ -50,9 +50,9 @@ public class DikeTruthTests(SimulatedFixture made) : IClassFixture<SimulatedFixt
             double stated = dike.SignedFromA(p);
             Vec3 foot = p - (dike.MarginNormalAt(0, p) * stated);
             double nearest = double.PositiveInfinity;
-            for (double s = -0.4; s <= 0.4; s += 0.02)
+            for (double s = -0.4; s <= 0.4; s += 0.05)
             {
-                for (double v = -0.4; v <= 0.4; v += 0.02)
+                for (double v = -0.4; v <= 0.4; v += 0.05)
                 {
                     Vec3 q = foot + (dike.Along * s) + (dike.Normal.Cross(dike.Along) * v);
                     // Onto the margin along the mean normal, by halving.
