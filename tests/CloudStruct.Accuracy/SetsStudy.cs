@@ -3,6 +3,7 @@ using CloudStruct.Accuracy.Scores;
 using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Directions;
 using CloudStruct.Records.Attitudes;
+using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
@@ -10,13 +11,17 @@ using CloudStruct.Records.Points;
 using CloudStruct.Records.Sets;
 using CloudStruct.Records.Stages;
 using CloudStruct.Simulate;
+using CloudStruct.Stages.Describe;
+using CloudStruct.Stages.Faces;
+using CloudStruct.Stages.Intake;
 using CloudStruct.Stages.Sets;
+using CloudStruct.Stages.Thin;
 using static System.FormattableString;
 
 namespace CloudStruct.Accuracy;
 
 /// <summary>Sets found on simulated outcrops whose true faces are handed over with errors of their attitudes and with false
-/// faces among them, and on drawn sets without any outcrop: found, missed, invented, error and coverage of the mean pole.</summary>
+/// faces among them, on the faces that the stages before find, and on drawn sets without any outcrop: found, missed, invented, error and coverage of the mean pole.</summary>
 public sealed class SetsStudy : IStudy
 {
     private const double Degree = Math.PI / 180;
@@ -27,29 +32,25 @@ public sealed class SetsStudy : IStudy
     /// <inheritdoc/>
     public void Run(StudyOptions options)
     {
-        string[] plans = options.Plans.Length > 0 ? options.Plans : ["demo", "no-dike", "two-dikes"];
+        string[] plans = options.Plans.Length > 0 ? options.Plans : ["demo", "no-dike", "two-dikes", "large", "drawn"];
         Console.WriteLine("Sets from true faces with errors and false faces");
         Console.WriteLine("plan seed faces | true found invented | error median max, inside cone");
-        SetScore sum = SetScore.None;
+        SetScore sum = SetScore.None, real = SetScore.None;
         foreach (string plan in plans)
         {
-            if (plan == "drawn") continue;
+            if (plan is "drawn" or "large") continue;
             foreach (ulong seed in options.Seeds)
             {
-                SimulatedOutcrop rock = Outcrop.Make(OutcropPlan.ByName(plan), seed, options.Points ?? 200_000);
-                (SetsInput input, double seconds, SetsRecord record) = Measure(rock, seed);
-                SetScore score = Score(rock, input, record);
-                sum += score;
-                Print(Invariant($"{plan} {seed} {input.Faces.Faces.Length}"), score, Invariant($"{seconds:0.00} s"));
-                foreach (OrientationSet s in record.Sets)
-                {
-                    Console.WriteLine(Invariant($"    {s.Set} {s.Mean.StrikeDeg:000}/{s.Mean.DipDeg:00} faces {s.Count} n {s.NEffective:0.0} kappa {s.Kappa:0} cone {s.Cone95Deg:0.00} spacing {s.SpacingM?.Value:0.00} ({s.SpacingM?.Low95:0.00}-{s.SpacingM?.High95:0.00})"));
-                }
+                SimulatedOutcrop rock = Outcrop.Make(FacesStudy.Sized(OutcropPlan.ByName(plan), options.Points ?? 300_000), seed);
+                sum += One(Invariant($"{plan} {seed} true"), rock, FromTruth(rock, seed), seed);
+                real += One(Invariant($"{plan} {seed} found"), rock, FromStages(rock, seed), seed);
             }
         }
 
-        Print("all outcrops", sum, "");
-        Drawn();
+        Print("all outcrops, true faces", sum, "");
+        Print("all outcrops, found faces", real, "");
+        if (plans.Contains("large")) Large();
+        if (plans.Contains("drawn")) Drawn();
     }
 
     /// <summary>Sets drawn from Fisher's law: how many planes, how tight; each plane shows in one to four faces.</summary>
@@ -73,6 +74,19 @@ public sealed class SetsStudy : IStudy
                 Print(Invariant($"{planes} {kappa}"), sum, "");
             }
         }
+    }
+
+    /// <summary>Twenty thousand faces: how long it takes.</summary>
+    private static void Large()
+    {
+        var all = new List<Face>();
+        for (ulong seed = 1; all.Count < 20_000; seed++) all.AddRange(DrawFaces(400, 120, 77).Faces.Select(f => f with { Middle = f.Middle + new Vec3(50 * seed, 0, 0) }));
+        var input = new SetsInput(new SurveyFrame(), new FaceSet { Faces = [.. all.Take(20_000)], NoiseM = 0.005 }, new ContactsRecord(), new DescribedCloud());
+        long start = Stopwatch.GetTimestamp();
+        TimeSpan busy = Process.GetCurrentProcess().TotalProcessorTime;
+        SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain());
+        TimeSpan used = Process.GetCurrentProcess().TotalProcessorTime - busy;
+        Console.WriteLine(Invariant($"20000 faces: {record.Sets.Length} sets, {Stopwatch.GetElapsedTime(start).TotalSeconds:0.0} s, {used.TotalSeconds:0.0} s of processor"));
     }
 
     private static (Vec3[] Poles, Face[] Faces) DrawFaces(int planes, double kappa, ulong seed)
@@ -128,7 +142,57 @@ public sealed class SetsStudy : IStudy
         };
     }
 
-    private static (SetsInput Input, double Seconds, SetsRecord Record) Measure(SimulatedOutcrop rock, ulong seed)
+    private static SetScore One(string what, SimulatedOutcrop rock, SetsInput input, ulong seed)
+    {
+        long start = Stopwatch.GetTimestamp();
+        SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain(seed, 2, r => Console.WriteLine("    " + r.Text)));
+        double seconds = Stopwatch.GetElapsedTime(start).TotalSeconds;
+        SetScore score = Score(rock, input, record);
+        Print(Invariant($"{what} {input.Faces.Faces.Length}"), score, Invariant($"{seconds:0.00} s"));
+        foreach (OrientationSet s in record.Sets)
+        {
+            Console.WriteLine(Invariant($"    {s.Set} {s.Mean.StrikeDeg:000}/{s.Mean.DipDeg:00} faces {s.Count} n {s.NEffective:0.0} kappa {s.Kappa:0} cone {s.Cone95Deg:0.00} spacing {s.SpacingM?.Value:0.00} ({s.SpacingM?.Low95:0.00}-{s.SpacingM?.High95:0.00})"));
+        }
+
+        return score;
+    }
+
+    /// <summary>What the stages before this one find; domain and place of a face by the truth of most of its points.</summary>
+    private static SetsInput FromStages(SimulatedOutcrop rock, ulong seed)
+    {
+        StageContext context = StageContext.Plain(seed);
+        IPieces pieces = new IntakeStage().Run(
+            new SurveyInput { Name = rock.Name, Sources = [rock.AsSource()], Crs = rock.Crs }, new IntakeSettings(), context);
+        WorkingCloud cloud = new ThinStage().Run(pieces, new ThinSettings(), context);
+        DescribedCloud described = new DescribeStage().Run(cloud, new DescribeSettings(), context);
+        FaceSet found = new FacesStage().Run(described, new FaceSettings(), context);
+        int[] nearest = TruthOfPoints.Nearest(cloud, rock);
+        int[,] votes = new int[found.Faces.Length, 4];
+        for (int i = 0; i < cloud.Count; i++)
+        {
+            if (found.FaceOfPoint[i] == 0 || nearest[i] < 0) continue;
+            int face = rock.TrueFace[nearest[i]];
+            int kind = (RockClass)rock.TrueClass[nearest[i]] switch
+            {
+                RockClass.Host or RockClass.Dike or RockClass.Inclusion when face > 0 && rock.Faces[face - 1].Kind == FaceKind.Contact => 2,
+                RockClass.Host => 0,
+                RockClass.Dike or RockClass.Inclusion => 1,
+                _ => 3,
+            };
+            votes[found.FaceOfPoint[i] - 1, kind]++;
+        }
+
+        FaceDomain[] kinds = [FaceDomain.Host, FaceDomain.Dike, FaceDomain.Margin, FaceDomain.Unknown];
+        int[] most = [.. Enumerable.Range(0, found.Faces.Length).Select(f => Enumerable.Range(0, 4).MaxBy(k => votes[f, k]))];
+        var contacts = new ContactsRecord
+        {
+            DomainOfFace = [.. most.Select(k => kinds[k])],
+            InPlaceOfFace = [.. most.Select(k => k == 3 ? InPlace.No : InPlace.Yes)],
+        };
+        return new SetsInput(cloud.Frame, found, contacts, described);
+    }
+
+    private static SetsInput FromTruth(SimulatedOutcrop rock, ulong seed)
     {
         SimulatedFace[] kept = [.. rock.Faces.Where(f => f.AreaM2 >= SmallestM2).OrderByDescending(f => f.AreaM2)];
         int[] number = new int[rock.Faces.Length + 1];
@@ -160,14 +224,11 @@ public sealed class SetsStudy : IStudy
             Z = [.. rock.Z.Select(z => (float)(z - rock.Origin.Z))],
             SpacingM = rock.SpacingM,
         };
-        var input = new SetsInput(
+        return new SetsInput(
             new SurveyFrame { Crs = rock.Crs, Origin = rock.Origin },
             new FaceSet { Faces = [.. faces], FaceOfPoint = [.. rock.TrueFace.Select(t => number[t])], NoiseM = rock.NoiseM, SmallestFaceM2 = SmallestM2 },
             new ContactsRecord { DomainOfFace = [.. domains], InPlaceOfFace = [.. places] },
             new DescribedCloud { Cloud = cloud });
-        long start = Stopwatch.GetTimestamp();
-        SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain(seed, 2, r => Console.WriteLine("    " + r.Text)));
-        return (input, Stopwatch.GetElapsedTime(start).TotalSeconds, record);
     }
 
     /// <summary>Scores host and dike; joints of several dikes are sought together, so their poles are pooled where they agree.</summary>

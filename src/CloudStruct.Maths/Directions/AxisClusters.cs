@@ -9,7 +9,8 @@ namespace CloudStruct.Maths.Directions;
 /// <param name="Count">Number of clusters.</param>
 /// <param name="BicGap">How much worse the best mixture with another number of components is; small means in doubt.</param>
 /// <param name="TooWide">Components left out because they are wider than a cluster may be.</param>
-public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int TooWide)
+/// <param name="Lost">Per cluster: share of its law that lies where axes are given to the background or to a neighbour.</param>
+public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int TooWide, double[] Lost)
 {
     // The search costs axes × clusters × rounds; three thousand axes fix the number of clusters as well as thirty thousand.
     private const int MostForSearch = 3000;
@@ -25,7 +26,7 @@ public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int
     {
         int[] none = new int[axes.Length];
         Array.Fill(none, -1);
-        if (axes.Length < rules.FewestAxes) return new AxisClusters(none, 0, double.PositiveInfinity, 0);
+        if (axes.Length < rules.FewestAxes) return new AxisClusters(none, 0, double.PositiveInfinity, 0, []);
 
         (Vec3[] searchAxes, double[] searchWeights) = Pick(axes, Scaled(weights), seed);
         AxisMixture best = AxisMixture.Uniform(searchWeights.Sum(), true);
@@ -75,7 +76,7 @@ public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int
         }
 
         int[] of = new int[axes.Length];
-        double[] share = new double[k + 1], joined = new double[k];
+        double[] share = new double[k + 1], joined = new double[k], whole = new double[k], kept = new double[k];
         for (int i = 0; i < axes.Length; i++)
         {
             mixture.Shares(axes[i], share);
@@ -88,15 +89,27 @@ public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int
             }
 
             of[i] = -1;
-            for (int c = 0; c < k; c++) if (joined[c] > outside && (of[i] < 0 || joined[c] > joined[of[i]])) of[i] = c;
+            for (int c = 0; c < k; c++)
+            {
+                whole[c] += joined[c];
+                if (joined[c] > outside && (of[i] < 0 || joined[c] > joined[of[i]])) of[i] = c;
+            }
+
+            if (of[i] >= 0) kept[of[i]] += joined[of[i]];
         }
 
         // Renumber those that are large enough, in order of first component.
         int count = 0;
         int[] number = new int[k];
-        for (int c = 0; c < k; c++) number[c] = of.Count(o => o == c) >= rules.FewestAxes ? count++ : -1;
+        var lost = new List<double>();
+        for (int c = 0; c < k; c++)
+        {
+            number[c] = of.Count(o => o == c) >= rules.FewestAxes ? count++ : -1;
+            if (number[c] >= 0) lost.Add(Math.Clamp(1 - (kept[c] / whole[c]), 0, 1));
+        }
+
         for (int i = 0; i < of.Length; i++) of[i] = of[i] < 0 ? -1 : number[of[i]];
-        return new AxisClusters(of, count, gap, tooWide);
+        return new AxisClusters(of, count, gap, tooWide, [.. lost]);
     }
 
     private static bool IsWide(AxisComponent c, ClusterRules rules) => c.SpreadDeg > rules.WidestDeg;

@@ -35,13 +35,16 @@ internal static class JointPlanes
     {
         int[] order = [.. members.OrderByDescending(m => faces[m].AreaM2).ThenBy(m => m)];
         var seeds = new List<int>();
+        var normals = new List<Vec3>();   // of the seeds, side by side: nearly all pairs fail on the angle alone
         var pieces = new List<List<int>>();
         foreach (int face in order)
         {
             int best = -1;
             double least = 1;
-            for (int s = 0; s < seeds.Count; s++)
+            Vec3 normal = faces[face].Normal;
+            for (int s = 0; s < normals.Count; s++)
             {
+                if (Math.Abs(normals[s].Dot(normal)) < CosineOfFarthest) continue;
                 double misfit = Misfit(faces[seeds[s]], faces[face], noiseM, reachM);
                 if (misfit < least) (best, least) = (s, misfit);
             }
@@ -49,6 +52,7 @@ internal static class JointPlanes
             if (best < 0)
             {
                 seeds.Add(face);
+                normals.Add(normal);
                 pieces.Add([face]);
             }
             else
@@ -66,12 +70,11 @@ internal static class JointPlanes
     /// <summary>How badly a face fits the plane of a larger one; below 1 within the errors of both.</summary>
     private static double Misfit(Face large, Face small, double noiseM, double? reachM)
     {
-        double cosine = Math.Abs(large.Normal.Dot(small.Normal));
-        if (cosine < CosineOfFarthest) return double.PositiveInfinity;
         Vec3 between = small.Middle - large.Middle;
         double distance2 = between.Dot(between), reach = reachM ?? Math.Max(LeastReachM, ReachInSizes * Math.Sqrt(large.AreaM2));
         if (distance2 > reach * reach) return double.PositiveInfinity;
         double errorLarge = ErrorOf(large), errorSmall = ErrorOf(small);
+        double cosine = Math.Abs(large.Normal.Dot(small.Normal));
         double angle = Math.Acos(Math.Min(1, cosine)) / (Cone95Sigmas * Math.Sqrt((errorLarge * errorLarge) + (errorSmall * errorSmall) + (BendRad * BendRad)));
         double lean = Math.Sqrt((errorLarge * errorLarge) + (BendRad * BendRad / 4));
         double offset = Math.Abs(large.Normal.Dot(between)) / (2 * (noiseM + (Math.Sqrt(distance2) * lean)));

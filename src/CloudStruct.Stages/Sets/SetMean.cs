@@ -14,12 +14,14 @@ internal sealed record SetMean(OrientationTensor Tensor, double Kappa, double Co
     /// <summary>Mean of planes.</summary>
     /// <param name="axes">Unit poles of either sign.</param>
     /// <param name="weights">As long, above 0.</param>
+    /// <param name="lost">Share of the set's law whose planes were given to the background or a neighbour, 0 to 1.</param>
     /// <remarks>The variance of the mean is taken from how the planes scatter about it, Σ w² d dᵀ / (Σ w)² with the
     /// small-sample factor n/(n - 1): it holds the natural scatter and the error of each plane together, whatever their
     /// shares, and needs no law. The radius is that of a bivariate normal law (the two directions may differ), widened
     /// from chi-square to F for the variance being estimated; its degrees of freedom are 2 (n - 1) for a round set, as in
-    /// Fisher's exact cone, and fewer for an elongated one (Satterthwaite).</remarks>
-    public static SetMean Of(Vec3[] axes, double[] weights)
+    /// Fisher's exact cone, and fewer for an elongated one (Satterthwaite). Without its outer share q a bivariate normal law keeps
+    /// 1 + q ln q / (1 - q) of its variance; the variance is divided by that.</remarks>
+    public static SetMean Of(Vec3[] axes, double[] weights, double lost = 0)
     {
         OrientationTensor t = OrientationTensor.Of(axes, weights);
         Vec3 mean = t.MeanAxis;
@@ -37,7 +39,8 @@ internal sealed record SetMean(OrientationTensor Tensor, double Kappa, double Co
         if (!(n > 1.5)) return new SetMean(t, kappa, 90);
 
         // An axis moves the first eigenvector by (sine · cosine of its deviation)/(S1 - Sj).
-        Eigen3 v = (variance * (n / (n - 1))).Eigen();
+        double q = Math.Clamp(lost, 1e-9, 0.3), whole = 1 + (q * Math.Log(q) / (1 - q));
+        Eigen3 v = (variance * (n / (n - 1) / whole)).Eigen();
         double gain = 1 / Math.Max(0.2, t.S1 - ((t.S2 + t.S3) / 2));
         double v1 = Math.Max(0, v.L1), v2 = Math.Max(0, v.L2);
         double freedom = v1 > 0 ? (n - 1) * Math.Pow(v1 + v2, 2) / ((v1 * v1) + (v2 * v2)) : 2 * (n - 1);

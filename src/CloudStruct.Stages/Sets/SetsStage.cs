@@ -40,7 +40,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         int outside = domain.Count(d => d == FaceDomain.Unknown);
         if (outside > 0)
         {
-            Say(context, Invariant($"{outside} of {faces.Length} faces took no part: not in place, or of no known domain."), false);
+            Say(context, Invariant($"{outside} of {faces.Length} {(faces.Length == 1 ? "face" : "faces")} took no part: not in place, or of no known domain."), false);
         }
 
         return new SetsRecord { Sets = [.. sets], SetOfFace = setOfFace };
@@ -82,7 +82,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         for (int s = 0; s < byArea.Length; s++)
         {
             int[] own = [.. Enumerable.Range(0, planes.Length).Where(i => clusters.ClusterOf[i] == byArea[s])];
-            sets[s] = OneSet(input, settings, domain, Invariant($"{word}-{s + 1}"), [.. own.Select(i => planes[i])], [.. own.Select(i => weights[i])], rock);
+            sets[s] = OneSet(input, settings, domain, Invariant($"{word}-{s + 1}"), [.. own.Select(i => planes[i])], [.. own.Select(i => weights[i])], clusters.Lost[byArea[s]], rock);
             foreach (int face in own.SelectMany(i => planes[i].Faces)) setOfFace[face] = sets[s].Set;
         }
 
@@ -90,10 +90,10 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
     }
 
     private static OrientationSet OneSet(
-        SetsInput input, SetSettings settings, FaceDomain domain, string name, JointPlane[] planes, double[] weights, int[] rock)
+        SetsInput input, SetSettings settings, FaceDomain domain, string name, JointPlane[] planes, double[] weights, double lost, int[] rock)
     {
         Face[] faces = input.Faces.Faces;
-        SetMean mean = SetMean.Of([.. planes.Select(p => p.Normal)], weights);
+        SetMean mean = SetMean.Of([.. planes.Select(p => p.Normal)], weights, lost);
         Vec3 normal = -mean.Tensor.MeanAxis;
         (double shape, double strength) = mean.Tensor.Woodcock;
         int[] own = [.. planes.SelectMany(p => p.Faces)];
@@ -157,7 +157,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
                 string why = planes < settings.FewestPlanes
                     ? Invariant($"fewer than {settings.FewestPlanes} planes")
                     : clusters.TooWide > 0 ? "their poles scatter too widely" : "their poles are not gathered more than chance would have it";
-                Say(context, Invariant($"No set in the {word}: {faces} faces on {planes} planes, {why}."), false);
+                Say(context, Invariant($"No set in the {word}: {faces} {(faces == 1 ? "face" : "faces")} on {planes} {(planes == 1 ? "plane" : "planes")}, {why}."), false);
             }
 
             return;
@@ -168,7 +168,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         string doubt = doubtful ? Invariant($" Another number of sets would fit nearly as well (BIC differs by {clusters.BicGap:0.0}).") : "";
         Say(
             context,
-            Invariant($"{word}: {clusters.Count} {(clusters.Count == 1 ? "set" : "sets")} from {faces} faces on {planes} separate planes; {left} planes belong to none.{doubt}"),
+            Invariant($"{word}: {clusters.Count} {(clusters.Count == 1 ? "set" : "sets")} from {faces} {(faces == 1 ? "face" : "faces")} on {planes} separate {(planes == 1 ? "plane" : "planes")}; {left} {(left == 1 ? "plane belongs" : "planes belong")} to none.{doubt}"),
             doubtful);
     }
 
