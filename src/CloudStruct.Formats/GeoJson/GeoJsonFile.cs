@@ -23,6 +23,7 @@ internal static class GeoJsonFile
         if (file.Length > MostBytes) throw new InputException(file.Name, "the file is too large", Invariant($"{file.Length} bytes"), "Simplify what was drawn");
         byte[] bytes = file.Take(0, file.Length, "the file");
         ReadOnlySpan<byte> text = bytes.AsSpan().StartsWith((ReadOnlySpan<byte>)[0xEF, 0xBB, 0xBF]) ? bytes.AsSpan(3) : bytes;
+        if (!System.Text.Unicode.Utf8.IsValid(text)) throw NotGeoJson(file.Name, "text that is not UTF-8");
         var options = new JsonSerializerOptions();
         options.Converters.Add(new GeoJsonConverterFactory());
         try

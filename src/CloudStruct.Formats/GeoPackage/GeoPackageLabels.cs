@@ -30,6 +30,10 @@ internal static class GeoPackageLabels
         {
             throw NotGeoPackage(name, e.Message, e);
         }
+        catch (Exception e) when (e is InvalidOperationException or InvalidCastException)
+        {
+            throw NotGeoPackage(name, "a cell of another type than its column", e);
+        }
     }
 
     private static HandLabels Read(string path, string name)

@@ -63,6 +63,14 @@ public sealed class EvidenceFilesTests : IDisposable
         Assert.Throws<InputException>(() => EvidenceFiles.ReadLabels(Text("l.geojson", text)));
 
     [Fact]
+    public void GeoJson_that_is_not_utf8_is_refused()
+    {
+        string path = Path.Combine(folder, "l.geojson");
+        File.WriteAllBytes(path, System.Text.Encoding.Latin1.GetBytes("{\"type\":\"FeatureCollection\",\"features\":[{\"type\":\"Feature\",\"properties\":{\"class\":\"d\u00edke\"},\"geometry\":null}]}"));
+        Assert.Throws<InputException>(() => EvidenceFiles.ReadLabels(path));
+    }
+
+    [Fact]
     public void GeoPackage_labels_are_read_from_every_label_layer()
     {
         string path = Path.Combine(folder, "l.gpkg");
