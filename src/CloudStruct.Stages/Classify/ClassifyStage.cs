@@ -58,12 +58,30 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
     private static byte[] Kinds(Patches patches, Features features, ClassifySettings settings, PatchLabels labels, StageContext context)
     {
         var cover = new bool[patches.Count];
-        if (settings.FindCover && new CoverFinder(patches, features, context).LogOdds() is { } odds)
+        var finder = new CoverFinder(patches, features, context);
+        if (settings.FindCover && finder.LogOdds() is { } odds)
+        {
+            Outline(odds);
+            int rims = (int)Math.Ceiling(1 / patches.SizeM);
+            if (cover.Contains(true) && finder.Again(cover, rims) is { } better)
+            {
+                bool[] reach = PatchCut.Grown(patches, cover, rims);
+                for (int i = 0; i < better.Length; i++)
+                {
+                    if (!reach[i]) better[i] = -3;
+                }
+
+                Outline(better);
+            }
+        }
+
+        void Outline(float[] by)
         {
             // Only where cover is near at hand does the cut have to look.
-            bool[] active = PatchCut.Grown(patches, [.. odds.Select(o => o > -0.5f)], 3);
-            bool[] others = [.. active.Select(a => !a)];
-            PatchCut.Run(patches, odds, active, cover, others, settings.SmoothingPerM);
+            bool[] active = PatchCut.Grown(patches, [.. by.Select(o => o > -0.5f)], 3);
+            Array.Clear(cover);
+            PatchCut.Run(patches, by, active, cover, [.. active.Select(a => !a)], settings.SmoothingPerM);
+            DropSpecks(patches, cover);
         }
 
         var kind = new byte[patches.Count];
@@ -77,19 +95,27 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
         return kind;
     }
 
-    /// <summary>Marks small pieces of cloud that touch nothing else: loose when large enough to be a block, else unknown.</summary>
-    private static void SeparatePieces(Patches patches, byte[] kind)
+    /// <summary>Cover smaller than this is lichen or a tuft in a crack: the rock is still seen there.</summary>
+    private static void DropSpecks(Patches patches, bool[] cover)
     {
-        var seen = new bool[kind.Length];
-        var stack = new Stack<int>();
-        var piece = new List<int>();
-        double all = 0;
-        foreach (float a in patches.AreaM2) all += a;
-        double limit = Math.Min(LoosePieceM2, 0.01 * all);
-        for (int start = 0; start < kind.Length; start++)
+        const double SpeckM2 = 0.3;
+        foreach ((List<int> piece, double area) in Pieces(patches, i => cover[i], 1))
         {
-            if (seen[start]) continue;
-            piece.Clear();
+            if (area >= SpeckM2) continue;
+            foreach (int i in piece) cover[i] = false;
+        }
+    }
+
+    /// <summary>Connected pieces of the patches asked for, in order of their first patch; patches within some rings touch.</summary>
+    private static IEnumerable<(List<int> Piece, double AreaM2)> Pieces(Patches patches, Func<int, bool> of, int rings)
+    {
+        int side = (2 * rings) + 1;
+        var seen = new bool[patches.Count];
+        var stack = new Stack<int>();
+        for (int start = 0; start < seen.Length; start++)
+        {
+            if (seen[start] || !of(start)) continue;
+            var piece = new List<int>();
             double area = 0;
             seen[start] = true;
             stack.Push(start);
@@ -98,15 +124,28 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
                 int i = stack.Pop();
                 piece.Add(i);
                 area += patches.AreaM2[i];
-                for (int k = 0; k < 125; k++)
+                for (int k = 0; k < side * side * side; k++)
                 {
-                    int j = patches.Map.Find(patches.Cell[3 * i] + (k % 5) - 2, patches.Cell[(3 * i) + 1] + (k / 5 % 5) - 2, patches.Cell[(3 * i) + 2] + (k / 25) - 2);
-                    if (j < 0 || seen[j]) continue;
+                    int j = patches.Map.Find(
+                        patches.Cell[3 * i] + (k % side) - rings, patches.Cell[(3 * i) + 1] + (k / side % side) - rings, patches.Cell[(3 * i) + 2] + (k / side / side) - rings);
+                    if (j < 0 || seen[j] || !of(j)) continue;
                     seen[j] = true;
                     stack.Push(j);
                 }
             }
 
+            yield return (piece, area);
+        }
+    }
+
+    /// <summary>Marks small pieces of cloud that touch nothing else: loose when large enough to be a block, else unknown.</summary>
+    private static void SeparatePieces(Patches patches, byte[] kind)
+    {
+        double all = 0;
+        foreach (float a in patches.AreaM2) all += a;
+        double limit = Math.Min(LoosePieceM2, 0.01 * all);
+        foreach ((List<int> piece, double area) in Pieces(patches, _ => true, 2))
+        {
             if (area >= limit) continue;
             foreach (int i in piece)
             {

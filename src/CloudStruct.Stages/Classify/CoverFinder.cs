@@ -72,6 +72,47 @@ internal sealed class CoverFinder
         return odds;
     }
 
+    /// <summary>Log odds learnt anew from cover already outlined against rock well away from it: the first kinds miss what is
+    /// half soil, half grass.</summary>
+    /// <param name="cover">Patches outlined so far.</param>
+    /// <param name="rims">Rings of patches about them that teach neither side.</param>
+    public float[]? Again(bool[] cover, int rims)
+    {
+        bool[] near = PatchCut.Grown(patches, cover, rims);
+        var train = new List<int>();
+        var side = new List<byte>();
+        var fold = new List<int>();
+        int[] columns = [.. Enumerable.Range(0, Math.Min(4, features.Columns))];
+        for (int i = 0; i < cover.Length; i++)
+        {
+            if ((near[i] && !cover[i]) || !Sound(i, columns.Length)) continue;
+            train.Add(i);
+            side.Add((byte)(cover[i] ? 1 : 0));
+            fold.Add(0);
+        }
+
+        if (Looks.Learn(features, columns, train, side, fold, -1, curved: true) is not { } looks) return null;
+        var odds = new float[cover.Length];
+        double limit = Math.Cos(SteepDeg * Math.PI / 180);
+        for (int i = 0; i < odds.Length; i++)
+        {
+            float o = Sound(i, columns.Length) ? looks.LogOdds(features, i, 3) : 0;
+            odds[i] = features.Level06[i] < limit ? Math.Min(o, 0) - 0.5f : o;
+        }
+
+        return odds;
+    }
+
+    private bool Sound(int i, int columns)
+    {
+        foreach (float v in features.Rows.AsSpan(i * features.Columns, columns))
+        {
+            if (!float.IsFinite(v)) return false;
+        }
+
+        return true;
+    }
+
     private static double LogSum(double a, double b)
     {
         double top = Math.Max(a, b);

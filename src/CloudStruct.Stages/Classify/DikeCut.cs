@@ -65,7 +65,7 @@ internal sealed class DikeCut
     internal static double Pull(double depthM, double widthM, bool byColour)
     {
         double soft = byColour ? (0.12 * widthM) + 0.04 : (0.05 * widthM) + 0.03;
-        return Math.Clamp(depthM / soft, -3.5, 1.6);
+        return Math.Clamp(depthM / soft, -3.5, byColour ? 0.6 : 1.6);
     }
 
     internal float LookOdds(Looks[] looks, int patch)

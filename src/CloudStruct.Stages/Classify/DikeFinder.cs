@@ -7,14 +7,14 @@ namespace CloudStruct.Stages.Classify;
 internal sealed partial class DikeFinder
 {
     /// <summary>Folds along strike: what is learnt on some stretches is judged on the others.</summary>
-    private const int Folds = 4;
+    private const int Folds = 3;
 
     private readonly Patches patches;
     private readonly Features features;
     private readonly bool[] rock;
     private readonly bool[] taken;
     private readonly StageContext context;
-    private readonly int[] colour, texture, hue;
+    private readonly int[] colour, texture;
 
     public DikeFinder(Patches patches, Features features, bool[] rock, StageContext context)
     {
@@ -25,7 +25,6 @@ internal sealed partial class DikeFinder
         taken = new bool[patches.Count];
         int c = features.ColourColumns;
         colour = [.. Enumerable.Range(0, c)];
-        hue = [.. Enumerable.Range(0, c).Skip(1)];
         texture = [.. Enumerable.Range(c, features.Columns - c)];
     }
 
@@ -81,6 +80,8 @@ internal sealed partial class DikeFinder
             if (odds == null) return null;
             if (Tells(corridor, odds, train, side) < 0.7) return null;
             Follow(sheet, corridor, odds);
+            // What shows its margins nowhere need not be learnt again.
+            if (sheet.Knots.Count(k => k.BothMargins) < 0.3 * sheet.Knots.Count) return null;
             if (sheet.Knots.Count == 0 || !(sheet.WidthM >= narrowestM && sheet.WidthM <= 1.3 * widestM)) return null;
         }
 
@@ -104,7 +105,6 @@ internal sealed partial class DikeFinder
         double width = sheet.WidthM;
         (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, Math.Max(2, width));
         double textureAuc = HeldOut([], texture), colourAuc = colour.Length > 0 ? HeldOut(colour, []) : 0.5;
-        double allAuc = colour.Length > 0 ? HeldOut(colour, texture) : textureAuc, hueAuc = colour.Length > 0 ? HeldOut(hue, []) : 0.5;
         float[] slopes = [.. train.Select(p => features.Level06[p])];
         double slopeAuc = Math.Max(Worse(slopes), Worse([.. slopes.Select(v => -v)]));
         bool byColour = colourAuc >= textureAuc - 0.05;
@@ -115,7 +115,7 @@ internal sealed partial class DikeFinder
         double wander = fitter.Wander(sheet, Math.Max(0.5, 0.2 * width));
         int both = sheet.Knots.Count(k => k.BothMargins);
         double length = both == 0 ? 0 : sheet.Knots.Where(k => k.BothMargins).Max(k => k.S + k.HalfM) - sheet.Knots.Where(k => k.BothMargins).Min(k => k.S - k.HalfM);
-        var judgement = new DikeJudgement(width, length, wander, (double)both / sheet.Knots.Count, colourAuc, textureAuc, allAuc, hueAuc, slopeAuc);
+        var judgement = new DikeJudgement(width, length, wander, (double)both / sheet.Knots.Count, colourAuc, textureAuc, slopeAuc, WidthSpread(sheet));
         // A hand that has labelled dike and host knows better than the shape.
         bool accepted = labels.Verdict(patches, sheet) ?? IsDike(judgement);
         Looked.Add((judgement, accepted));
@@ -176,12 +176,19 @@ internal sealed partial class DikeFinder
         return mean;
     }
 
+    /// <summary>Distance of the tenth and ninetieth percentile of the widths, over their median.</summary>
+    private static double WidthSpread(Sheet sheet)
+    {
+        double[] w = [.. sheet.Knots.Select(k => k.B - k.A).Order()];
+        return (w[w.Length * 9 / 10] - w[w.Length / 10]) / w[w.Length / 2];
+    }
+
     /// <summary>The decision by shape: long enough, both margins seen, margins that keep to the sheet; and rock that differs.</summary>
     internal static bool IsDike(DikeJudgement j)
     {
         if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
         bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.06 * j.WidthM);
-        bool byTexture = j.TextureAuc >= 0.85 && j.SlopeAuc <= 0.62 && j.LengthM > 8 * j.WidthM && j.WanderM <= Math.Max(0.1, 0.06 * j.WidthM);
+        bool byTexture = j.TextureAuc >= 0.85 && j.SlopeAuc <= 0.62 && j.LengthM > 5 * j.WidthM && j.WidthSpread < 0.4 && j.BothMargins >= 0.6 && j.WanderM <= Math.Max(0.1, 0.06 * j.WidthM);
         return byColour || byTexture;
     }
 }

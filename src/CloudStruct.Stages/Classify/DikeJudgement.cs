@@ -7,8 +7,7 @@ namespace CloudStruct.Stages.Classify;
 /// <param name="BothMargins">Share of knots at which both margins show.</param>
 /// <param name="ColourAuc">Held-out separation of inside and the worse flank by colour.</param>
 /// <param name="TextureAuc">The same by the shape of the surface alone.</param>
-/// <param name="AllAuc">The same by all.</param>
-/// <param name="HueAuc">The same by colour without lightness, which shade cannot make up.</param>
 /// <param name="SlopeAuc">How far the slope of the ground alone tells inside from outside: a wall or a bench edge is no dike.</param>
+/// <param name="WidthSpread">Spread of the widths along the sheet over their median: wedges are no dikes.</param>
 internal sealed record DikeJudgement(
-    double WidthM, double LengthM, double WanderM, double BothMargins, double ColourAuc, double TextureAuc, double AllAuc, double HueAuc, double SlopeAuc);
+    double WidthM, double LengthM, double WanderM, double BothMargins, double ColourAuc, double TextureAuc, double SlopeAuc, double WidthSpread);

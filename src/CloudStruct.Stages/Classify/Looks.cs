@@ -8,7 +8,7 @@ namespace CloudStruct.Stages.Classify;
 /// columns for that and gets one normal law a side.</remarks>
 internal sealed class Looks
 {
-    private const int MostItems = 4000, MostMixed = 1500, Kinds = 4;
+    private const int MostItems = 3000, MostMixed = 1000, Kinds = 4;
 
     private readonly int[] columns;
     private readonly Discriminant? plain;
@@ -86,5 +86,5 @@ internal sealed class Looks
     }
 
     private static GaussianMixture? Mixed(List<double> items, int d) =>
-        GaussianMixture.Fit(CollectionsMarshal.AsSpan(items), d, Kinds, CovarianceModel.Own, seed: 1, starts: 1, rounds: 12);
+        GaussianMixture.Fit(CollectionsMarshal.AsSpan(items), d, Kinds, CovarianceModel.Own, seed: 1, starts: 1, rounds: 10);
 }
