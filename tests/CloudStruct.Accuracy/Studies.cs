@@ -6,6 +6,7 @@ public static class Studies
     /// <summary>All of them.</summary>
     public static SortedDictionary<string, IStudy> All { get; } = new(StringComparer.Ordinal)
     {
+        ["classes"] = new ClassesStudy(),
         ["faces"] = new FacesStudy(),
         ["sets"] = new SetsStudy(),
         ["width"] = new WidthStudy(),

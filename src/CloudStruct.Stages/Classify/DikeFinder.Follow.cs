@@ -38,7 +38,8 @@ internal sealed partial class DikeFinder
             [.. found.Select(f => f.Patch)], [.. found.Select(f => FoldOf(f.S, foldM))], [.. found.Select(f => f.S)], [.. found.Select(f => f.V)], [.. found.Select(f => f.T)]);
     }
 
-    /// <summary>Patches to learn from: well inside, and on the flanks up to one and a half widths away.</summary>
+    /// <summary>Patches to learn from: well inside, and on the flanks up to most of a width away: the shaded
+    /// steps and rims beside a dike must be learnt as what they are.</summary>
     private (List<int> Train, List<byte> Side, List<int> Fold) Sides(Sheet sheet, Corridor corridor, double foldM)
     {
         var train = new List<int>();
@@ -50,8 +51,8 @@ internal sealed partial class DikeFinder
             double s = corridor.S[i];
             if (s < from || s > to) continue;
             (double a, double b) = sheet.Margins(s, corridor.V[i]);
-            double width = b - a, outside = Math.Max(a - corridor.T[i], corridor.T[i] - b), reach = Math.Max(1.5 * width, 0.6);
-            int which = outside < -0.1 * width ? 1 : outside > 0.12 * width && outside < reach ? 0 : -1;
+            double width = b - a, outside = Math.Max(a - corridor.T[i], corridor.T[i] - b), reach = Math.Max(0.8 * width, 0.5);
+            int which = outside < -0.08 * width ? 1 : outside > 0.08 * width && outside < reach ? 0 : -1;
             if (which < 0) continue;
             train.Add(corridor.Patch[i]);
             side.Add((byte)which);
@@ -95,7 +96,9 @@ internal sealed partial class DikeFinder
                     double run = last.S - before.S, yaw = run != 0 ? (last.A + last.B - before.A - before.B - ((before.G + last.G) * (last.V - before.V))) / 2 / run : 0;
                     yaw = Math.Clamp(0.7 * yaw, -0.3, 0.3);
                     double away = at - last.S, reach = Math.Min(0.5 * width, (0.15 * width) + (0.12 * Math.Abs(away)));
-                    var guess = new Knot { S = at, HalfM = half, V = last.V, A = last.A + (yaw * away), B = last.B + (yaw * away), G = last.G };
+                    // The width is drawn toward the usual one: tapers are slow, blemishes are not.
+                    double middle = ((last.A + last.B) / 2) + (yaw * away), wide = (0.5 * (last.B - last.A)) + (0.5 * Usual(into, from, width));
+                    var guess = new Knot { S = at, HalfM = half, V = last.V, A = middle - (wide / 2), B = middle + (wide / 2), G = last.G };
                     Knot? knot = fitter.Fit(guess, yaw, reach, tilts: 3, tiltSpread: 0.06);
                     if (knot == null) continue;   // nothing to be seen here: cover or a hole
                     bool holds = knot.Inside > 0.3 && (knot.AnyMargin || double.IsNaN(knot.FlankA) || double.IsNaN(knot.FlankB)) && knot.B - knot.A > 0.3 * width && knot.B - knot.A < 2.5 * width;
@@ -115,6 +118,13 @@ internal sealed partial class DikeFinder
 
         sheet.Knots.Clear();
         sheet.Knots.AddRange(Smoothed(knots));
+    }
+
+    private static double Usual(List<Knot> knots, Knot first, double width)
+    {
+        if (knots.Count < 2) return (first.B - first.A + width) / 2;
+        double[] w = [.. knots.Select(k => k.B - k.A).Order()];
+        return w[w.Length / 2];
     }
 
     /// <summary>Draws each knot toward its neighbours where they are sure and it is not: gains are the weights.</summary>

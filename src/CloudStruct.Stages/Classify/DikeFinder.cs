@@ -48,7 +48,7 @@ internal sealed partial class DikeFinder
         {
             context.Stop.ThrowIfCancellationRequested();
             // Never stop at the first rejection: stains and benches may outrank the dike.
-            if (found.Count == most || tried.Count == 8 + (4 * found.Count)) break;
+            if (found.Count == most || tried.Count == (features.ColourColumns > 0 ? 8 : 12) + (4 * found.Count)) break;
             if (tried.Exists(t => SlabSearch.Alike(t, candidate)) || found.Exists(d => Covers(d.Sheet, candidate))) continue;
             tried.Add(candidate);
             FoundDike? dike = Try(candidate, narrowestM, widestM, labels);
@@ -187,7 +187,7 @@ internal sealed partial class DikeFinder
     internal static bool IsDike(DikeJudgement j)
     {
         if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
-        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.06 * j.WidthM);
+        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.07 * j.WidthM);
         bool byTexture = j.TextureAuc >= 0.85 && j.SlopeAuc <= 0.62 && j.LengthM > 5 * j.WidthM && j.WidthSpread < 0.4 && j.BothMargins >= 0.6 && j.WanderM <= Math.Max(0.1, 0.06 * j.WidthM);
         return byColour || byTexture;
     }

@@ -6,6 +6,8 @@ internal sealed class SheetFitter
     /// <summary>Patches nearer than this see the same piece of rock: their odds are shared, not added [m²].</summary>
     public const double IndependentM2 = 0.0025;
 
+    private const double MarginStrain = 2;
+
     private readonly double patchM;
     private readonly double[] s, v, t;
     private readonly float[] odds, area;
@@ -66,17 +68,23 @@ internal sealed class SheetFitter
                 }
 
                 for (int k = 1; k <= bins; k++) sum[k] += sum[k - 1];
-                int a = aLow, b = bHigh;
+                int a = aLow, b = bLow;
+                double low = double.PositiveInfinity, high = double.NegativeInfinity, total = Math.Abs(sum[bins]) + Math.Max(0, sum[Bin(b0)] - sum[Bin(a0)]);
                 for (int k = aLow; k <= aHigh; k++)
                 {
-                    if (sum[k] < sum[a]) a = k;
+                    double cost = sum[k] + Strain(Edge(k) - a0);
+                    if (cost < low) (low, a) = (cost, k);
                 }
 
-                b = bLow;
                 for (int k = bLow; k <= bHigh; k++)
                 {
-                    if (sum[k] >= sum[b]) b = k;
+                    double win = sum[k] - Strain(Edge(k) - b0);
+                    if (win > high) (high, b) = (win, k);
                 }
+
+                // A margin that leaves its guess by a tenth of the width has to win some percent for it: shade and scree
+                // beside the dike pull, but not that much.
+                double Strain(double off) => MarginStrain * total * off * off / (width * width);
 
                 // A degree of tilt that wins nothing is not taken.
                 double value = sum[b] - sum[a], penalty = 0.002 * Math.Abs(value) * (Math.Pow(g - guess.G, 2) / 0.0076) + (0.002 * Math.Abs(value) * j * j);

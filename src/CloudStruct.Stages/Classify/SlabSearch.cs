@@ -23,6 +23,8 @@ internal sealed class SlabSearch
 
     private const double CoarseDeg = 11;
 
+    private const int SlopeColumn = -1;
+
     /// <summary>Cosine of 15 deg: no slab flatter than that is looked for, a bed or a bench would be one.</summary>
     private static readonly double SteepestPole = Math.Cos(15 * Math.PI / 180);
 
@@ -77,7 +79,7 @@ internal sealed class SlabSearch
             if (WidthCells[^1] * level.SizeM < narrowestM) continue;
             if (WidthCells[0] * level.SizeM > widestM) break;
             (float[] means, float[] weights) = level.Means(of, rows, columns, use);
-            found.AddRange(Search(level, of, means, weights, columns, narrowestM, widestM));
+            found.AddRange(Search(level, of, means, weights, columns, colour, narrowestM, widestM));
         }
 
         // Equal evidence is decided by place, so that the order never depends on anything else.
@@ -106,7 +108,8 @@ internal sealed class SlabSearch
     private float[] SearchRows(float[] use, bool colour, out int columns)
     {
         int c = features.ColourColumns, windows = (features.Columns - c - 1) / 3;
-        List<int> pick = colour ? [.. Enumerable.Range(0, c)] : [c];
+        // Texture comes after the slope of the ground, so that whitening leaves what slope does not explain.
+        List<int> pick = colour ? [.. Enumerable.Range(0, c)] : [SlopeColumn, c];
         if (!colour && windows > 0) pick.Add(c + 3);
         if (!colour && windows > 1) pick.AddRange([c + 4, c + 6]);
         int d = columns = pick.Count;
@@ -143,10 +146,12 @@ internal sealed class SlabSearch
         });
         return rows;
 
-        double Value(int i, int j) => Math.Clamp(features.Rows[(i * features.Columns) + pick[j]], -4, 4);
+        double Value(int i, int j) => pick[j] == SlopeColumn ? Slope(i) : Math.Clamp(features.Rows[(i * features.Columns) + pick[j]], -4, 4);
     }
 
-    private IEnumerable<SlabCandidate> Search(Level level, int[] of, float[] means, float[] weights, int columns, double narrowestM, double widestM)
+    private double Slope(int i) => float.IsFinite(features.Level06[i]) ? 5 * (features.Level06[i] - 0.7) : 0;
+
+    private IEnumerable<SlabCandidate> Search(Level level, int[] of, float[] means, float[] weights, int columns, bool colour, double narrowestM, double widestM)
     {
         int n = level.Count, half = WindowCells / 2;
         // Middles of the cells from the patches they hold.
@@ -209,7 +214,7 @@ internal sealed class SlabSearch
             () => new Scratch(),
             (from, to, scratch) =>
             {
-                for (int w = from; w < to; w++) best[w] = SearchWindow(windows[w], middle, facing, means, weights, columns, level.SizeM, poles, narrowestM, widestM, scratch);
+                for (int w = from; w < to; w++) best[w] = SearchWindow(windows[w], middle, facing, means, weights, columns, colour, level.SizeM, poles, narrowestM, widestM, scratch);
             },
             length: 1);
         return best.SelectMany(b => b);
@@ -218,7 +223,7 @@ internal sealed class SlabSearch
     private static int Floor(int a, int b) => (int)Math.Floor((double)a / b);
 
     private static SlabCandidate[] SearchWindow(
-        List<int> cells, float[] middle, System.Numerics.Vector3[] facing, float[] means, float[] weights, int columns, double cellM, Vec3[] poles, double narrowestM, double widestM, Scratch scratch)
+        List<int> cells, float[] middle, System.Numerics.Vector3[] facing, float[] means, float[] weights, int columns, bool colour, double cellM, Vec3[] poles, double narrowestM, double widestM, Scratch scratch)
     {
         int n = cells.Count;
         if (n < 250) return [];
@@ -300,7 +305,7 @@ internal sealed class SlabSearch
                 if (widthM < 0.8 * narrowestM || widthM > 1.2 * widestM) continue;
                 for (int from = 3; from + width + 3 <= Bins; from++)
                 {
-                    (double evidence, double contrast) = Score(first, second, from, width, cellM);
+                    (double evidence, double contrast) = Score(first, second, from, width, cellM, colour);
                     if (evidence > top.Evidence) top = (evidence, contrast, from, width);
                 }
             }
@@ -360,7 +365,7 @@ internal sealed class SlabSearch
         && Math.Abs(a.Normal.Dot(b.Middle - a.Middle)) < 0.6 * Math.Max(a.WidthM, b.WidthM)
         && (b.Middle - a.Middle).Length < 0.6 * Math.Max(a.WindowM, b.WindowM);
 
-    private static (double Evidence, double Contrast) Score(Vector256<float>[] first, Vector256<float>[] second, int from, int width, double cellM)
+    private static (double Evidence, double Contrast) Score(Vector256<float>[] first, Vector256<float>[] second, int from, int width, double cellM, bool colour)
     {
         int to = from + width, low = Math.Max(0, from - width), high = Math.Min(first.Length - 1, to + width);
         Vector256<float> inside = first[to] - first[from], a = first[from] - first[low], b = first[high] - first[to];
@@ -371,6 +376,8 @@ internal sealed class SlabSearch
             ((second[high] - second[low]) - (mi * inside) - (ma * a) - (mb * b)) / (wi + wa + wb);
         Vector256<float> ratio = (mi - ma) * (mi - mb) / (Vector256.Max(variance, Vector256<float>.Zero) + Vector256.Create(0.03f));
         double contrast = Vector256.Sum(ratio.WithElement(Lanes - 1, 0));
+        // A wall or a bench differs from its flanks by slope first: what slope tells speaks against a slab.
+        if (!colour) contrast -= 3 * Math.Max(0, ratio[0]);
         if (contrast <= 0) return default;
         double independent = Math.Min(1, Math.Pow(cellM / IndependentM, 2));
         double effective = independent / ((1 / wi) + (0.5 / wa) + (0.5 / wb));
