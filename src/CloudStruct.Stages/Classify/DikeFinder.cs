@@ -187,8 +187,11 @@ internal sealed partial class DikeFinder
     internal static bool IsDike(DikeJudgement j)
     {
         if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
-        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.07 * j.WidthM);
-        bool byTexture = j.TextureAuc >= 0.85 && j.SlopeAuc <= 0.62 && j.LengthM > 5 * j.WidthM && j.WidthSpread < 0.4 && j.BothMargins >= 0.6 && j.WanderM <= Math.Max(0.1, 0.06 * j.WidthM);
+        // What the slope of the ground tells as well may be light and dirt on a wall, unless its margins are as sharp as rock's.
+        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.07 * j.WidthM)
+            && (j.SlopeAuc < 0.85 || j.WanderM <= Math.Max(0.05, 0.03 * j.WidthM));
+        bool byTexture = j.TextureAuc >= 0.88 && j.SlopeAuc <= 0.62 && j.LengthM > 5 * j.WidthM && j.WidthSpread < 0.3
+            && j.BothMargins >= 0.7 && j.WanderM <= Math.Max(0.03, 0.02 * j.WidthM);
         return byColour || byTexture;
     }
 }

@@ -86,7 +86,7 @@ internal sealed class Features
             for (int i = 0; i < n; i += stride)
             {
                 float v = Rows[(i * Columns) + column];
-                if (rock[i] && float.IsFinite(v)) sample.Add(v - (float)Predict(coefficients, patches.Normal[i], Slope(i)));
+                if (rock[i] && float.IsFinite(v)) sample.Add(v - (float)Predict(coefficients, patches.Normal[i], SlopeFor(column, i)));
             }
 
             (float middle, float scale) = MedianAndScale(sample);
@@ -96,7 +96,7 @@ internal sealed class Features
                 for (int i = from; i < to; i++)
                 {
                     ref float v = ref Rows[(i * Columns) + column];
-                    float t = (v - (float)Predict(coefficients, patches.Normal[i], Slope(i)) - middle) / scale;
+                    float t = (v - (float)Predict(coefficients, patches.Normal[i], SlopeFor(column, i)) - middle) / scale;
                     v = float.IsFinite(t) ? Math.Clamp(t, -6, 6) : 0;
                 }
             });
@@ -110,11 +110,13 @@ internal sealed class Features
     /// <param name="patch">Patch of the place.</param>
     public float Standard(int column, float raw, Vector3 normal, int patch)
     {
-        float t = (raw - (float)Predict(directionFits[column], normal, Slope(patch)) - middles[column]) / scales[column];
+        float t = (raw - (float)Predict(directionFits[column], normal, SlopeFor(column, patch)) - middles[column]) / scales[column];
         return float.IsFinite(t) ? Math.Clamp(t, -6, 6) : 0;
     }
 
-    private double Slope(int patch) => Level06.Length > 0 && float.IsFinite(Level06[patch]) ? Level06[patch] : 0.7;
+    // Light sees the direction of a patch only; texture feels the walls and edges about it.
+    private double SlopeFor(int column, int patch) =>
+        column < ColourColumns ? 0 : Level06.Length > 0 && float.IsFinite(Level06[patch]) ? Level06[patch] : 0.7;
 
     /// <summary>Median, and 1.4826 times the median distance from it (the standard deviation of a normal law), never 0.</summary>
     internal static (float Median, float Scale) MedianAndScale(List<float> sample)
@@ -152,6 +154,29 @@ internal sealed class Features
 
     private double[] DirectionFit(Patches patches, bool[] rock, int column, int stride)
     {
+        // A dike is far from the rest in colour: in a plain fit it bends the curve for the host that faces the same way, and
+        // a ghost of it appears there. So what lies far off the fit is left out of the next one.
+        var fit = new double[Terms];
+        float limit = float.PositiveInfinity;
+        for (int round = 0; round < 4; round++)
+        {
+            double[] next = DirectionFit(patches, rock, column, stride, fit, limit);
+            var off = new List<float>();
+            for (int i = 0; i < patches.Count; i += stride)
+            {
+                float v = Rows[(i * Columns) + column];
+                if (rock[i] && float.IsFinite(v)) off.Add(v - (float)Predict(next, patches.Normal[i], SlopeFor(column, i)));
+            }
+
+            limit = 2 * MedianAndScale(off).Scale;
+            fit = next;
+        }
+
+        return fit;
+    }
+
+    private double[] DirectionFit(Patches patches, bool[] rock, int column, int stride, double[] before, float limit)
+    {
         var a = new double[Terms, Terms];
         var y = new double[Terms];
         Span<double> b = stackalloc double[Terms];
@@ -159,8 +184,9 @@ internal sealed class Features
         for (int i = 0; i < patches.Count; i += stride)
         {
             float v = Rows[(i * Columns) + column];
-            if (!rock[i] || !float.IsFinite(v)) continue;
-            Basis(patches.Normal[i], Slope(i), b);
+            double slope = SlopeFor(column, i);
+            if (!rock[i] || !float.IsFinite(v) || Math.Abs(v - Predict(before, patches.Normal[i], slope)) > limit) continue;
+            Basis(patches.Normal[i], slope, b);
             weight++;
             for (int r = 0; r < Terms; r++)
             {
@@ -171,7 +197,7 @@ internal sealed class Features
 
         if (weight < 50) return new double[Terms];
         // A ridge keeps terms out that the scene cannot tell apart (a pavement has one direction only).
-        for (int r = 1; r < Terms; r++) a[r, r] += 0.001 * weight;
+        for (int r = 1; r < Terms; r++) a[r, r] += (0.001 * weight) + 1e-9;
         for (int r = 0; r < Terms; r++)
         {
             for (int s = r + 1; s < Terms; s++)

@@ -82,17 +82,20 @@ internal sealed class PatchLabels
     /// outside, false when they say the opposite, null when they say nothing of it.</summary>
     public bool? Verdict(Patches patches, Sheet sheet)
     {
-        int dikeIn = 0, hostIn = 0, hostOut = 0;
+        int dikeIn = 0, dikeBeside = 0, hostIn = 0, hostOut = 0;
+        double width = sheet.WidthM;
         for (int i = 0; i < Train.Length; i++)
         {
             if (Train[i] is not ((byte)RockClass.Dike or (byte)RockClass.Host)) continue;
-            bool inside = sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]) > 0;
+            double depth = sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]);
+            bool inside = depth > 0;
             if (Train[i] == (byte)RockClass.Host) (hostIn, hostOut) = (hostIn + (inside ? 1 : 0), hostOut + (inside ? 0 : 1));
             else if (inside) dikeIn++;
+            else if (depth > -width) dikeBeside++;
         }
 
         // Labels that touch the sheet on one side only leave the decision to its shape.
         if (dikeIn + hostIn < 5 || hostIn + hostOut < 5) return null;
-        return dikeIn > 4 * hostIn ? true : hostIn > 4 * dikeIn ? false : null;
+        return dikeIn > 4 * Math.Max(hostIn, dikeBeside) ? true : hostIn > 4 * dikeIn ? false : null;
     }
 }
