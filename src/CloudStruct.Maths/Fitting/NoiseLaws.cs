@@ -1,3 +1,6 @@
+using System.Runtime.InteropServices;
+using System.Runtime.Intrinsics;
+
 namespace CloudStruct.Maths.Fitting;
 
 /// <summary>A family of laws of correlated error, weighed by what the residual waves of patches show.</summary>
@@ -6,7 +9,8 @@ namespace CloudStruct.Maths.Fitting;
 /// residual power), the variance is integrated out, and the error of the slopes is averaged over the laws.</remarks>
 public sealed class NoiseLaws
 {
-    private static readonly double[] WhiteShares = [0, 0.15, 0.4, 0.7];
+    private static readonly double[] WhiteShares = [0, 0.15, 0.4];
+    private static readonly double[] WaveShares = [0.25, 0.6];
 
     // The residual power beyond the waves has thousands of degrees of freedom on a large patch. Real errors follow no law
     // of the family exactly, so no more than this is believed; else the fine scales alone would decide about the coarse ones.
@@ -33,12 +37,22 @@ public sealed class NoiseLaws
             }
         }
 
+        // Short noise on an undulating surface: neither length alone explains both the fine and the coarse residuals.
+        for (int i = 0; i < lengths / 2; i++)
+        {
+            double length = finestM * Math.Pow(longestM / finestM, (double)i / (lengths - 1));
+            foreach (double share in WaveShares)
+            {
+                all.Add(new NoiseCandidate(CorrelationShape.Exponential, length, 0.1, share, longestM / 2));
+                all.Add(new NoiseCandidate(CorrelationShape.Exponential, length, 0.1, share, 2 * longestM));
+            }
+        }
+
         Candidates = [.. all];
         table = new double[all.Count * bins.Count];
         for (int c = 0; c < all.Count; c++)
         {
-            for (int b = 0; b < bins.Count; b++)
-                table[(c * bins.Count) + b] = (1 - all[c].WhiteShare) * Correlation.At(all[c].Shape, bins.DistanceM[b], all[c].LengthM);
+            for (int b = 0; b < bins.Count; b++) table[(c * bins.Count) + b] = all[c].At(bins.DistanceM[b]);
         }
     }
 
@@ -90,7 +104,6 @@ public sealed class NoiseLaws
     /// <summary>Expected squares of a patch's waves under the mean law of the scene, for errors of variance 1.</summary>
     public double[] ExpectedSquares(PatchRecord patch, NoisePrior prior)
     {
-        int columns = patch.Waves + 1;
         double white = 0;
         var covariance = new double[bins.Count];
         for (int c = 0; c < Candidates.Length; c++)
@@ -103,7 +116,7 @@ public sealed class NoiseLaws
         for (int k = 0; k < patch.Waves; k++)
         {
             expected[k] = white * patch.WhiteShare[k];
-            for (int b = 0; b < bins.Count; b++) expected[k] += covariance[b] * patch.LagSums[(b * columns) + k];
+            for (int b = 0; b < bins.Count; b++) expected[k] += covariance[b] * patch.LagSums[(b * PatchRecord.Lanes) + k];
         }
 
         return expected;
@@ -129,19 +142,23 @@ public sealed class NoiseLaws
 
     private void WeighOne(PatchRecord patch, int law, double variance, double freedom, NoiseLikelihood result)
     {
-        int columns = patch.Waves + 1;
         double white = Candidates[law].WhiteShare;
-        Span<double> expected = stackalloc double[columns];
-        for (int k = 0; k < patch.Waves; k++) expected[k] = white * patch.WhiteShare[k];
         double pairs = patch.WhiteShare[0] * ((white * white) + (2 * white * (1 - white)));   // sum of squared correlations
+        Span<Vector256<double>> sum = stackalloc Vector256<double>[PatchRecord.Lanes / 4];
+        sum.Clear();
+        ReadOnlySpan<Vector256<double>> rows = MemoryMarshal.Cast<double, Vector256<double>>(patch.LagSums.AsSpan());
         for (int b = 0; b < bins.Count; b++)
         {
             double value = table[(law * bins.Count) + b];
-            if (value < 1e-9) continue;
-            ReadOnlySpan<double> row = patch.LagSums.AsSpan(b * columns, columns);
-            for (int k = 0; k < columns; k++) expected[k] += value * row[k];
-            pairs += value * value * row[0];
+            if (value < 1e-9) break;   // every law falls with distance
+            ReadOnlySpan<Vector256<double>> row = rows.Slice(b * sum.Length, sum.Length);
+            for (int k = 0; k < sum.Length; k++) sum[k] += value * row[k];
+            pairs += value * value * patch.LagSums[b * PatchRecord.Lanes];
         }
+
+        Span<double> expected = stackalloc double[PatchRecord.Lanes];
+        for (int k = 0; k < expected.Length; k++) expected[k] = sum[k / 4][k % 4];
+        for (int k = 0; k < patch.Waves; k++) expected[k] += white * patch.WhiteShare[k];
 
         double log = 0, power = freedom * variance, degrees = freedom, inWaves = 0, inWavesSquared = 0, seen = 0;
         for (int k = 0; k < patch.Waves; k++)
@@ -176,7 +193,7 @@ public sealed class NoiseLaws
         double u = patch.SpreadU, v = patch.SpreadV;
         result.SlopeU[law] = posterior * Math.Max(expected[1], 1e-12) / (u * u);
         result.SlopeV[law] = posterior * Math.Max(expected[2], 1e-12) / (v * v);
-        result.SlopeUv[law] = posterior * expected[patch.Waves] / (u * v);
+        result.SlopeUv[law] = posterior * expected[PatchRecord.CrossLane] / (u * v);
     }
 
     // The radius that holds 95 % of a mixture of bivariate t laws, over that of the normal law with the same mean variance.

@@ -16,21 +16,20 @@ public sealed partial class PatchModes
         int cells = nx * ny;
         for (int c = 0; c < cells; c++)
         {
-            for (int k = 0; k < waves; k++) wave[(c * Lanes) + k] *= weight[c];
+            for (int k = 0; k < waves; k++) wave[(c * PatchRecord.Lanes) + k] *= weight[c];
         }
 
-        int columns = waves + 1;
-        var sums = new double[bins.Count * columns];
-        Span<double> at = stackalloc double[Lanes];
+        var sums = new double[bins.Count * PatchRecord.Lanes];
+        Span<double> at = stackalloc double[PatchRecord.Lanes];
         for (int dy = 0; dy < ny; dy++)
         {
             for (int dx = dy == 0 ? 0 : 1 - nx; dx < nx; dx++)
             {
                 double cross = SumOffset(dx, dy, at);
                 double times = dx == 0 && dy == 0 ? 1 : 2;   // each pair once, counted both ways
-                at[waves] = cross;
-                for (int k = 0; k < columns; k++) at[k] *= times / (total * total);
-                Spread(Math.Abs(dx), dy, at[..columns], sums);
+                at[PatchRecord.CrossLane] = cross;
+                for (int k = 0; k < at.Length; k++) at[k] *= times / (total * total);
+                Spread(Math.Abs(dx), dy, at, sums);
             }
         }
 
@@ -39,10 +38,10 @@ public sealed partial class PatchModes
 
     private double SumOffset(int dx, int dy, Span<double> at)
     {
-        Span<Vector256<double>> sum = stackalloc Vector256<double>[Lanes / 4];
+        Span<Vector256<double>> sum = stackalloc Vector256<double>[PatchRecord.Lanes / 4];
         sum.Clear();
         double cross = 0;
-        ReadOnlySpan<Vector256<double>> all = MemoryMarshal.Cast<double, Vector256<double>>(wave.AsSpan(0, nx * ny * Lanes));
+        ReadOnlySpan<Vector256<double>> all = MemoryMarshal.Cast<double, Vector256<double>>(wave.AsSpan(0, nx * ny * PatchRecord.Lanes));
         int fromX = Math.Max(0, -dx), toX = Math.Min(nx, nx - dx);
         for (int y = 0; y + dy < ny; y++)
         {
@@ -50,13 +49,13 @@ public sealed partial class PatchModes
             {
                 int c = (y * nx) + x, o = ((y + dy) * nx) + x + dx;
                 if (weight[c] == 0 || weight[o] == 0) continue;
-                ReadOnlySpan<Vector256<double>> a = all.Slice(c * (Lanes / 4), Lanes / 4), b = all.Slice(o * (Lanes / 4), Lanes / 4);
-                for (int k = 0; k < Lanes / 4; k++) sum[k] += a[k] * b[k];
-                cross += ((wave[(c * Lanes) + 1] * wave[(o * Lanes) + 2]) + (wave[(c * Lanes) + 2] * wave[(o * Lanes) + 1])) / 2;
+                ReadOnlySpan<Vector256<double>> a = all.Slice(c * (PatchRecord.Lanes / 4), PatchRecord.Lanes / 4), b = all.Slice(o * (PatchRecord.Lanes / 4), PatchRecord.Lanes / 4);
+                for (int k = 0; k < PatchRecord.Lanes / 4; k++) sum[k] += a[k] * b[k];
+                cross += ((wave[(c * PatchRecord.Lanes) + 1] * wave[(o * PatchRecord.Lanes) + 2]) + (wave[(c * PatchRecord.Lanes) + 2] * wave[(o * PatchRecord.Lanes) + 1])) / 2;
             }
         }
 
-        for (int k = 0; k < Lanes; k++) at[k] = sum[k / 4][k % 4];
+        for (int k = 0; k < PatchRecord.Lanes; k++) at[k] = sum[k / 4][k % 4];
         return cross;
     }
 

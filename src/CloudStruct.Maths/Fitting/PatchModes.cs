@@ -7,8 +7,10 @@ public sealed partial class PatchModes
     /// <summary>Most waves: all polynomials up to degree 5.</summary>
     public const int MostWaves = 21;
 
-    private const int Lanes = 24;   // waves, one product column, padded to whole vectors
-    private const int MostCells = 480;
+    private const int MostDegree = 5;
+
+    // Seventeen cells a side carry the fifth degree; the time goes with the square.
+    private const int MostCells = 320;
 
     private readonly LagBins bins;
     private readonly double finestM;
@@ -65,7 +67,7 @@ public sealed partial class PatchModes
             double q = 0, s = 0;
             for (int c = 0; c < nx * ny; c++)
             {
-                double f = wave[(c * Lanes) + k];
+                double f = wave[(c * PatchRecord.Lanes) + k];
                 q += residual[c] * f;
                 s += square[c] * f * f;
             }
@@ -123,7 +125,7 @@ public sealed partial class PatchModes
             weight = new double[cells];
             square = new double[cells];
             residual = new double[cells];
-            wave = new double[cells * Lanes];
+            wave = new double[cells * PatchRecord.Lanes];
         }
 
         Array.Clear(weight, 0, cells);
@@ -157,17 +159,17 @@ public sealed partial class PatchModes
             if (weight[c] > 0) occupied++;
         }
 
-        Array.Clear(wave, 0, cells * Lanes);
+        Array.Clear(wave, 0, cells * PatchRecord.Lanes);
+        double[] alongX = Legendre(nx), alongY = Legendre(ny);
         int most = Math.Min(MostWaves, occupied / 2), k = 0;
-        for (int degree = 0; degree <= 5; degree++)
+        for (int degree = 0; degree <= MostDegree; degree++)
         {
             for (int j = 0; j <= degree && k < most; j++)
             {
                 for (int c = 0; c < cells; c++)
                 {
-                    if (!(weight[c] > 0)) continue;
-                    double x = (((c % nx) + 0.5) * 2 / nx) - 1, y = (((c / nx) + 0.5) * 2 / ny) - 1;
-                    wave[(c * Lanes) + k] = Math.Pow(x, degree - j) * Math.Pow(y, j);
+                    if (weight[c] > 0)
+                        wave[(c * PatchRecord.Lanes) + k] = alongX[(c % nx * (MostDegree + 1)) + degree - j] * alongY[(c / nx * (MostDegree + 1)) + j];
                 }
 
                 if (Orthonormal(k, total)) k++;
@@ -178,31 +180,51 @@ public sealed partial class PatchModes
         return k;
     }
 
+    // Legendre polynomials of the cells' middles on -1 to 1: nearly orthogonal already on a full rectangle.
+    private static double[] Legendre(int n)
+    {
+        var p = new double[n * (MostDegree + 1)];
+        for (int i = 0; i < n; i++)
+        {
+            double x = ((i + 0.5) * 2 / n) - 1;
+            Span<double> row = p.AsSpan(i * (MostDegree + 1), MostDegree + 1);
+            row[0] = 1;
+            row[1] = x;
+            for (int d = 2; d <= MostDegree; d++) row[d] = ((((2 * d) - 1) * x * row[d - 1]) - ((d - 1) * row[d - 2])) / d;
+        }
+
+        return p;
+    }
+
     private bool Orthonormal(int k, double total)
     {
-        double before = Norm2(k, total);
-        for (int twice = 0; twice < 2; twice++)
+        double before = Norm2(k, total), start = before;
+        for (int pass = 0; pass < 2; pass++)
         {
             for (int j = 0; j < k; j++)
             {
                 double dot = 0;
-                for (int c = 0; c < nx * ny; c++) dot += weight[c] * wave[(c * Lanes) + j] * wave[(c * Lanes) + k];
+                for (int c = 0; c < nx * ny; c++) dot += weight[c] * wave[(c * PatchRecord.Lanes) + j] * wave[(c * PatchRecord.Lanes) + k];
                 dot /= total;
-                for (int c = 0; c < nx * ny; c++) wave[(c * Lanes) + k] -= dot * wave[(c * Lanes) + j];
+                for (int c = 0; c < nx * ny; c++) wave[(c * PatchRecord.Lanes) + k] -= dot * wave[(c * PatchRecord.Lanes) + j];
             }
+
+            double after = Norm2(k, total);
+            if (!(after > 1e-6 * start)) return false;
+            bool steady = after > 0.01 * before;   // little was lost: rounding cannot have spoilt it
+            before = after;
+            if (steady) break;
         }
 
-        double after = Norm2(k, total);
-        if (!(after > 1e-6 * before)) return false;
-        double scale = 1 / Math.Sqrt(after);
-        for (int c = 0; c < nx * ny; c++) wave[(c * Lanes) + k] *= scale;
+        double scale = 1 / Math.Sqrt(before);
+        for (int c = 0; c < nx * ny; c++) wave[(c * PatchRecord.Lanes) + k] *= scale;
         return true;
     }
 
     private double Norm2(int k, double total)
     {
         double sum = 0;
-        for (int c = 0; c < nx * ny; c++) sum += weight[c] * wave[(c * Lanes) + k] * wave[(c * Lanes) + k];
+        for (int c = 0; c < nx * ny; c++) sum += weight[c] * wave[(c * PatchRecord.Lanes) + k] * wave[(c * PatchRecord.Lanes) + k];
         return sum / total;
     }
 

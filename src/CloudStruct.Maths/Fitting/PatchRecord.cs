@@ -6,6 +6,12 @@ namespace CloudStruct.Maths.Fitting;
 /// of wave k is w WhiteShare[k] + sum over bins b of C(d_b) LagSums[b, k].</remarks>
 public sealed record PatchRecord
 {
+    /// <summary>Columns of <see cref="LagSums"/>: waves, then one product, padded to whole vectors.</summary>
+    public const int Lanes = 24;
+
+    /// <summary>The column that holds the product of waves 1 and 2.</summary>
+    public const int CrossLane = 21;
+
     /// <summary>Waves, the three of the plane included.</summary>
     public int Waves { get; init; }
 
@@ -15,7 +21,7 @@ public sealed record PatchRecord
     /// <summary>Square of a wave per unit of white variance.</summary>
     public double[] WhiteShare { get; init; } = [];
 
-    /// <summary>Row-major, bin by wave; one more column holds the product of waves 1 and 2.</summary>
+    /// <summary>Row-major, bin by <see cref="Lanes"/>: columns are waves, and the product of waves 1 and 2 at <see cref="CrossLane"/>.</summary>
     public double[] LagSums { get; init; } = [];
 
     /// <summary>Mean square of the residuals [m²].</summary>

@@ -43,7 +43,7 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
 
         double[] spread = Refusing.Spreads(surface, pieces);
         scatter = SceneNoise.Scatter(surface, pieces, spread, scatter);
-        noise = SceneNoise.Learn(surface, pieces, spread, scatter, 400);
+        noise = SceneNoise.Learn(surface, pieces, spread, scatter, 200);
         context.Progress(0.8);
         FaceSet found = Report(surface, pieces, spread, noise, input, context);
         context.Progress(1);

@@ -34,11 +34,17 @@ internal sealed class Joining
     {
         int[] parent = Cut(pieces);
         var sums = Sums(pieces);
+        List<(int A, int B)> near = Nearness.Pairs(surface, pieces.Label, surface.GapM);
+        var into = new int[pieces.Count];
+        for (int k = 0; k < into.Length; k++) into[k] = k;
         for (int round = 0; round < 5; round++)
         {
-            if (!JoinOnce(pieces, parent, sums)) break;
+            if (!JoinOnce(pieces, parent, sums, near, into)) break;
+            near = [.. near.Select(p => (A: into[p.A], B: into[p.B])).Where(p => p.A != p.B).Select(p => p.A < p.B ? p : (p.B, p.A)).Distinct()];
+            near.Sort();
         }
 
+        for (int i = 0; i < pieces.Label.Length; i++) pieces.Label[i] = into[pieces.Label[i]];
         pieces.Compact(surface.SmallestPoints);
         pieces.Refit(surface, scatterM, 3);
     }
@@ -93,33 +99,31 @@ internal sealed class Joining
         return sums;
     }
 
-    private bool JoinOnce(Pieces pieces, int[] parent, Moments[] sums)
+    // Joins each label with at most one other, the surest pairs first.
+    private bool JoinOnce(Pieces pieces, int[] parent, Moments[] sums, List<(int A, int B)> near, int[] into)
     {
         var candidates = new List<(double Cost, int A, int B)>();
-        foreach ((int a, int b) in Nearness.Pairs(surface, pieces.Label, surface.GapM))
+        foreach ((int a, int b) in near)
         {
             double cost = Cost(parent[a] == parent[b], pieces.Planes[a], pieces.Planes[b], sums[a], sums[b]);
             if (cost < Limit) candidates.Add((cost, a, b));
         }
 
         candidates.Sort();
-        var into = new int[pieces.Count];
         var busy = new bool[pieces.Count];
-        for (int k = 0; k < into.Length; k++) into[k] = k;
-        bool any = false;
+        var step = new Dictionary<int, int>();
         foreach ((_, int a, int b) in candidates)
         {
             if (busy[a] || busy[b]) continue;
-            busy[a] = busy[b] = any = true;
+            busy[a] = busy[b] = true;
             (int keep, int drop) = sums[a].Weight >= sums[b].Weight ? (a, b) : (b, a);
-            into[drop] = keep;
+            step[drop] = keep;
             sums[keep].Add(sums[drop]);
             pieces.Planes[keep] = PlaneFit.From(sums[keep]);
         }
 
-        if (!any) return false;
-        for (int i = 0; i < pieces.Label.Length; i++) pieces.Label[i] = into[pieces.Label[i]];
-        return true;
+        for (int k = 0; k < into.Length; k++) into[k] = step.GetValueOrDefault(into[k], into[k]);
+        return step.Count > 0;
     }
 
     private double Cost(bool sameParent, PlaneFit a, PlaneFit b, in Moments sumA, in Moments sumB)

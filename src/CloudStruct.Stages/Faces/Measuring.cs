@@ -9,6 +9,15 @@ namespace CloudStruct.Stages.Faces;
 /// <summary>One face as it is reported: attitude, region, size, scatter, outline. One per worker.</summary>
 internal sealed class Measuring
 {
+    // Mean of the lower three quarters of squares of normal deviates: P(chi-square of 3 < 1.3233) / 0.75, as 1.3233 is the
+    // upper quartile of chi-square of 1.
+    private const double LowerThreeQuarters = 0.3685;
+
+    // A strip along the outline is less sure than noise alone makes it: edges are worn, and some of its points are the
+    // neighbour's. Each side of it is taken to be off by so much of the scatter, over so many spacings, independently.
+    private const double RimOffsetOverScatter = 0.3;
+    private const double RimSpacings = 1.5;
+
     private readonly Surface surface;
     private readonly Pieces pieces;
     private readonly SceneNoise noise;
@@ -64,9 +73,18 @@ internal sealed class Measuring
         Vec3 e1 = (along * cos) + (across * sin), e2 = (across * cos) - (along * sin);
 
         // A slope s along e tips the normal by -s e.
-        Symmetric3 covariance = Symmetric3.Outer(e1, e.VarianceU) + Symmetric3.Outer(e2, e.VarianceV)
+        Symmetric3 covariance = Symmetric3.Outer(e1, e.VarianceU + Rim(record.SpreadU)) + Symmetric3.Outer(e2, e.VarianceV + Rim(record.SpreadV))
             + Symmetric3.Outer((e1 + e2) / Math.Sqrt(2), e.Covariance) + Symmetric3.Outer((e1 - e2) / Math.Sqrt(2), -e.Covariance);
         return covariance * (e.Stretch * e.Stretch);
+    }
+
+    // A side a fraction f = width / extent of the points, off by d at half the extent, tilts the plane by f d (extent / 2) /
+    // spread²; two sides; extent² = 12 spread² for an even cover.
+    private double Rim(double spreadM)
+    {
+        double share = RimSpacings * surface.SpacingM / (Math.Sqrt(12) * spreadM), off = RimOffsetOverScatter * noise.ScatterM;
+        double tilt = Math.Min(share, 0.5) * off * Math.Sqrt(3) / spreadM;
+        return 2 * tilt * tilt;
     }
 
     // Residual power, and the power of the residual waves, against what the noise of the scene puts there.
@@ -74,14 +92,19 @@ internal sealed class Measuring
     {
         if (record is null || record.Waves <= 3) return new Roughness(rms / noise.ScatterM, 1, 0);
         double[] expected = noise.Laws.ExpectedSquares(record, noise.Prior);
-        double variance = noise.ScatterM * noise.ScatterM, ratio = 0, excess = 0;
+        double variance = noise.ScatterM * noise.ScatterM, excess = 0;
+        var ratio = new double[record.Waves - 3];
         for (int k = 3; k < record.Waves; k++)
         {
-            ratio += record.Squares[k] / (variance * Math.Max(expected[k], 1e-9));
+            ratio[k - 3] = record.Squares[k] / (variance * Math.Max(expected[k], 1e-9));
             excess += record.Squares[k] - (variance * expected[k]);
         }
 
-        return new Roughness(Math.Sqrt(record.MeanSquare / variance), ratio / (record.Waves - 3), Math.Sqrt(Math.Max(0, excess)));
+        // The largest quarter is left out: a margin that undulates over metres is strong in few waves, weathered rock in all.
+        Array.Sort(ratio);
+        int kept = ratio.Length - (ratio.Length / 4);
+        double power = ratio.AsSpan(0, kept).ToArray().Average() / (kept < ratio.Length ? LowerThreeQuarters : 1);
+        return new Roughness(Math.Sqrt(record.MeanSquare / variance), power, Math.Sqrt(Math.Max(0, excess)));
     }
 
     private (double Length, double Height) Extents(int label, Vec3 normal, Vec3 origin, out Vec3 middle)

@@ -20,9 +20,8 @@ public class NoiseLawsTests(ITestOutputHelper output)
         double[] one = [.. u.Select(_ => 1.0)];
         var bins = new LagBins(0.02, 5);
         PatchRecord p = new PatchModes(bins, 0.1).Record(u, v, new double[400], one)!;
-        int columns = p.Waves + 1;
         double sum = 0;
-        for (int b = 0; b < bins.Count; b++) sum += Math.Exp(-bins.DistanceM[b] / length) * p.LagSums[(b * columns) + 1];
+        for (int b = 0; b < bins.Count; b++) sum += Math.Exp(-bins.DistanceM[b] / length) * p.LagSums[(b * PatchRecord.Lanes) + 1];
 
         Symmetric3 exact = PlaneErrors.Sandwich(u, v, d => Math.Exp(-d / length));
         Assert.Equal(1, sum / (p.SpreadU * p.SpreadU) / exact.Yy, 0.04);
