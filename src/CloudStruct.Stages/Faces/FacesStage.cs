@@ -41,6 +41,8 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
         new Joining(surface, scatter, noise.LengthM).Into(pieces);
         context.Progress(0.7);
 
+        Refusing.Spreads(surface, pieces, out double usual);
+        new Parting(surface, scatter).Into(pieces, usual);
         double[] spread = Refusing.Spreads(surface, pieces);
         scatter = SceneNoise.Scatter(surface, pieces, spread, scatter);
         noise = SceneNoise.Learn(surface, pieces, spread, scatter, 200);

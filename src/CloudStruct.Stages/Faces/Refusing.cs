@@ -17,9 +17,16 @@ internal static class Refusing
     public static bool IsWeathered(double spread, Roughness rough) =>
         (SpreadWeight * Log(spread)) + (ScatterWeight * Log(rough.Scatter)) + (WaveWeight * Log(rough.WavePower)) > Limit;
 
+    /// <summary>The same for a place, by the local means of squared spread and squared scatter over the usual.</summary>
+    public static bool IsWorn(double spreadSquared, double scatterSquared, double limit) =>
+        (SpreadWeight / 2 * Log(spreadSquared)) + (ScatterWeight / 2 * Log(scatterSquared)) > limit;
+
     /// <summary>Rms sine between local normals and plane per label, over the area-weighted median of the scene's faces of middle
     /// size and more (of all when there are none). Needs sorted pieces.</summary>
-    public static double[] Spreads(Surface surface, Pieces pieces)
+    public static double[] Spreads(Surface surface, Pieces pieces) => Spreads(surface, pieces, out _);
+
+    /// <summary>The same, with that median.</summary>
+    public static double[] Spreads(Surface surface, Pieces pieces, out double usual)
     {
         var spread = new double[pieces.Count];
         BlockParallel.For(
@@ -31,7 +38,7 @@ internal static class Refusing
                 for (int k = Math.Max(1, from); k < to; k++) spread[k] = Spread(surface, pieces, k);
             },
             length: 16);
-        double usual = Usual(surface, pieces, spread);
+        usual = Usual(surface, pieces, spread);
         for (int k = 1; k < spread.Length; k++) spread[k] = usual > 0 ? spread[k] / usual : 1;
         return spread;
     }

@@ -76,6 +76,20 @@ public class FacesStageTests
         Assert.Equal(2, found.Faces.Count(f => f.AreaM2 > 2.5));
     }
 
+    [Fact]
+    public void A_worn_bench_in_one_plane_with_a_sound_face_is_left_out_of_it()
+    {
+        FaceSet found = Run(new PatchCloud()
+            .Add(default, new Attitude(90, 30), 1.5, 1.5, 0.004)
+            .Add(new Vec3(1.5, 0, 0), new Attitude(90, 30), 1.5, 1.5, 0.014, 0.3)
+            .Add(new Vec3(0, 5, 0), new Attitude(110, 80), 2, 1.5, 0.004)
+            .Add(new Vec3(5, 5, 0), new Attitude(20, 80), 2, 1.5, 0.004)
+            .Describe());
+        Face sound = found.Faces.Where(f => f.Attitude.DipDeg < 45).MaxBy(f => f.AreaM2)!;
+        Assert.InRange(sound.AreaM2, 1.9, 2.7);
+        Assert.InRange(sound.Middle.X, -0.2, 0.25);
+    }
+
     [Theory]
     [InlineData(0)]
     [InlineData(1)]
