@@ -9,8 +9,8 @@ public sealed partial class PatchModes
 
     private const int MostDegree = 5;
 
-    // Seventeen cells a side carry the fifth degree; the time goes with the square.
-    private const int MostCells = 320;
+    // Twenty cells a side carry the fifth degree; the time goes with the square.
+    private const int MostCells = 400;
 
     private readonly LagBins bins;
     private readonly double finestM;

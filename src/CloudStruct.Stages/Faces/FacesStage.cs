@@ -54,8 +54,7 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
 
     private static double FirstScatter(DescribedCloud input, Surface surface)
     {
-        double least = Math.Max(0.02 * surface.SpacingM, 1e-4);   // float coordinates and fault-free made-up clouds
-        return double.IsFinite(input.NoiseM) ? Math.Max(least, FirstScatterFactor * input.NoiseM) : least;
+        return double.IsFinite(input.NoiseM) ? Math.Max(surface.LeastScatterM, FirstScatterFactor * input.NoiseM) : surface.LeastScatterM;
     }
 
     private FaceSet Report(Surface surface, Pieces pieces, double[] spread, SceneNoise noise, DescribedCloud input, StageContext context)

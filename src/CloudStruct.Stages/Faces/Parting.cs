@@ -9,7 +9,7 @@ namespace CloudStruct.Stages.Faces;
 internal sealed class Parting
 {
     // Local ratios are means over few independent errors: the limit lies above that of whole faces.
-    private const double Limit = 1.8;
+    private const double Limit = 2.2;
     private const int Smoothings = 3;
 
     private readonly Surface surface;
@@ -85,7 +85,7 @@ internal sealed class Parting
         return smooth;
     }
 
-    // Worn splinters stay with what is around them.
+    // Worn parts smaller than the smallest face stay with what is around them.
     private void Parts(Pieces pieces, bool[] worn)
     {
         int[] label = pieces.Label;
@@ -95,7 +95,7 @@ internal sealed class Parting
         {
             if (!worn[s] || seen[s]) continue;
             Collect(s, label, worn, seen, part);
-            if (part.Count >= surface.SmallestPoints) continue;
+            if (part.Count >= 2 * surface.SmallestPoints) continue;
             foreach (int i in part) worn[i] = false;
         }
 

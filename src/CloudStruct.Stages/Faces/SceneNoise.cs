@@ -40,7 +40,7 @@ internal sealed class SceneNoise
     /// <summary>Scatter about large faces: the area-weighted median of their own [m].</summary>
     /// <param name="surface">The points.</param>
     /// <param name="pieces">Labels, sorted.</param>
-    /// <param name="spread">Spread of the normals per label over the usual (<see cref="Refusing.Spreads"/>).</param>
+    /// <param name="spread">Spread of the normals per label over the usual (see <see cref="Refusing"/>).</param>
     /// <param name="scatterM">The value so far [m].</param>
     public static double Scatter(Surface surface, Pieces pieces, double[] spread, double scatterM)
     {
@@ -66,7 +66,7 @@ internal sealed class SceneNoise
                     }
                 },
                 length: 4);
-            s = Middle(own);
+            s = Math.Max(surface.LeastScatterM, Middle(own));
             if (Math.Abs(s - now) < 0.02 * now) break;
         }
 

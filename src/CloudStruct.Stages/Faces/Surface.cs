@@ -52,6 +52,10 @@ internal sealed class Surface
 
     public double BendCosine { get; }
 
+    /// <summary>Scatter below which none is believed [m]: meshes and made-up clouds have none, and would leave a band in which
+    /// only their own triangles fit.</summary>
+    public double LeastScatterM => 0.1 * SpacingM;
+
     /// <summary>Half the points of the smallest face: what is smaller while growing is let go.</summary>
     public int SmallestPoints { get; }
 
