@@ -37,7 +37,7 @@ internal sealed class PatchCloud(double spacingM = 0.02, ulong seed = 1) : IPiec
         Vec3 n = attitude.UpwardNormal();
         (Vec3 along, Vec3 down) = PoleRegions.StrikeAndDip(n);
         var draws = new Draws(seed, 1, (ulong)places.Count);
-        int nu = (int)(lengthM / spacingM), nv = (int)(heightM / spacingM);
+        int nu = (int)Math.Round(lengthM / spacingM), nv = (int)Math.Round(heightM / spacingM);
         (double K, double L, double Phase)[] waves = [.. Enumerable.Range(0, 40).Select(_ =>
             (2 * Math.PI / waveM * draws.NextNormal(), 2 * Math.PI / waveM * draws.NextNormal(), 2 * Math.PI * draws.NextUnit()))];
         for (int i = 0; i < nu * nv; i++)
