@@ -42,7 +42,14 @@ public sealed class WidthStudy : IStudy
         double contactSeconds = clock.Elapsed.TotalSeconds;
         WidthRecord width = new WidthStage().Run(new WidthInput(scene.Described, scene.Classes, contacts), new WidthSettings(), StageContext.Plain());
         foreach (WidthScore s in scores) s.Add(scene.Outcrop, contacts, width);
-        if (Environment.GetEnvironmentVariable("WIDTH_ROWS") is not null) Details(contacts, width, scene);
+        if (Environment.GetEnvironmentVariable("WIDTH_ROWS") is not null)
+        {
+            Details(contacts, width, scene);
+            contacts = new ContactsStage().Run(new ContactsInput(scene.Described, scene.Classes, none, []), new ContactSettings { RefineByColour = false }, StageContext.Plain());
+            width = new WidthStage().Run(new WidthInput(scene.Described, scene.Classes, contacts), new WidthSettings(), StageContext.Plain());
+            var alt = new WidthScore(); alt.Add(scene.Outcrop, contacts, width);
+            Console.WriteLine("  unrefined " + Line(alt));
+        }
         return clock.Elapsed.TotalSeconds;
     }
 
@@ -50,7 +57,7 @@ public sealed class WidthStudy : IStudy
     {
         string stations = string.Join(" ", s.Stations.OrderBy(p => p.Key).Select(p => Invariant($"{p.Key}:{p.Value}")));
         return Invariant(
-            $"width % med {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.5):0.00} p95 {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.95):0.00} bias {100 * s.WidthErrors.DefaultIfEmpty(double.NaN).Average():0.00} in95 {Inside(s.WidthRatios):0.000}; contact deg med {Quantile(s.ContactErrorsDeg, 0.5):0.00} p95 {Quantile(s.ContactErrorsDeg, 0.95):0.00} in95 {Inside(s.ContactRatios):0.000}; plane {s.Rows.Plane}/{s.Rows.All}; length {s.MeasuredM / s.ShownM:0.00}; hidden {s.HiddenMeasured}; {stations}");
+            $"width % med {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.5):0.00} p95 {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.95):0.00} bias {100 * s.WidthErrors.DefaultIfEmpty(double.NaN).Average():0.00} in95 {Inside(s.WidthRatios):0.000}; contact deg med {Quantile(s.ContactErrorsDeg, 0.5):0.00} p95 {Quantile(s.ContactErrorsDeg, 0.95):0.00} in95 {Inside(s.ContactRatios):0.000} (mean plane {Inside(s.PlaneRatios):0.000}); plane {s.Rows.Plane}/{s.Rows.All}; length {s.MeasuredM / s.ShownM:0.00}; hidden {s.HiddenMeasured}; trace cm bias {100 * s.TraceOffsetsM.DefaultIfEmpty(double.NaN).Average():0.00} med {100 * Quantile(s.TraceOffsetsM.Select(Math.Abs), 0.5):0.00} p95 {100 * Quantile(s.TraceOffsetsM.Select(Math.Abs), 0.95):0.00}; {stations}");
     }
 
     internal static double Quantile(IEnumerable<double> values, double share)

@@ -57,7 +57,11 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
             edges, Chainage.Direction(input.Baseline), cloud.Frame.TurnDeg, LevelTrend(pieces), cloud.SpacingM, settings);
         if (!tracker.Follow(pieces)) return null;
         var ground = new GroundPlanes(cloud, tracker);
-        return new DikeTracer(body.Dike, tracker, tracker.Cells, cloud.Frame, ground.NormalAt, settings);
+        TraceCell[] cells = settings.RefineByColour && input.Described.LogRedGreen.Length == cloud.Count && body.ByColour
+            ? new ColourEdges(input.Described, input.Classes, tracker).Refine(tracker.Cells)
+            : tracker.Cells;
+        cells = BracketedCells.Added(cells, cloud, input.Classes, body.Dike, tracker);
+        return new DikeTracer(body.Dike, tracker, cells, cloud.Frame, ground.NormalAt, settings);
     }
 
     // Direction in which a nearly level sheet is longest: from the first to the last window.

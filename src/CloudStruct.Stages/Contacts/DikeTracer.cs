@@ -30,13 +30,14 @@ internal sealed partial class DikeTracer
     {
         Dike = dike;
         this.tracker = tracker;
-        this.cells = cells;
+        this.cells = [.. cells.OrderBy(c => c.At.S).ThenBy(c => c.At.T)];
+        cells = this.cells;
         this.frame = frame;
         this.settings = settings;
         this.groundAt = groundAt;
         FromS = cells[0].At.S;
         ToS = cells[^1].At.S;
-        noise = TraceNoise.Estimate(Apart(), tracker.CellM, settings.EdgeErrorM / 3);
+        noise = TraceNoise.Estimate(Apart(), tracker.CellM, tracker.WindowM, settings.EdgeErrorM / 3);
         double step = Math.Clamp(tracker.WindowM / FitsPerWindow, 0.5, 5);
         int count = Math.Max(1, (int)Math.Round((ToS - FromS) / step));
         Stretches = new DikeStretch[count + 1];

@@ -8,6 +8,7 @@ namespace CloudStruct.Stages.Contacts;
 internal sealed partial class MarginTracker
 {
     private const double ScaleFloorM = 0.015;
+    private const double StrayReachM = 0.9;
 
     // Means over cells of the map grid, each margin apart.
     private TraceCell[] CellsOf(SheetEdge[] placed, double corridor)
@@ -52,8 +53,36 @@ internal sealed partial class MarginTracker
             if (FitAt(s, vote) is { } piece) pieces.Add(piece);
         }
 
-        Cells = [.. Cells.Where((_, i) => vote[i] > 0.05)];
+        Cells = [.. Cells.Where((_, i) => vote[i] > 0.1)];
         return [.. pieces];
+    }
+
+    // A margin runs on smoothly: a cell far from what its neighbours on the same margin say is a corner of wrong labels.
+    private TraceCell[] WithoutStrays()
+    {
+        var keep = new List<TraceCell>();
+        var near = new List<double>();
+        int lo = 0;
+        for (int i = 0; i < Cells.Length; i++)
+        {
+            TraceCell c = Cells[i];
+            while (Cells[lo].At.S < c.At.S - StrayReachM) lo++;
+            near.Clear();
+            for (int k = lo; k < Cells.Length && Cells[k].At.S <= c.At.S + StrayReachM; k++)
+            {
+                if (k != i && Cells[k].Margin == c.Margin) near.Add(Guess.Distance(c.Margin, Cells[k].At));
+            }
+
+            if (near.Count >= 3)
+            {
+                double middle = Median([.. near]), spread = 1.4826 * Median([.. near.Select(d => Math.Abs(d - middle))]);
+                if (Math.Abs(Guess.Distance(c.Margin, c.At) - middle) > 3.5 * Math.Max(ScaleFloorM, spread)) continue;
+            }
+
+            keep.Add(c);
+        }
+
+        return [.. keep];
     }
 
     private SheetPiece? FitAt(double s0, double[] vote)

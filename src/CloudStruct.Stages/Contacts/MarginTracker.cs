@@ -64,7 +64,8 @@ internal sealed partial class MarginTracker
             pieces = next;
         }
 
-        return true;
+        Cells = WithoutStrays();
+        return Cells.Length >= 4;
     }
 
     private SheetEdge[] OnSheet()

@@ -7,6 +7,7 @@ namespace CloudStruct.Stages.Contacts;
 internal static class TraceLines
 {
     private const int LeastCells = 3;   // two cells side by side are as likely an island of wrong labels as a margin
+    private const double BridgedM = 1;  // what a person would bridge by eye: a tuft, a corner out of sight
 
     /// <summary>Polylines of one margin in order of chainage, broken where cells are missing.</summary>
     /// <param name="dike">Number of the dike.</param>
@@ -21,7 +22,7 @@ internal static class TraceLines
         var run = new List<TraceCell>();
         foreach (TraceCell c in cells.Where(c => c.Margin == margin))
         {
-            if (run.Count > 0 && c.At.S - run[^1].At.S > 2.4 * cellM)
+            if (run.Count > 0 && c.At.S - run[^1].At.S > Math.Max(BridgedM, 2.4 * cellM))
             {
                 if (run.Count >= LeastCells) yield return Line(dike, margin, run, cellM, sigmaM, chainageAt);
                 run.Clear();

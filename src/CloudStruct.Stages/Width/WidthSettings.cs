@@ -10,7 +10,7 @@ public sealed record WidthSettings : IStageSettings
     public double StationM { get; init; } = 1;
 
     /// <summary>A margin counts as seen at a station when its trace comes this close along strike [m].</summary>
-    public double SeenWithinM { get; init; } = 0.3;
+    public double SeenWithinM { get; init; } = 0.5;
 
     /// <summary>Error of each margin's place that averaging cannot take away [m]: blur of the colours, rounding of edges, a shift
     /// of the labels.</summary>

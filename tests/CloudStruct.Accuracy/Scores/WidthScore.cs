@@ -20,6 +20,12 @@ public sealed class WidthScore
     /// <summary>Those over their cones.</summary>
     public List<double> ContactRatios { get; } = [];
 
+    /// <summary>Angles between contact rows and the dike's mean plane over their cones: of sense where the dike does not bend.</summary>
+    public List<double> PlaneRatios { get; } = [];
+
+    /// <summary>Distances of trace vertices from the true margin, positive out of the dike [m].</summary>
+    public List<double> TraceOffsetsM { get; } = [];
+
     /// <summary>Stations by status.</summary>
     public Dictionary<StationStatus, int> Stations { get; } = [];
 
@@ -45,6 +51,15 @@ public sealed class WidthScore
             ShownM += d.Extent.ToM - d.Extent.FromM - d.Hidden.Sum(h => Math.Min(h.ToM, d.Extent.ToM) - Math.Max(h.FromM, d.Extent.FromM));
         }
 
+        foreach (MarginTrace t in contacts.Traces)
+        {
+            int at = Array.FindIndex(contacts.Dikes, d => d.Dike == t.Dike);
+            if (which[at] < 0) continue;
+            SimulatedDike dike = truth.Dikes[which[at]];
+            bool onA = (t.Margin == Margin.A) == Same(contacts.Dikes[at], dike);
+            TraceOffsetsM.AddRange(t.Points.Select(p => onA ? -dike.SignedFromA(p + origin) : dike.SignedFromB(p + origin)));
+        }
+
         foreach (Contact c in contacts.Contacts)
         {
             Rows = (Rows.All + 1, Rows.Plane + (c.Constraint == Constraint.Plane ? 1 : 0));
@@ -65,6 +80,7 @@ public sealed class WidthScore
             double error = Math.Acos(Math.Min(1, Math.Abs(mean.Unit().Dot(normal)))) * 180 / Math.PI;
             ContactErrorsDeg.Add(error);
             ContactRatios.Add(error / c.Region!.Cone95Deg);
+            PlaneRatios.Add(Math.Acos(Math.Min(1, Math.Abs(dike.Normal.Dot(normal)))) * 180 / Math.PI / c.Region!.Cone95Deg);
         }
 
         foreach (Station s in width.Stations)

@@ -69,7 +69,7 @@ public class ParallelPlanesTests
         Margin[] sides = sheet.Of(Of("A")[0]).Q < sheet.Of(Of("B")[0]).Q ? [Margin.A, Margin.B] : [Margin.B, Margin.A];
         TraceCell[] Cells(string margin, string? face) =>
             [.. Of(margin, face).Select(p => new TraceCell(margin == "A" ? sides[0] : sides[1], p, sheet.Of(p), 1))];
-        var noise = new TraceNoise(new CorrelatedNoise(0.02, 0.2, 0.9), 0);
+        var noise = new TraceNoise(new CorrelatedNoise(0.02, 0.2, 0.9), 0, 0, 1);
         TraceCell[] all = [.. Cells("A", null).Concat(Cells("B", null)).OrderBy(c => c.At.S)];
         double middle = all.Average(c => c.At.S);
         StretchFit both = StretchFit.Of(all, middle, noise, Vec3.Up)!;
