@@ -22,7 +22,7 @@ internal sealed class ColourEdges
     private const double Alike = 10;          // points that carry the news of one: blur, mottling, one picture for many
     private const double LeastContrast = 1;   // difference of the flanks in standard deviations below which labels stand
     private readonly MarginTracker tracker;
-    private readonly List<(double S, Vec3 Place, Vec3 Colour)> points = [];
+    private readonly List<(double S, Vec3 Place, Vec3 Colour, Vec3 Normal)> points = [];
 
     /// <summary>Gathers the rock about the margins. Needs a cloud with colour.</summary>
     public ColourEdges(DescribedCloud described, ClassifiedCloud classes, MarginTracker tracker)
@@ -37,7 +37,7 @@ internal sealed class ColourEdges
             if (at.S < tracker.Cells[0].At.S - 1 || at.S > tracker.Cells[^1].At.S + 1) continue;
             if (Math.Abs(tracker.Guess.Distance(Margin.A, at)) > 2 * ReachM && Math.Abs(tracker.Guess.Distance(Margin.B, at)) > 2 * ReachM) continue;
             var colour = new Vec3(described.LStar[i] / 100.0, described.LogRedGreen[i], described.LogBlueGreen[i]);
-            if (double.IsFinite(colour.X + colour.Y + colour.Z)) points.Add((at.S, p, colour));
+            if (double.IsFinite(colour.X + colour.Y + colour.Z)) points.Add((at.S, p, colour, described.Normal(i)));
         }
 
         points.Sort((a, b) => a.S.CompareTo(b.S));
@@ -46,7 +46,7 @@ internal sealed class ColourEdges
     /// <summary>The cells, moved; in the same order.</summary>
     public TraceCell[] Refine(TraceCell[] cells)
     {
-        var near = new List<(double D, Vec3 Colour)>[cells.Length];
+        var near = new List<(double D, Vec3 Colour, double Weight)>[cells.Length];
         for (int i = 0; i < cells.Length; i++) near[i] = Near(cells[i]);
         var moved = new TraceCell[cells.Length];
         foreach (Margin margin in (Margin[])[Margin.A, Margin.B])
@@ -66,9 +66,9 @@ internal sealed class ColourEdges
 
     private Vec3 Outward(TraceCell c) => tracker.Sheet.At(c.At.S).Normal * (c.Margin == Margin.A ? -1 : 1);
 
-    private List<(double D, Vec3 Colour)> Near(TraceCell c)
+    private List<(double D, Vec3 Colour, double Weight)> Near(TraceCell c)
     {
-        var near = new List<(double D, Vec3 Colour)>();
+        var near = new List<(double D, Vec3 Colour, double Weight)>();
         Vec3 outward = Outward(c);
         int lo = 0, hi = points.Count;
         while (lo < hi)
@@ -81,7 +81,11 @@ internal sealed class ColourEdges
         for (; lo < points.Count && points[lo].S <= c.At.S + ReachM; lo++)
         {
             Vec3 d = points[lo].Place - c.Place;
-            if (d.Dot(d) <= ReachM * ReachM) near.Add((d.Dot(outward), points[lo].Colour));
+            if (d.Dot(d) > ReachM * ReachM) continue;
+            // A wall along the contact is all of one rock and at distance 0 give or take its noise: it would draw the step to
+            // its far side. Only surfaces that cross the margin tell where the colour changes.
+            double facing = points[lo].Normal.Dot(outward), weight = 1 - (facing * facing);
+            if (weight > 0.25) near.Add((d.Dot(outward), points[lo].Colour, weight));
         }
 
         near.Sort((a, b) => a.D.CompareTo(b.D));
@@ -89,15 +93,15 @@ internal sealed class ColourEdges
     }
 
     // Direction w with w·x = 1 on the mean dike colour and 0 on the mean host colour, and the scatter of that score.
-    private static (Vec3 Way, double Zero, double Sigma)? Contrast(IEnumerable<List<(double D, Vec3 Colour)>> cells)
+    private static (Vec3 Way, double Zero, double Sigma)? Contrast(IEnumerable<List<(double D, Vec3 Colour, double Weight)>> cells)
     {
         Moments inside = new(default), outside = new(default);
-        foreach (List<(double D, Vec3 Colour)> cell in cells)
+        foreach (List<(double D, Vec3 Colour, double Weight)> cell in cells)
         {
-            foreach ((double d, Vec3 c) in cell)
+            foreach ((double d, Vec3 c, double w) in cell)
             {
-                if (d < -FarM) inside.Add(c.X, c.Y, c.Z);
-                else if (d > FarM) outside.Add(c.X, c.Y, c.Z);
+                if (d < -FarM) inside.Add(c.X, c.Y, c.Z, w);
+                else if (d > FarM) outside.Add(c.X, c.Y, c.Z, w);
             }
         }
 
@@ -112,7 +116,7 @@ internal sealed class ColourEdges
         return (way, way.Dot(outside.Centroid), 1 / Math.Sqrt(squared));
     }
 
-    private static double Shift(List<(double D, Vec3 Colour)> near, (Vec3 Way, double Zero, double Sigma) contrast)
+    private static double Shift(List<(double D, Vec3 Colour, double Weight)> near, (Vec3 Way, double Zero, double Sigma) contrast)
     {
         if (near.Count < 12) return 0;
         int n = near.Count;
@@ -120,7 +124,7 @@ internal sealed class ColourEdges
         for (int k = 0; k < n; k++)
         {
             double z = Math.Clamp(contrast.Way.Dot(near[k].Colour) - contrast.Zero, -1, 2);
-            gain[k + 1] = gain[k] + (((z * z) - ((z - 1) * (z - 1))) / (2 * contrast.Sigma * contrast.Sigma * Alike));
+            gain[k + 1] = gain[k] + (near[k].Weight * ((z * z) - ((z - 1) * (z - 1))) / (2 * contrast.Sigma * contrast.Sigma * Alike));
         }
 
         double best = double.NegativeInfinity;

@@ -10,6 +10,10 @@ internal sealed partial class MarginTracker
     private const double ScaleFloorM = 0.015;
     private const double StrayReachM = 0.9;
 
+    // Weight of "the dip is that of the last pass, give or take six degrees" against squared residuals: (0.03 m)² of scatter, five
+    // cells to carry the news of one, over 0.1². On a pavement without it the sheet tilts into the ground pass by pass.
+    private const double TiltPrior = 0.03 * 0.03 * 5 / (0.1 * 0.1);
+
     // Means over cells of the map grid, each margin apart.
     private TraceCell[] CellsOf(SheetEdge[] placed, double corridor)
     {
@@ -115,7 +119,7 @@ internal sealed partial class MarginTracker
 
         // Weak priors hold what this stretch does not show: a margin out of sight, the dip on flat ground.
         double h = WindowM / 2, unit = y.Length * 1e-3;
-        double[] precision = [unit * 1e-3, unit * h * h * 0.01, unit * 1e-3, unit * h * h * 0.01, unit * h * h * h * h, unit * 0.05];
+        double[] precision = [unit * 1e-3, unit * h * h * 0.01, unit * 1e-3, unit * h * h * 0.01, unit * h * h * h * h, TiltPrior];
         double expectedA = -Guess.Distance(Margin.A, new SheetPoint(s0, 0, t0)), expectedB = -Guess.Distance(Margin.B, new SheetPoint(s0, 0, t0));
         for (int k = 0; k < y.Length; k++) y[k] -= Cells[index[k]].Margin == Margin.A ? expectedA : expectedB;
         double[] w = [.. prior], residual = new double[y.Length];
@@ -139,7 +143,8 @@ internal sealed partial class MarginTracker
         SheetAxes axes = Sheet.At(s0);
         Vec3 normal = (axes.Normal - (axes.Along * slope) - (axes.Up * beta[WindowModel.Tilt(both)])).Unit();
         double width = (qb - qa) * normal.Dot(axes.Normal);
-        if (!(width > 0)) return null;
+        double before = expectedB - expectedA;
+        if (!(width > 0.6 * before && width < 1.6 * before)) return null;   // collapsed or run away
         Vec3 middle = axes.Origin + (axes.Normal * ((qa + qb) / 2)) + (axes.Up * t0);
         double spread = index.Sum(i => Math.Pow(Cells[i].At.T - t0, 2));
         return new SheetPiece(middle, normal, width, 0.01 + Math.Min(a, b) + spread);

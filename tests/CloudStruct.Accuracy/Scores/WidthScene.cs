@@ -1,4 +1,5 @@
 using CloudStruct.Maths.Blocks;
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -37,7 +38,7 @@ public sealed class WidthScene
     {
         SimulatedOutcrop outcrop = Outcrop_(plan, seed, points);
         (WorkingCloud cloud, int[] source) = Thin(outcrop);
-        var described = new DescribedCloud { Cloud = cloud };
+        DescribedCloud described = Normals(cloud);
         if (cloud.HasColour) described = Colour(described);
         return new WidthScene(outcrop, described, Label(outcrop, cloud, source, seed, jitterM));
     }
@@ -96,6 +97,27 @@ public sealed class WidthScene
             SpacingM = h, Neighbours = neighbours, NeighbourRadiusM = cell,
         };
         return (cloud, source);
+    }
+
+    private static DescribedCloud Normals(WorkingCloud cloud)
+    {
+        var d = new DescribedCloud { Cloud = cloud, NormalX = new float[cloud.Count], NormalY = new float[cloud.Count], NormalZ = new float[cloud.Count] };
+        BlockParallel.For(cloud.Count, 2, CancellationToken.None, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                var sums = new Moments(cloud.Place(i));
+                for (int k = i * WorkingCloud.K; k < (i + 1) * WorkingCloud.K && cloud.Neighbours[k] >= 0; k++)
+                {
+                    int j = cloud.Neighbours[k];
+                    sums.Add(cloud.X[j], cloud.Y[j], cloud.Z[j]);
+                }
+
+                Vec3 n = sums.Weight < 3 ? Vec3.Up : PlaneFit.From(sums).Normal;
+                (d.NormalX[i], d.NormalY[i], d.NormalZ[i]) = ((float)n.X, (float)n.Y, (float)n.Z);
+            }
+        });
+        return d;
     }
 
     // ln(R/G) and ln(B/G) of linear light, and cube-root lightness in place of L*: enough to tell two rocks apart.

@@ -23,6 +23,9 @@ public sealed class WidthScore
     /// <summary>Angles between contact rows and the dike's mean plane over their cones: of sense where the dike does not bend.</summary>
     public List<double> PlaneRatios { get; } = [];
 
+    /// <summary>Signed relative errors of the apparent width where only that is known.</summary>
+    public List<double> ApparentErrors { get; } = [];
+
     /// <summary>Distances of trace vertices from the true margin, positive out of the dike [m].</summary>
     public List<double> TraceOffsetsM { get; } = [];
 
@@ -87,9 +90,16 @@ public sealed class WidthScore
         {
             Stations[s.Status] = Stations.GetValueOrDefault(s.Status) + 1;
             int at = Array.FindIndex(contacts.Dikes, d => d.Dike == s.Dike);
-            if (s.Status != StationStatus.Measured || which[at] < 0) continue;
+            if (s.Status is not (StationStatus.Measured or StationStatus.Unconstrained) || which[at] < 0) continue;
             SimulatedDike dike = truth.Dikes[which[at]];
             Vec3 place = ((s.AtA!.Value + s.AtB!.Value) / 2) + origin;
+            if (s.Status == StationStatus.Unconstrained)
+            {
+                double level = dike.WidthAt(place) / Math.Sqrt(1 - Math.Pow(dike.NormalAt(place).Z, 2));
+                ApparentErrors.Add((s.ApparentWidthM!.Value - level) / level);
+                continue;
+            }
+
             if (dike.IsHidden(dike.ChainageAt(place))) HiddenMeasured++;
             else MeasuredM += width.StationM;
             double w = dike.WidthAt(place), error = s.TrueWidthM!.Value - w;
