@@ -7,6 +7,7 @@ public static class Studies
     public static SortedDictionary<string, IStudy> All { get; } = new(StringComparer.Ordinal)
     {
         ["classes"] = new ClassesStudy(),
+        ["contacts"] = new ContactsStudy(),
         ["faces"] = new FacesStudy(),
         ["sets"] = new SetsStudy(),
         ["width"] = new WidthStudy(),

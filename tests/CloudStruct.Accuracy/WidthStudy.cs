@@ -44,14 +44,7 @@ public sealed class WidthStudy : IStudy
         own.Refresh();
         double seconds = own.TotalProcessorTime.TotalSeconds - before;
         foreach (WidthScore s in scores) s.Add(scene.Outcrop, contacts, width);
-        if (Environment.GetEnvironmentVariable("WIDTH_ROWS") is not null)
-        {
-            Details(contacts, width, scene);
-            contacts = new ContactsStage().Run(new ContactsInput(scene.Described, scene.Classes, none, []), new ContactSettings { RefineByColour = false }, StageContext.Plain());
-            width = new WidthStage().Run(new WidthInput(scene.Described, scene.Classes, contacts), new WidthSettings(), StageContext.Plain());
-            var alt = new WidthScore(); alt.Add(scene.Outcrop, contacts, width);
-            Console.WriteLine("  unrefined " + Line(alt));
-        }
+        if (Environment.GetEnvironmentVariable("WIDTH_ROWS") is not null) Details(contacts, width, scene.Outcrop);
         return seconds;
     }
 
@@ -70,15 +63,15 @@ public sealed class WidthStudy : IStudy
 
     internal static double Inside(List<double> ratios) => ratios.Count == 0 ? double.NaN : (double)ratios.Count(r => Math.Abs(r) <= 1) / ratios.Count;
 
-    private static void Details(ContactsRecord contacts, WidthRecord width, WidthScene scene)
+    internal static void Details(ContactsRecord contacts, WidthRecord width, SimulatedOutcrop truth)
     {
-        foreach (DikeFrame d in contacts.Dikes) Console.WriteLine(Invariant($"  dike {d.Dike} window {d.WindowM:0.0} scatter {d.TraceScatterM:0.000} range {d.TraceRangeM:0.00} white {d.TraceWhiteShare} shared {d.TraceShared} spacing {scene.Described.Cloud.SpacingM:0.000}"));
+        foreach (DikeFrame d in contacts.Dikes) Console.WriteLine(Invariant($"  dike {d.Dike} window {d.WindowM:0.0} scatter {d.TraceScatterM:0.000} range {d.TraceRangeM:0.00} white {d.TraceWhiteShare} shared {d.TraceShared}"));
         foreach (Contact c in contacts.Contacts) Console.WriteLine(Invariant($"  {c.Margin} {c.ChainageFromM:0.0}-{c.ChainageToM:0.0} {c.Constraint} {c.Evidence} dip {c.Attitude?.DipDeg:0.0} strike {c.Attitude?.StrikeDeg:0.0} cone {c.Region?.Cone95Deg:0.00} relief {c.ReliefM:0.00} rms {c.RmsM:0.000} n {c.Points} lean {c.LeanToBDeg:0.0}"));
         foreach (Station s in width.Stations)
         {
-            double? truth = s.AtA is { } a && s.AtB is { } b ? scene.Outcrop.Dikes[s.Dike - 1].WidthAt(((a + b) / 2) + scene.Outcrop.Origin) : null;
-            double chainage = scene.Outcrop.Dikes[s.Dike - 1].ChainageAt(s.Place + scene.Outcrop.Origin);
-            Console.WriteLine(Invariant($"  {s.Number} at {s.ChainageM:0.0} ({chainage:0.0}, hidden {scene.Outcrop.Dikes[s.Dike - 1].IsHidden(chainage)}) {s.Status} true {s.TrueWidthM:0.000} ±{(s.TrueWidthHigh95M - s.TrueWidthLow95M) / 2:0.000} truth {truth:0.000} apparent {s.ApparentWidthM:0.000} exposed {s.ExposedWidthM:0.00} visible {s.VisibleWidthM:0.00}"));
+            double? real = s.AtA is { } a && s.AtB is { } b ? truth.Dikes[s.Dike - 1].WidthAt(((a + b) / 2) + truth.Origin) : null;
+            double chainage = truth.Dikes[s.Dike - 1].ChainageAt(s.Place + truth.Origin);
+            Console.WriteLine(Invariant($"  {s.Number} at {s.ChainageM:0.0} ({chainage:0.0}, hidden {truth.Dikes[s.Dike - 1].IsHidden(chainage)}) {s.Status} true {s.TrueWidthM:0.000} ±{(s.TrueWidthHigh95M - s.TrueWidthLow95M) / 2:0.000} truth {real:0.000} apparent {s.ApparentWidthM:0.000} exposed {s.ExposedWidthM:0.00} visible {s.VisibleWidthM:0.00}"));
         }
     }
 }

@@ -21,6 +21,13 @@ internal sealed record MarginGuess(double FirstS, double StepM, double[] A, doub
         return p.Q - Mix(line, i, f) - (Mix(Tilt, i, f) * p.T);
     }
 
+    /// <summary>Offset of a margin along the normal at t = 0 [m].</summary>
+    public double OffsetAt(Margin margin, double s)
+    {
+        (int i, double f) = Step(s);
+        return Mix(margin == Margin.A ? A : B, i, f);
+    }
+
     /// <summary>Width at a place along strike [m].</summary>
     public double WidthAt(double s)
     {

@@ -8,7 +8,7 @@ namespace CloudStruct.Stages.Contacts;
 internal sealed partial class MarginTracker
 {
     private const double ScaleFloorM = 0.015;
-    private const double StrayReachM = 0.9;
+    private const double StrayReachM = 0.9, ExcursionReachM = 0.5;
 
     // Weight of "the dip is that of the last pass, give or take six degrees" against squared residuals: (0.03 m)² of scatter, five
     // cells to carry the news of one, over 0.1². On a pavement without it the sheet tilts into the ground pass by pass.
@@ -87,6 +87,37 @@ internal sealed partial class MarginTracker
         }
 
         return [.. keep];
+    }
+
+    // Where wet soil or shade passes for host the labels leave the margin for some metres and come back. A margin does not: a
+    // step stays. So a place is judged by the median about it against the median of a window about it; what lies apart by an
+    // eighth of the width and by four scatters is no margin.
+    private TraceCell[] WithoutExcursions()
+    {
+        var keep = new List<TraceCell>();
+        foreach (Margin m in (Margin[])[Margin.A, Margin.B])
+        {
+            TraceCell[] own = [.. Cells.Where(c => c.Margin == m)];
+            double[] level = [.. own.Select(c => Guess.Distance(m, c.At) + Guess.OffsetAt(m, c.At.S))];
+            var apart = new double[own.Length];
+            for (int i = 0; i < own.Length; i++) apart[i] = MedianAbout(own, level, i, ExcursionReachM) - MedianAbout(own, level, i, WindowM / 2);
+            if (own.Length == 0) continue;
+            double usual = 1.4826 * Median([.. apart.Select(Math.Abs)]);
+            for (int i = 0; i < own.Length; i++)
+            {
+                if (Math.Abs(apart[i]) <= Math.Max(Guess.WidthAt(own[i].At.S) / 8, 4 * usual)) keep.Add(own[i]);
+            }
+        }
+
+        return [.. keep.OrderBy(c => c.At.S).ThenBy(c => c.At.T)];
+    }
+
+    private static double MedianAbout(TraceCell[] own, double[] level, int i, double reach)
+    {
+        int from = i, to = i + 1;
+        while (from > 0 && own[i].At.S - own[from - 1].At.S <= reach) from--;
+        while (to < own.Length && own[to].At.S - own[i].At.S <= reach) to++;
+        return Median(level[from..to]);
     }
 
     private SheetPiece? FitAt(double s0, double[] vote)

@@ -65,6 +65,7 @@ internal sealed partial class MarginTracker
         }
 
         Cells = WithoutStrays();
+        Cells = WithoutExcursions();
         return Cells.Length >= 4;
     }
 
