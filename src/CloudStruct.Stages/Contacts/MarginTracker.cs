@@ -127,7 +127,7 @@ internal sealed partial class MarginTracker
             foreach (Margin m in (Margin[])[Margin.A, Margin.B])
             {
                 var near = new List<(double D, double W)>();
-                double range = Math.Clamp(reach * width, CorridorMinM, 2 * CorridorMaxM);
+                double range = Math.Clamp(reach * width, CorridorMinM, Math.Max(2 * CorridorMaxM, 0.2 * width));
                 for (int j = lo; j < placed.Length && placed[j].At.S <= s + half; j++)
                 {
                     if (m == Margin.A ? placed[j].Facing > -FacingMin : placed[j].Facing < FacingMin) continue;
