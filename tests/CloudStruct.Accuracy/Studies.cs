@@ -11,5 +11,6 @@ public static class Studies
         ["faces"] = new FacesStudy(),
         ["sets"] = new SetsStudy(),
         ["width"] = new WidthStudy(),
+        ["whole"] = new WholeStudy(),
     };
 }

@@ -99,6 +99,8 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
         string contactKey = Fingerprint.OfText(classKey, faceKey);
         Vec3[] baseline = [.. evidence.Baseline.Select(p => p - described.Cloud.Frame.Origin)];
         ContactsRecord contacts = runner.Run(new ContactsStage(), new ContactsInput(described, classes, faces, baseline), recipe.Contacts, ref contactKey, cloud.Count);
+        (faces, contacts) = CoverFaces.Drop(faces, contacts, classes, out int onCover);
+        if (onCover > 0) runner.Say(new Remark("faces", FormattableString.Invariant($"{onCover} flat pieces lie on cover and were left out."), false));
         string widthKey = contactKey, setKey = contactKey;
         WidthRecord width = runner.Run(new WidthStage(), new WidthInput(described, classes, contacts), recipe.Width, ref widthKey, cloud.Count);
         SetsRecord sets = runner.Run(new SetsStage(), new SetsInput(cloud.Frame, faces, contacts, described), recipe.Sets, ref setKey);
