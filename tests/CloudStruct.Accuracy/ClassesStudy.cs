@@ -41,7 +41,7 @@ public sealed class ClassesStudy : IStudy
     private static ClassScore One(OutcropPlan plan, ulong seed, int? points)
     {
         SimulatedOutcrop outcrop = Outcrop.Make(plan, seed, points);
-        StageContext context = StageContext.Plain(seed, Environment.ProcessorCount);
+        StageContext context = StageContext.Plain(seed, Environment.ProcessorCount, r => Console.WriteLine("    " + r.Text));
         IPieces pieces = new IntakeStage().Run(
             new SurveyInput { Name = outcrop.Name, Sources = [outcrop.AsSource()], Crs = outcrop.Crs }, new IntakeSettings(), context);
         DescribedCloud described = new DescribeStage().Run(new ThinStage().Run(pieces, new ThinSettings(), context), new DescribeSettings(), context);

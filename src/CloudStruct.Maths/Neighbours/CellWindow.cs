@@ -13,7 +13,7 @@ public sealed class CellWindow
     private readonly int[] cursor;
 
     /// <summary>A window over sorted points.</summary>
-    /// <param name="grid">Built with a margin of at least <paramref name="ring"/> cells.</param>
+    /// <param name="grid">Built with a rim of at least <paramref name="ring"/> cells.</param>
     /// <param name="x">East, in the order of the grid [m].</param>
     /// <param name="y">North [m].</param>
     /// <param name="z">Up [m].</param>

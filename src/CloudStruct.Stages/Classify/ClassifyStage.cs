@@ -226,7 +226,7 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
 
     private void Say(DescribedCloud described, DikeFinder finder, Outcome outcome, double narrowest, double thinnest, StageContext context)
     {
-        if (!described.Cloud.HasColour) context.Say(new Remark(Name, "The cloud has no colour: dike, host and cover are told apart by texture alone, which blurs margins.", true));
+        if (!described.Cloud.HasColour) context.Say(new Remark(Name, "The cloud has no colour: rock and cover are told apart by texture alone, and texture alone is not trusted to show a dike, so none can be reported.", true));
         if (outcome.Dikes.Count == 0)
         {
             DikeJudgement? best = finder.Looked.Select(l => l.Judgement).OrderByDescending(j => Math.Max(j.ColourAuc, j.TextureAuc)).FirstOrDefault();

@@ -187,11 +187,16 @@ internal sealed partial class DikeFinder
     internal static bool IsDike(DikeJudgement j)
     {
         if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
+        if (!(j.SlopeAuc < 0.85 || j.WanderM <= Math.Max(0.05, 0.03 * j.WidthM))) return false;
         // What the slope of the ground tells as well may be light and dirt on a wall, unless its margins are as sharp as rock's.
-        bool byColour = j.ColourAuc >= 0.88 && j.WanderM <= Math.Max(0.08, 0.07 * j.WidthM)
-            && (j.SlopeAuc < 0.85 || j.WanderM <= Math.Max(0.05, 0.03 * j.WidthM));
-        bool byTexture = j.TextureAuc >= 0.88 && j.SlopeAuc <= 0.62 && j.LengthM > 5 * j.WidthM && j.WidthSpread < 0.3
-            && j.BothMargins >= 0.7 && j.WanderM <= Math.Max(0.03, 0.02 * j.WidthM);
-        return byColour || byTexture;
+        // Margins that stray and widths that come and go along the sheet are marks of stains and shade, less so the wider it
+        // is; 2 cm of straying is what the outlines of true margins show anyhow.
+        double unruly = (Math.Max(0, j.WanderM - 0.02) / j.WidthM) + (0.2 * Math.Max(0, j.WidthSpread - 0.25));
+        // Rock that differs in colour and in its surface may have crooked margins; a stripe of colour alone must run true.
+        bool byColour = j.ColourAuc >= 0.88 && (unruly <= 0.035 || (j.TextureAuc >= 0.7 && unruly <= 0.09));
+        // Less contrast is enough where both margins run true along the whole of a long sheet.
+        bool byLine = j.ColourAuc >= 0.82 && j.SlopeAuc < 0.7 && j.LengthM > 4 * j.WidthM && j.BothMargins >= 0.85 && unruly <= 0.03;
+        // Texture alone never decides: benches and walls came out as dikes more often than dikes did.
+        return byColour || byLine;
     }
 }

@@ -56,7 +56,7 @@ public class SettingsTests
             foreach ((string key, PropertyInfo property) in RecipeReader.Known(section.PropertyType))
             {
                 Type type = Nullable.GetUnderlyingType(property.PropertyType) ?? property.PropertyType;
-                bool ratio = Regex.IsMatch(key, "share|ratio|factor|weight|probability|widths|spacings|levels|odds");
+                bool ratio = Regex.IsMatch(key, "share|ratio|factor|weight|probability|widths|spacings|levels|odds|depth$");
                 if (type == typeof(double) && !units.Any(u => key.EndsWith(u, StringComparison.Ordinal)) && !ratio) bare = [.. bare, $"{section.Name}.{key}"];
             }
         }

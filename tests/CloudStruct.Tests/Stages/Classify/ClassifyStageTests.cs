@@ -80,7 +80,7 @@ public sealed class ClassifyStageTests
         }
 
         points.Add(new LabelPoint(described.Cloud.Place(1), RockClass.Host, LabelUse.Ignore));
-        Vec3[] box = [new(-8, -8, 0), new(-6, -8, 0), new(-6, -6, 0), new(-8, -6, 0), new(-8, -8, 0)];
+        Vec3[] box = [new(-9, -9, 0), new(-6, -9, 0), new(-6, -6, 0), new(-9, -6, 0), new(-9, -9, 0)];
         var polygon = new LabelPolygon([box], double.NegativeInfinity, double.PositiveInfinity, RockClass.Host, LabelUse.Ignore);
         ClassifiedCloud classes = new ClassifyStage().Run(
             new ClassifyInput(described, new HandLabels { Points = [.. points], Polygons = [polygon] }), new ClassifySettings(), StageContext.Plain());
