@@ -164,7 +164,8 @@ internal sealed class CoverFinder
         {
             double steepRatio = weight[j] > 0 ? steep[j] / weight[j] / Math.Max(sceneSteep, 1e-6) : 1;
             double[] mean = kinds.Means[(j * d)..((j + 1) * d)];
-            bool flatLying = sceneSteep > 0.04 && steepRatio < 0.55;
+            // A dike or a bed may lie flat by chance; soil never stays on walls.
+            bool flatLying = sceneSteep > 0.08 && steepRatio < 0.3;
             bool green = false, hue = false;
             int roughAt = c > 0 ? 3 : 0;
             double rougher = mean[roughAt] - rock[roughAt];
