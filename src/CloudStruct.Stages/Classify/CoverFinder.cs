@@ -12,6 +12,9 @@ internal sealed class CoverFinder
     private const int MostItems = 4000;
     private const double SteepDeg = 52;
 
+    /// <summary>Log-chromaticities (times 100) nearer than this are one colour in other light.</summary>
+    private const double NearHue = 5;
+
     private readonly Patches patches;
     private readonly Features features;
     private readonly StageContext context;
@@ -159,10 +162,11 @@ internal sealed class CoverFinder
         double sceneSteep = allSteep / all;
         // What the steep parts look like is rock: nothing else stays on them.
         double[] rock = RockMiddle(kinds, steep);
+        double[] ratio = [.. Enumerable.Range(0, k).Select(j => weight[j] > 0 ? steep[j] / weight[j] / Math.Max(sceneSteep, 1e-6) : 1)];
         var cover = new bool[k];
         for (int j = 0; j < k; j++)
         {
-            double steepRatio = weight[j] > 0 ? steep[j] / weight[j] / Math.Max(sceneSteep, 1e-6) : 1;
+            double steepRatio = ratio[j];
             double[] mean = kinds.Means[(j * d)..((j + 1) * d)];
             // A dike or a bed may lie flat by chance; soil never stays on walls.
             bool flatLying = sceneSteep > 0.08 && steepRatio < 0.3;
@@ -176,10 +180,18 @@ internal sealed class CoverFinder
                 hue = blues < -15 && Math.Sqrt((reds * reds) + (blues * blues)) > 18;
             }
 
-            cover[j] = green || (flatLying && (hue || rougher > 0.7)) || rougher > 1.6;
+            // The worn crests of the rock are rough and flat too, but have a colour that the walls show as well.
+            bool asOnWalls = c > 0 && Enumerable.Range(0, k).Any(o => ratio[o] >= 0.5 && SameHue(kinds, j, o, d));
+            cover[j] = green || (flatLying && (hue || (rougher > 0.7 && !asOnWalls))) || rougher > 1.6;
         }
 
         return cover;
+    }
+
+    private static bool SameHue(GaussianMixture kinds, int a, int b, int d)
+    {
+        double reds = kinds.Means[(a * d) + 1] - kinds.Means[(b * d) + 1], blues = kinds.Means[(a * d) + 2] - kinds.Means[(b * d) + 2];
+        return Math.Sqrt((reds * reds) + (blues * blues)) < NearHue;
     }
 
     private static double[] RockMiddle(GaussianMixture kinds, double[] steep)
