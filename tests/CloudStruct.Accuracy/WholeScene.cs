@@ -41,7 +41,7 @@ public sealed class WholeScene
         int[] nearest = TruthOfPoints.Nearest(cloud, Outcrop);
         Faces.Add(Outcrop, cloud, faces, nearest);
         Classes = ClassScore.Of(Outcrop, nearest, classes);
-        Width.Add(Outcrop, Contacts, WidthRecord);
+        Width.Add(Outcrop with { Origin = cloud.Frame.Origin }, Contacts, WidthRecord);   // records count from the survey's own origin
     }
 
     /// <summary>The outcrop.</summary>

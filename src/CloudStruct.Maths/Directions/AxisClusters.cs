@@ -47,7 +47,7 @@ public sealed record AxisClusters(int[] ClusterOf, int Count, double BicGap, int
             }
         }
 
-        double gap = bics.Where(b => b.Components != best.Components.Length).Min(b => b.Bic) - best.Bic;
+        double gap = bics.Where(b => b.Components != best.Components.Length).Select(b => b.Bic).DefaultIfEmpty(double.PositiveInfinity).Min() - best.Bic;
         if (searchAxes.Length < axes.Length) best = best.Fit(axes, Scaled(weights), stop) ?? best;
         return Settle(best, axes, gap, rules);
     }

@@ -38,6 +38,9 @@ internal sealed class StationMaker
         for (double k = Math.Ceiling((line.FromM / step) - 1e-9); (k * step) <= line.ToM + 1e-9; k++) yield return (k * step) + 0.0;   // + 0.0: no minus zero
     }
 
+    /// <summary>Unit normal of the dike at a chainage, from A to B.</summary>
+    public Vec3 NormalAt(double chainageM) => line.At(chainageM).Normal;
+
     /// <summary>Measures one station.</summary>
     /// <param name="chainageM">Its chainage [m].</param>
     /// <param name="number">Its number.</param>

@@ -29,6 +29,7 @@ public sealed class WidthStage : IStage<WidthInput, WidthSettings, WidthRecord>
             Station[] own = [.. BlockParallel.Map(
                 chainage.Length, context.Threads, context.Stop, (from, to) => Enumerable.Range(from, to - from).Select(i => maker.Measure(chainage[i], i + 1)).ToArray(), 8)
                 .SelectMany(s => s)];
+            own = new MarginViews(cloud, input.Classes, frame.Dike).Doubted(own, [.. chainage.Select(maker.NormalAt)]);
             own = Continuous(own);
             stations.AddRange(own);
             DikeSummary summary = Summaries.Of(frame, own, input.Contacts.Contacts, input.Classes.ThinnestDikeM, settings.StationM, cloud.Frame);
