@@ -78,6 +78,7 @@ internal sealed class MarginViews(WorkingCloud cloud, ClassifiedCloud classes, i
 
     private (int Host, int Dike) Beside(Vec3 at, Vec3 outward)
     {
+        if (!double.IsFinite(at.X + at.Y + at.Z)) return (0, 0);
         var near = new List<int>();
         SortedGridLookup.Within(cloud, at.X, at.Y, at.Z, ReachM, near);
         Vec3 along = outward.Cross(Vec3.Up) is { Length: > 1e-6 } level ? level.Unit() : new Vec3(1, 0, 0);

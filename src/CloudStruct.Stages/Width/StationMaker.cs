@@ -73,7 +73,7 @@ internal sealed class StationMaker
         StationFit? fit = seesA && seesB
             ? StationFit.Of(near, place, normal, along, up, isFixed ? Math.Tan(Math.Min(60, dipSigma) * Math.PI / 180) : 0, frame)
             : null;
-        return fit is { WidthM: > 0 } f
+        return fit is { WidthM: > 0 } f && double.IsFinite(f.WidthM + f.OffsetAM + f.OffsetBM + f.HeightAM + f.HeightBM + f.SigmaM + (normal + up + place).Length)
             ? With(station, f, normal, up, isFixed)
             : Hidden(fit is null ? station : station with { Status = StationStatus.BothHidden }, near, seesA, seesB, normal, along);
     }
