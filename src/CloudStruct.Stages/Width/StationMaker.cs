@@ -75,7 +75,7 @@ internal sealed class StationMaker
             : null;
         return fit is { WidthM: > 0 } f && double.IsFinite(f.WidthM + f.OffsetAM + f.OffsetBM + f.HeightAM + f.HeightBM + f.SigmaM + (normal + up + place).Length)
             ? With(station, f, normal, up, isFixed)
-            : Hidden(fit is null ? station : station with { Status = StationStatus.BothHidden }, near, seesA, seesB, normal, along);
+            : Hidden(fit is null && !(seesA && seesB) ? station : station with { Status = StationStatus.BothHidden }, near, seesA, seesB, normal, along);
     }
 
     private Station With(Station station, StationFit fit, Vec3 normal, Vec3 up, bool isFixed)
