@@ -187,8 +187,8 @@ internal sealed partial class DikeFinder
     internal static bool IsDike(DikeJudgement j)
     {
         if (!(j.LengthM > 2 * j.WidthM) || !(j.BothMargins >= 0.4)) return false;
-        if (!(j.SlopeAuc < 0.85 || j.WanderM <= Math.Max(0.05, 0.03 * j.WidthM))) return false;
         // What the slope of the ground tells as well may be light and dirt on a wall, unless its margins are as sharp as rock's.
+        if (!(j.SlopeAuc < 0.85 || j.WanderM <= Math.Max(0.05, 0.03 * j.WidthM))) return false;
         // Margins that stray and widths that come and go along the sheet are marks of stains and shade, less so the wider it
         // is; 2 cm of straying is what the outlines of true margins show anyhow.
         double unruly = (Math.Max(0, j.WanderM - 0.02) / j.WidthM) + (0.2 * Math.Max(0, j.WidthSpread - 0.25));
