@@ -32,6 +32,13 @@ public sealed record DikePlan
     /// <summary>Sudden relative change of width at one place, either way.</summary>
     public Span2 Jump { get; init; }
 
+    /// <summary>Where it ends: distance from the middle toward one end of its strike as a share of the outcrop's length; null for a dike
+    /// that crosses the whole outcrop.</summary>
+    public Span2? TipAt { get; init; }
+
+    /// <summary>Distance over which it narrows to its end, as half an ellipse does [m].</summary>
+    public Span2 TipLengthM { get; init; } = new(4, 7);
+
     /// <summary>Mean distance of cooling joints [m].</summary>
     public Span2 JointSpacingM { get; init; } = new(0.35, 0.55);
 

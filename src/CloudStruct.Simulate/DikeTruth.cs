@@ -20,9 +20,10 @@ internal static class DikeTruth
     /// <param name="sheet">Its body.</param>
     /// <param name="places">Points before noise, local.</param>
     /// <param name="classes">True class of each.</param>
+    /// <param name="dikeOf">The dike each belongs to: where a later dike cuts this one, its margins are gone.</param>
     /// <param name="origin">Map coordinates of the local origin.</param>
     /// <param name="spacingM">Mean distance of neighbouring points [m].</param>
-    public static SimulatedDike Make(DikeSheet sheet, Func<int, Vec3> places, byte[] classes, Vec3 origin, double spacingM)
+    public static SimulatedDike Make(DikeSheet sheet, Func<int, Vec3> places, byte[] classes, byte[] dikeOf, Vec3 origin, double spacingM)
     {
         double stripM2 = BesideM * BinM * ((2 * ReachBins) + 1);
         int enough = (int)Math.Max(3, EnoughShare * stripM2 / (spacingM * spacingM));
@@ -37,7 +38,8 @@ internal static class DikeTruth
             if (bin < 0 || bin >= bins || Math.Abs(w) > 30) continue;
             double fromA = w - sheet.Rest(0, s, v), fromB = w - sheet.Rest(1, s, v);
             if (fromA > 0 && fromB < 0 && Math.Abs(fromA + fromB) < 0.5) line[bin] = (line[bin].Sum + places(i), line[bin].Count + 1);
-            bool rock = classes[i] is (byte)RockClass.Host or (byte)RockClass.Dike or (byte)RockClass.Inclusion;
+            bool inside = fromA > 0 && fromB < 0;
+            bool rock = inside ? dikeOf[i] == sheet.Number : classes[i] == (byte)RockClass.Host || dikeOf[i] == sheet.Number;
             if (!rock) continue;
             if (Math.Abs(fromA) < BesideM) near[bin, 0, fromA > 0 ? 1 : 0]++;
             if (Math.Abs(fromB) < BesideM) near[bin, 1, fromB > 0 ? 1 : 0]++;

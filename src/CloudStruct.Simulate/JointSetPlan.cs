@@ -7,4 +7,5 @@ namespace CloudStruct.Simulate;
 /// <param name="DipDeg">Mean dip [deg]; above 90 means that it dips the other way.</param>
 /// <param name="Kappa">Fisher concentration of its planes.</param>
 /// <param name="SpacingM">Mean distance of its planes [m].</param>
-public sealed record JointSetPlan(Span2 DipDirectionDeg, Span2 DipDeg, Span2 Kappa, Span2 SpacingM);
+/// <param name="Law">How the distances scatter.</param>
+public sealed record JointSetPlan(Span2 DipDirectionDeg, Span2 DipDeg, Span2 Kappa, Span2 SpacingM, SpacingLaw Law = SpacingLaw.Even);

@@ -15,9 +15,6 @@ public static class Outcrop
 
     private const int Block = 4096;
 
-    // Open water west of the zone's central meridian: map north and true north differ by about two degrees there.
-    private static readonly Vec3 Origin = new(341_870, 6_231_460, 0);
-
     /// <summary>Makes one outcrop.</summary>
     /// <param name="plan">The kind of outcrop.</param>
     /// <param name="seed">Which member of the family; the same seed gives the same outcrop on any number of threads.</param>
@@ -38,6 +35,7 @@ public static class Outcrop
         OutcropPlan plan, ulong seed, Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles, Camera[] cameras, Sight[] sights, int threads)
     {
         int count = sights.Length;
+        Vec3 origin = plan.Site.Origin;
         var noise = new SurveyNoise(plan, seed);
         var surface = new Surface(massif, plan, seed);
         var light = new Daylight(massif, plan, seed);
@@ -62,7 +60,7 @@ public static class Outcrop
                 onPlane[i] = wear.OnPlane && !stray;
                 classes[i] = (byte)(stray ? RockClass.Unknown : kind);
                 dikeOf[i] = (byte)(stray ? 0 : rock);
-                (x[i], y[i], z[i]) = (p.X + Origin.X, p.Y + Origin.Y, p.Z + Origin.Z);
+                (x[i], y[i], z[i]) = (p.X + origin.X, p.Y + origin.Y, p.Z + origin.Z);
                 if (!plan.HasColour) continue;
                 var lot = new Dice(seed, Purpose.Colour, (ulong)i + 1);
                 ulong block = s.Kind is Hit.Kinds.Plane or Hit.Kinds.Margin ? BlockLot(massif, s, n) : (ulong)s.Surface * 0x9E3779B97F4A7C15UL;
@@ -71,7 +69,8 @@ public static class Outcrop
             }
         });
         double spacing = Spacing(sights);
-        (int[] faceOf, SimulatedFace[] faces) = FaceTruth.Number(massif, sights, onPlane, normals, Origin, spacing);
+        ModelTurn.Of(plan, seed).Apply(x, y, z, origin);
+        (int[] faceOf, SimulatedFace[] faces) = FaceTruth.Number(massif, sights, onPlane, normals, origin, spacing);
         return new SimulatedOutcrop
         {
             Name = plan.Place,
@@ -87,12 +86,13 @@ public static class Outcrop
             TrueClass = classes,
             TrueDike = dikeOf,
             Faces = faces,
-            Dikes = [.. massif.Dikes.Select(d => DikeTruth.Make(d, i => sights[i].Place, classes, Origin, spacing))],
-            Crs = InventedPlace.Crs,
-            Origin = Origin,
+            Dikes = [.. massif.Dikes.Select(d => DikeTruth.Make(d, i => sights[i].Place, classes, dikeOf, origin, spacing))],
+            Crs = plan.Site.Crs,
+            Origin = origin,
             UphillDeg = massif.Terrain.UphillDeg,
             HostSetPoles = hostPoles,
             DikeSetPoles = dikePoles,
+            HostSetSpacingM = TrueSpacing.OfHost(massif, hostPoles, sights, seed),
             NoiseM = noise.SharedM,
             NoiseLengthM = noise.LengthM,
             WhiteNoiseM = noise.WhiteM,

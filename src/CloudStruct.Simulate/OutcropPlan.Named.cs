@@ -81,6 +81,7 @@ public sealed partial record OutcropPlan
             demo with { Name = "texture-only", Dikes = [new DikePlan { Look = RockLook.GneissColouredDolerite }], HostLook = RockLook.Gneiss with { Banding = 0 } },
             demo with { Name = "no-colour", HasColour = false },
             demo with { Name = "tilted", Dikes = [new DikePlan { DipDeg = new(50, 60) }] },
+            .. Laboratory(bare, demo),
         ];
         return plans.ToDictionary(p => p.Name, StringComparer.Ordinal);
     }

@@ -89,4 +89,16 @@ public sealed partial record OutcropPlan
 
     /// <summary>Height of the sun [deg].</summary>
     public Span2 SunHeightDeg { get; init; } = new(28, 50);
+
+    /// <summary>Where on earth it lies.</summary>
+    public InventedSite Site { get; init; } = InventedSite.North;
+
+    /// <summary>Clouds it comes in: 1, or 2 that overlap and differ in height by <see cref="DemoSurvey.TileOffsetM"/>.</summary>
+    public int Tiles { get; init; } = 1;
+
+    /// <summary>Standard deviation of the tilt of the whole model about each level axis [deg].</summary>
+    public double ModelTiltSigmaDeg { get; init; }
+
+    /// <summary>Standard deviation of the turn of the whole model about the vertical [deg].</summary>
+    public double ModelTurnSigmaDeg { get; init; }
 }

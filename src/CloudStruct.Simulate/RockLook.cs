@@ -10,6 +10,9 @@ namespace CloudStruct.Simulate;
 /// <param name="RoughnessM">Relief of the joint faces themselves, one standard deviation over 3 cm [m].</param>
 public sealed record RockLook(double Red, double Green, double Blue, double Grain, double Mottle, double Banding, double RoughnessM)
 {
+    /// <summary>Distance over which bands change [m].</summary>
+    public double BandM { get; init; } = 0.11;
+
     /// <summary>Light grey to pinkish banded gneiss.</summary>
     public static RockLook Gneiss { get; } = new(0.36, 0.32, 0.28, 0.16, 0.13, 0.10, 0.003);
 

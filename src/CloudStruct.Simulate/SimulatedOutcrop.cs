@@ -15,7 +15,7 @@ public sealed record SimulatedOutcrop
     /// <summary>The seed that picks the member.</summary>
     public ulong Seed { get; init; }
 
-    /// <summary>East, map coordinates [m].</summary>
+    /// <summary>East, map coordinates [m]; in a model that is tilted or turned as a whole X, Y and Z are the model's and all truth is the ground's.</summary>
     public double[] X { get; init; } = [];
 
     /// <summary>North, map coordinates [m].</summary>
@@ -62,6 +62,10 @@ public sealed record SimulatedOutcrop
 
     /// <summary>True mean poles of the joint sets of each dike, upward, grid frame.</summary>
     public Vec3[][] DikeSetPoles { get; init; } = [];
+
+    /// <summary>True mean distance of neighbouring planes of each joint set of the host, along its mean pole, near the surface [m];
+    /// NaN where no such line could be laid.</summary>
+    public double[] HostSetSpacingM { get; init; } = [];
 
     /// <summary>Standard deviation of the shared noise of this member [m].</summary>
     public double NoiseM { get; init; }

@@ -3,6 +3,7 @@ using CloudStruct.Accuracy.Scores;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Sets;
 using CloudStruct.Records.Stages;
@@ -28,7 +29,12 @@ public sealed class WholeScene
         Outcrop = Simulate.Outcrop.Make(plan, seed, points);
         var clock = Stopwatch.StartNew();
         StageContext context = StageContext.Plain(seed, Environment.ProcessorCount);
-        IPieces pieces = new IntakeStage().Run(new SurveyInput { Name = Outcrop.Name, Sources = [Outcrop.AsSource()], Crs = Outcrop.Crs }, new IntakeSettings(), context);
+        // One file, or tiles as two flights give them; a model that is out of true comes with its true sigmas.
+        IPointSource[] sources = plan.Tiles > 1 ? [.. DemoSurvey.Of(Outcrop).Tiles.Select(t => t.Source)] : [Outcrop.AsSource()];
+        bool turned = plan.ModelTiltSigmaDeg > 0 || plan.ModelTurnSigmaDeg > 0;
+        var reference = new ModelReference { Kind = turned ? ReferenceKind.Rtk : ReferenceKind.NotStated, TiltSigmaDeg = plan.ModelTiltSigmaDeg, AzimuthSigmaDeg = plan.ModelTurnSigmaDeg };
+        var survey = new SurveyInput { Name = Outcrop.Name, Sources = sources, Crs = Outcrop.Crs, Reference = reference };
+        IPieces pieces = new IntakeStage().Run(survey, new IntakeSettings(), context);
         WorkingCloud cloud = new ThinStage().Run(pieces, new ThinSettings(), context);
         DescribedCloud described = new DescribeStage().Run(cloud, new DescribeSettings(), context);
         ClassifiedCloud classes = new ClassifyStage().Run(new ClassifyInput(described, HandLabels.None), new ClassifySettings(), context);

@@ -21,4 +21,6 @@ internal enum Purpose
     Keep,
     Inclusions,
     Labels,
+    Scanlines,
+    Model,
 }

@@ -25,7 +25,7 @@ internal sealed class RockPaint
         mottle = new LatticeField(seed, 21, 0.12);
         wide = new LatticeField(seed, 22, 0.9);
         hue = new LatticeField(seed, 23, 0.4);
-        band = new LatticeField(seed, 24, 0.11);
+        band = new LatticeField(seed, 24, plan.HostLook.BandM);
         lichen = new LatticeField(seed, 25, 0.22);
         spots = new LatticeField(seed, 26, 0.05);
         streak = new LatticeField(seed, 27, 0.3);

@@ -9,7 +9,7 @@ namespace CloudStruct.Simulate.Rock;
 internal sealed class DikeSheet
 {
     private const int Waves = 3;
-    private readonly double bendPerM, widthM, taperPerM, jump, jumpAtM;
+    private readonly double bendPerM, widthM, taperPerM, jump, jumpAtM, tipAtM = double.PositiveInfinity, tipLengthM = 1, tipSide = 1;
     private readonly Wave[] shared, ownA, ownB;
     private readonly (double Min, double Max) boundsA, boundsB;
 
@@ -44,6 +44,13 @@ internal sealed class DikeSheet
         shared = MakeWaves(ref dice, dice.In(plan.WaveM), 5, 14);
         ownA = MakeWaves(ref dice, dice.In(plan.OwnWaveM), 2.5, 7);
         ownB = MakeWaves(ref dice, dice.In(plan.OwnWaveM), 2.5, 7);
+        if (plan.TipAt is { } tip)
+        {
+            tipAtM = dice.In(tip) * reachM;
+            tipLengthM = dice.In(plan.TipLengthM);
+            tipSide = Sign(ref dice);
+        }
+
         boundsA = Bounds(reachM, 0);
         boundsB = Bounds(reachM, 1);
         HalfReachM = 0.75 * reachM;
@@ -96,9 +103,18 @@ internal sealed class DikeSheet
     /// <summary>Where a margin runs: w of margin A (0) or B (1) at (s, v) [m].</summary>
     public double Rest(int side, double s, double v)
     {
-        double width = widthM * (1 + (taperPerM * s)) * (1 + (jump * (SmoothStep((s - jumpAtM) / 0.8) - 0.5)));
+        double width = widthM * (1 + (taperPerM * s)) * (1 + (jump * (SmoothStep((s - jumpAtM) / 0.8) - 0.5))), own = 1;
+        double toTip = (tipAtM - (tipSide * s)) / tipLengthM;
+        if (toTip < 1)
+        {
+            // Beyond its end both margins are one surface, so that nothing lies between them.
+            double x = 1 - Math.Max(0, toTip);
+            own = Math.Sqrt(1 - (x * x));
+            width *= own;
+        }
+
         double middle = (0.5 * bendPerM * s * s) + Sum(shared, s, v);
-        return side == 0 ? middle - (width / 2) + Sum(ownA, s, v) : middle + (width / 2) + Sum(ownB, s, v);
+        return side == 0 ? middle - (width / 2) + (own * Sum(ownA, s, v)) : middle + (width / 2) + (own * Sum(ownB, s, v));
     }
 
     /// <summary>Upward-B gradient direction of a margin at (s, v): its unit normal from A to B, local frame.</summary>

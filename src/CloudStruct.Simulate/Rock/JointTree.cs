@@ -82,6 +82,9 @@ internal sealed class JointTree
         return count;
     }
 
+    /// <summary>How many planes of a set lie between the blocks along a line.</summary>
+    public int CountCrossings(Vec3 from, Vec3 to, int set) => CountCrossings(Root, from, to, set);
+
     /// <summary>First place along a ray where a block is there.</summary>
     /// <param name="from">Start, local.</param>
     /// <param name="toward">Unit direction.</param>
@@ -129,6 +132,17 @@ internal sealed class JointTree
 
             (at, entry, a, b) = stack[--depth];
         }
+    }
+
+    private int CountCrossings(int node, Vec3 from, Vec3 to, int set)
+    {
+        if (node < 0) return 0;
+        ref readonly Node n = ref nodes[node];
+        double a = (n.X * from.X) + (n.Y * from.Y) + (n.Z * from.Z) - n.Offset, b = (n.X * to.X) + (n.Y * to.Y) + (n.Z * to.Z) - n.Offset;
+        if (a > 0 == b > 0) return CountCrossings(a > 0 ? n.Above : n.Below, from, to, set);
+        Vec3 at = from + ((to - from) * (a / (a - b)));
+        int first = a > 0 ? n.Above : n.Below, second = a > 0 ? n.Below : n.Above;
+        return (n.Set == set ? 1 : 0) + CountCrossings(first, from, at, set) + CountCrossings(second, at, to, set);
     }
 
     private State StateOf(int child) => child >= 0 ? states[child] : blocks[~child].Present ? State.Full : State.Empty;

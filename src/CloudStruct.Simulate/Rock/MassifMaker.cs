@@ -54,7 +54,7 @@ internal static class MassifMaker
     {
         var dice = new Dice(seed, Purpose.Plan, (ulong)index);
         Vec3 pole = Axes.Pole(terrain.UphillDeg + dice.In(set.DipDirectionDeg), dice.In(set.DipDeg));
-        return new(pole, dice.In(set.Kappa), dice.In(set.SpacingM));
+        return new(pole, dice.In(set.Kappa), dice.In(set.SpacingM), set.Law);
     }
 
     /// <summary>Cooling joints: along the margins, and two sets square to them and to each other.</summary>
