@@ -3,6 +3,7 @@ using CloudStruct.Formats.GeoPackage;
 using CloudStruct.Formats.Tables;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 
@@ -38,6 +39,13 @@ public static class EvidenceFiles
     /// <summary>Control and check points of control/checkpoints.csv.</summary>
     /// <exception cref="InputException">The table is not understood.</exception>
     public static ControlPoint[] ReadControl(string path) => ControlTable.Read(path);
+
+    /// <summary>Compass readings of field/readings.csv, azimuths from true or grid north.</summary>
+    /// <param name="path">The table.</param>
+    /// <param name="declination">What the survey says of magnetic north.</param>
+    /// <param name="notation">"strike/dip" or "dip direction/dip" where the survey says it.</param>
+    /// <exception cref="InputException">The table is not understood.</exception>
+    public static FieldReading[] ReadReadings(string path, Declination declination, string? notation) => ReadingTable.Read(path, declination.At, notation);
 
     /// <summary>The line of a baseline/*.geojson; z is 0 where the file has none.</summary>
     /// <exception cref="InputException">The file does not hold exactly one line.</exception>

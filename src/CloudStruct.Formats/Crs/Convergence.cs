@@ -1,6 +1,4 @@
 using CloudStruct.Records.Frame;
-using ProjNet.CoordinateSystems;
-using ProjNet.CoordinateSystems.Transformations;
 
 namespace CloudStruct.Formats.Crs;
 
@@ -40,31 +38,13 @@ public static class Convergence
 
     private static Func<double, double, double?> Transverse(CrsInfo crs)
     {
-        if (Value(crs, "central_meridian_deg") is not double meridian || crs.SemiMajorM <= 0) return (_, _) => null;
-        // In metres and without datum, so that any text's units and names cannot disturb the library.
-        var factory = new CoordinateSystemFactory();
-        Ellipsoid ellipsoid = factory.CreateFlattenedSphere("e", crs.SemiMajorM, crs.InverseFlattening, LinearUnit.Metre);
-        HorizontalDatum datum = factory.CreateHorizontalDatum("d", DatumType.HD_Geocentric, ellipsoid, null);
-        GeographicCoordinateSystem degrees = factory.CreateGeographicCoordinateSystem("g", AngularUnit.Degrees, datum, PrimeMeridian.Greenwich,
-            new AxisInfo("Lon", AxisOrientationEnum.East), new AxisInfo("Lat", AxisOrientationEnum.North));
-        // The meridian is measured from itself: a prime meridian elsewhere makes no difference.
-        IProjection projection = factory.CreateProjection("p", "Transverse_Mercator",
-        [
-            new ProjectionParameter("latitude_of_origin", Value(crs, "latitude_of_origin_deg") ?? 0), new ProjectionParameter("central_meridian", 0),
-            new ProjectionParameter("scale_factor", Value(crs, "scale_factor") is double s and > 0 ? s : 1),
-            new ProjectionParameter("false_easting", Value(crs, "false_easting_m") ?? 0),
-            new ProjectionParameter("false_northing", Value(crs, "false_northing_m") ?? 0),
-        ]);
-        ProjectedCoordinateSystem grid = factory.CreateProjectedCoordinateSystem("c", degrees, projection, LinearUnit.Metre,
-            new AxisInfo("East", AxisOrientationEnum.East), new AxisInfo("North", AxisOrientationEnum.North));
-        MathTransform forward = new CoordinateTransformationFactory().CreateFromCoordinateSystems(degrees, grid).MathTransform;
-        MathTransform back = forward.Inverse();
+        if (TransverseGrid.Of(crs) is not { } grid) return (_, _) => null;
         return (x, y) =>
         {
-            (double lon, double lat) = back.Transform(x, y);
+            (double lon, double lat) = grid.Back(x, y);
             if (!(Math.Abs(lat) < 89.9 && Math.Abs(lon) < 80)) return null;
-            (double x0, double y0) = forward.Transform(lon, lat - StepDeg);
-            (double x1, double y1) = forward.Transform(lon, lat + StepDeg);
+            (double x0, double y0) = grid.Forward(lon, lat - StepDeg);
+            (double x1, double y1) = grid.Forward(lon, lat + StepDeg);
             return -Math.Atan2(x1 - x0, y1 - y0) * 180 / Math.PI;
         };
     }

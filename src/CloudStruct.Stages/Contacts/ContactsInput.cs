@@ -1,5 +1,6 @@
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 
@@ -10,4 +11,8 @@ namespace CloudStruct.Stages.Contacts;
 /// <param name="Classes">Classes and dikes found.</param>
 /// <param name="Faces">Faces, whose domain is told here.</param>
 /// <param name="Baseline">Line that fixes chainage, local [m]; empty when there is none.</param>
-public sealed record ContactsInput(DescribedCloud Described, ClassifiedCloud Classes, FaceSet Faces, Vec3[] Baseline);
+public sealed record ContactsInput(DescribedCloud Described, ClassifiedCloud Classes, FaceSet Faces, Vec3[] Baseline)
+{
+    /// <summary>Compass readings, places local [m]; those for use as prior add what the traces do not show.</summary>
+    public FieldReading[] Readings { get; init; } = [];
+}

@@ -8,6 +8,7 @@ using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Sets;
@@ -98,7 +99,8 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
         FaceSet faces = runner.Run(new FacesStage(), described, recipe.Faces, ref faceKey, cloud.Count);
         string contactKey = Fingerprint.OfText(classKey, faceKey);
         Vec3[] baseline = [.. evidence.Baseline.Select(p => p - described.Cloud.Frame.Origin)];
-        ContactsRecord contacts = runner.Run(new ContactsStage(), new ContactsInput(described, classes, faces, baseline), recipe.Contacts, ref contactKey, cloud.Count);
+        FieldReading[] readings = [.. evidence.Readings.Select(r => r with { Place = r.Place - described.Cloud.Frame.Origin })];
+        ContactsRecord contacts = runner.Run(new ContactsStage(), new ContactsInput(described, classes, faces, baseline) { Readings = readings }, recipe.Contacts, ref contactKey, cloud.Count);
         (faces, contacts) = CoverFaces.Drop(faces, contacts, classes, out int onCover);
         if (onCover > 0) runner.Say(new Remark("faces", FormattableString.Invariant($"{onCover} flat pieces lie on cover and were left out."), false));
         string widthKey = contactKey, setKey = contactKey;

@@ -5,6 +5,7 @@ using CloudStruct.Products;
 using CloudStruct.Recipes;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
@@ -19,6 +20,9 @@ internal sealed record SurveyEvidence
 
     /// <summary>Hand labels.</summary>
     public required HandLabels Labels { get; init; }
+
+    /// <summary>Compass readings, map coordinates.</summary>
+    public required FieldReading[] Readings { get; init; }
 
     /// <summary>The line that fixes chainage, map coordinates; empty when there is none.</summary>
     public required Vec3[] Baseline { get; init; }
@@ -71,15 +75,17 @@ internal sealed record SurveyEvidence
             Control = survey.Checkpoints is { } c ? EvidenceFiles.ReadControl(c) : [],
         };
         string date = survey.Notes.FlightDate ?? sources.Select(s => s.Header.Date).FirstOrDefault(d => d.Length > 0) ?? "";
+        DateOnly? flown = DateOnly.TryParseExact(date, "yyyy-MM-dd", CultureInfo.InvariantCulture, DateTimeStyles.None, out DateOnly day) ? day : null;
         return new SurveyEvidence
         {
             Input = input,
             Labels = EvidenceFiles.ReadLabels(survey.Labels),
+            Readings = survey.Readings is { } r ? EvidenceFiles.ReadReadings(r, new Declination(survey.Notes.Declination, crs, flown), survey.Notes.Notation) : [],
             Baseline = survey.Baseline is { } b ? EvidenceFiles.ReadBaseline(b) : [],
             LeftOut = [.. leftOut],
             LeftOutFiles = [.. leftFiles],
             Remarks = [.. survey.PassedOver.Concat(sources.SelectMany(s => s.Header.Problems.Select(p => $"{s.Header.Name}: {p}"))).Select(p => new Remark("files", p, false)), .. leftOut.Select(l => new Remark("files", "Left out: " + l, true))],
-            Date = DateOnly.TryParseExact(date, "yyyy-MM-dd", CultureInfo.InvariantCulture, DateTimeStyles.None, out DateOnly day) ? day : null,
+            Date = flown,
         };
     }
 

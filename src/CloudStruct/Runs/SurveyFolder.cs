@@ -29,6 +29,9 @@ internal sealed record SurveyFolder
     /// <summary>control/checkpoints.csv when there is one.</summary>
     public required string? Checkpoints { get; init; }
 
+    /// <summary>field/readings.csv when there is one.</summary>
+    public string? Readings { get; init; }
+
     /// <summary>The line that fixes chainage when there is one.</summary>
     public required string? Baseline { get; init; }
 
@@ -43,7 +46,7 @@ internal sealed record SurveyFolder
 
     /// <summary>All files that a run reads, in order.</summary>
     public IEnumerable<string> Files =>
-        new[] { NotesFile, Checkpoints, Baseline }.OfType<string>().Concat(Labels).Concat(Clouds);
+        new[] { NotesFile, Checkpoints, Readings, Baseline }.OfType<string>().Concat(Labels).Concat(Clouds);
 
     /// <summary>Name without the user's folders, with forward slashes.</summary>
     public string Relative(string file) => Path.GetRelativePath(Root, file).Replace('\\', '/');
@@ -87,6 +90,7 @@ internal sealed record SurveyFolder
             Clouds = found,
             Labels = Child(full, "labels") is { } l ? FilesIn(full, l, LabelEndings, passed, other: "is not a label file that we read") : [],
             Checkpoints = Present(full, Path.Combine(full, "control", "checkpoints.csv"), passed),
+            Readings = Present(full, Path.Combine(full, "field", "readings.csv"), passed),
             Baseline = Child(full, "baseline") is { } b ? FilesIn(full, b, [".geojson"], passed, other: null).FirstOrDefault() : null,
             NotesFile = notesFile,
             UsualOut = Path.Combine(full, "results"),
