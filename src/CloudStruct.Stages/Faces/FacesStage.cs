@@ -72,7 +72,7 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
                 {
                     (Face face, Roughness rough) = measuring.Of(k);
                     if (face.AreaM2 < surface.Settings.SmallestFaceM2) continue;
-                    refused[k] = Refusing.IsWeathered(spread[k], rough);
+                    refused[k] = Refusing.IsWeathered(spread[k], rough, face.AreaM2);
                     measured[k] = face;
                 }
             },

@@ -9,17 +9,29 @@ namespace CloudStruct.Stages.Faces;
 internal static class Refusing
 {
     private const double MiddleM2 = 0.25;
-    private const double SpreadWeight = 4, ScatterWeight = 2.5, WaveWeight = 2.5, Limit = 3.2;
+
+    // A small flat piece is soon found by chance on bumpy ground, a large one hardly ever; and the waves of a small piece are few
+    // and chancy, while those of a large one tell most. Beyond the limits more or less area says no more.
+    private const double LeastM2 = 0.05, MostM2 = 1;
+    private const double SpreadWeight = 3, ScatterWeight = 3.4, WaveWeight = 1, WaveWeightBySize = 1, Limit = 2.5, LimitBySize = 1.4;
+
+    // For places within a face, by spread and scatter alone.
+    private const double WornSpreadWeight = 4, WornScatterWeight = 2.5;
 
     /// <summary>Whether a piece is weathered rock or soil.</summary>
     /// <param name="spread">Spread of its local normals over the usual.</param>
     /// <param name="rough">Its roughness against the scene.</param>
-    public static bool IsWeathered(double spread, Roughness rough) =>
-        (SpreadWeight * Log(spread)) + (ScatterWeight * Log(rough.Scatter)) + (WaveWeight * Log(rough.WavePower)) > Limit;
+    /// <param name="areaM2">Its area [m²].</param>
+    public static bool IsWeathered(double spread, Roughness rough, double areaM2)
+    {
+        double size = Math.Log(Math.Clamp(areaM2, LeastM2, MostM2) / MiddleM2);
+        double signs = (SpreadWeight * Log(spread)) + (ScatterWeight * Log(rough.Scatter)) + ((WaveWeight + (WaveWeightBySize * size)) * Log(rough.WavePower));
+        return signs > Limit + (LimitBySize * size);
+    }
 
     /// <summary>The same for a place, by the local means of squared spread and squared scatter over the usual.</summary>
     public static bool IsWorn(double spreadSquared, double scatterSquared, double limit) =>
-        (SpreadWeight / 2 * Log(spreadSquared)) + (ScatterWeight / 2 * Log(scatterSquared)) > limit;
+        (WornSpreadWeight / 2 * Log(spreadSquared)) + (WornScatterWeight / 2 * Log(scatterSquared)) > limit;
 
     /// <summary>Rms sine between local normals and plane per label, over the area-weighted median of the scene's faces of middle
     /// size and more (of all when there are none). Needs sorted pieces.</summary>

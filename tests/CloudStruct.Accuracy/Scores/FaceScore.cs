@@ -31,20 +31,54 @@ public sealed class FaceScore
     private double reportedArea, rightArea, offArea;
     private int reported, joined;
 
+    /// <summary>Names of the size classes, by falling size; all figures per class are in this order.</summary>
+    public static string[] ClassNames { get; } = [.. Classes.Select(c => c.Name)];
+
     /// <summary>Share of the area of true faces of 0.25 m² or more that was found.</summary>
     public double RecallByArea => (foundArea[0] + foundArea[1]) / (trueArea[0] + trueArea[1]);
 
     /// <summary>The same, by number.</summary>
     public double RecallByNumber => (double)(foundCount[0] + foundCount[1]) / (trueCount[0] + trueCount[1]);
 
+    /// <summary>Share of the area of true faces of 0.05 m² or more that was found.</summary>
+    public double RecallOfAllByArea => foundArea.Sum() / trueArea.Sum();
+
+    /// <summary>Share of the surface of true faces of 0.05 m² or more that lies in faces matched to them.</summary>
+    public double Covered => pointsCovered.Sum() / pointsTrue.Sum();
+
     /// <summary>Share of the reported area that is right.</summary>
     public double Precision => rightArea / reportedArea;
+
+    /// <summary>Share of the reported area that lies on no plane.</summary>
+    public double OffPlane => offArea / reportedArea;
+
+    /// <summary>Reported faces per found face of 0.25 m² or more.</summary>
+    public double PiecesPerFace => (double)(pieces[0] + pieces[1]) / Math.Max(1, foundCount[0] + foundCount[1]);
+
+    /// <summary>Share of reported faces that hold a fifth or more of a second true face.</summary>
+    public double Joined => (double)joined / Math.Max(1, reported);
+
+    /// <summary>Reported faces.</summary>
+    public int Reported => reported;
+
+    /// <summary>Median over faces in one piece of reported over true area.</summary>
+    public double AreaRatio => Quantile(areaRatio, 0.5);
 
     /// <summary>Median attitude error of found faces of 0.25 m² or more [deg].</summary>
     public double MedianErrorDeg => Quantile([.. error[0], .. error[1]], 0.5);
 
     /// <summary>Share of right faces whose true normal lies in the cone, of all sizes.</summary>
     public double Coverage => (double)inside.Sum() / judged.Sum();
+
+    /// <summary>Quantile of the attitude error of a class, and of its floor [deg].</summary>
+    public (double Ours, double Floor) ErrorDeg(int sizeClass, double quantile) =>
+        (Quantile(error[sizeClass], quantile), Quantile(floor[sizeClass], quantile));
+
+    /// <summary>Share of right faces of a class whose true normal lies in the cone, and how many were judged.</summary>
+    public (double Share, int Count) CoverageOf(int sizeClass) => ((double)inside[sizeClass] / Math.Max(1, judged[sizeClass]), judged[sizeClass]);
+
+    /// <summary>Stated over real error of a class.</summary>
+    public double Sharpness(int sizeClass) => 1 / Quantile(relative[sizeClass], 0.5);
 
     /// <summary>Adds one outcrop.</summary>
     public void Add(SimulatedOutcrop outcrop, WorkingCloud cloud, FaceSet found, int[] nearest)
@@ -69,7 +103,7 @@ public sealed class FaceScore
         var covered = new int[own.Length];
         var largest = new Face?[own.Length];
         var count = new int[own.Length];
-        foreach (Face f in found.Faces) Judge(f, outcrop, match[f.FaceId], covered, largest, count);
+        for (int f = 0; f < found.Faces.Length; f++) Judge(found.Faces[f], outcrop, match[f + 1], covered, largest, count);
         AddTrue(outcrop, own, covered, largest, count);
         AddFloor(outcrop, cloud, truth);
     }
@@ -77,13 +111,15 @@ public sealed class FaceScore
     /// <summary>Prints the table.</summary>
     public void Print(string title)
     {
-        Console.WriteLine(Invariant($"{title}: {reported} faces reported, precision by area {Precision:F3}, off any plane {offArea / reportedArea:F3}, joined {(double)joined / Math.Max(1, reported):F3}, recall >= 0.25 m2 {RecallByArea:F3}, area ratio {Quantile(areaRatio, 0.5):F3}"));
+        Console.WriteLine(
+            Invariant($"{title}: {reported} reported; recall >= 0.25 m2 {RecallByArea:F3} by area {RecallByNumber:F3} by number, >= 0.05 m2 {RecallOfAllByArea:F3}, covered {Covered:F3}; ") +
+            Invariant($"precision {Precision:F3}, off any plane {OffPlane:F3}, pieces {PiecesPerFace:F2}, joined {Joined:F3}, area ratio {AreaRatio:F3}"));
         Console.WriteLine("  class          true  recall(area) recall(number) covered pieces |  error med   p95  floor med   p95 | coverage      n sharpness");
         for (int c = 0; c < 3; c++)
         {
             Console.WriteLine(Invariant(
                 $"  {Classes[c].Name,-13} {trueCount[c],5} {foundArea[c] / trueArea[c],13:F3} {(double)foundCount[c] / trueCount[c],14:F3} {pointsCovered[c] / pointsTrue[c],7:F3} {(double)pieces[c] / Math.Max(1, foundCount[c]),6:F2} |") + Invariant(
-                $" {Quantile(error[c], 0.5),10:F3} {Quantile(error[c], 0.95),5:F2} {Quantile(floor[c], 0.5),10:F3} {Quantile(floor[c], 0.95),5:F2} | {(double)inside[c] / Math.Max(1, judged[c]),8:F3} {judged[c],6} {1 / Quantile(relative[c], 0.5),9:F2}"));
+                $" {Quantile(error[c], 0.5),10:F3} {Quantile(error[c], 0.95),5:F2} {Quantile(floor[c], 0.5),10:F3} {Quantile(floor[c], 0.95),5:F2} | {(double)inside[c] / Math.Max(1, judged[c]),8:F3} {judged[c],6} {Sharpness(c),9:F2}"));
         }
     }
 
