@@ -32,13 +32,13 @@ public sealed class SetsStudy : IStudy
     /// <inheritdoc/>
     public void Run(StudyOptions options)
     {
-        string[] plans = options.Plans.Length > 0 ? options.Plans : ["demo", "no-dike", "two-dikes", "large", "drawn"];
+        string[] plans = options.Plans.Length > 0 ? options.Plans : ["demo", "no-dike", "two-dikes", "large", "drawn", "uniform"];
         Console.WriteLine("Sets from true faces with errors and false faces");
         Console.WriteLine("plan seed faces | true found invented | error median max, inside cone");
         SetScore sum = SetScore.None, real = SetScore.None;
         foreach (string plan in plans)
         {
-            if (plan is "drawn" or "large") continue;
+            if (plan is "drawn" or "large" or "uniform") continue;
             foreach (ulong seed in options.Seeds)
             {
                 SimulatedOutcrop rock = Outcrop.Make(FacesStudy.Sized(OutcropPlan.ByName(plan), options.Points ?? 300_000), seed);
@@ -50,96 +50,21 @@ public sealed class SetsStudy : IStudy
         Print("all outcrops, true faces", sum, "");
         Print("all outcrops, found faces", real, "");
         if (plans.Contains("large")) Large();
-        if (plans.Contains("drawn")) Drawn();
-    }
-
-    /// <summary>Sets drawn from Fisher's law: how many planes, how tight; each plane shows in one to four faces.</summary>
-    private static void Drawn()
-    {
-        Console.WriteLine("Drawn sets, one to three at least 40 deg apart, 20 % stray planes; 200 draws a line");
-        Console.WriteLine("planes kappa | true found invented | error median max, inside cone");
-        foreach (int planes in new[] { 8, 20, 60 })
-        {
-            foreach (double kappa in new[] { 20.0, 60, 200 })
-            {
-                SetScore sum = SetScore.None;
-                for (ulong i = 0; i < 200; i++)
-                {
-                    (Vec3[] poles, Face[] faces) = DrawFaces(planes, kappa, (i * 1000) + (ulong)planes);
-                    var input = new SetsInput(new SurveyFrame(), new FaceSet { Faces = faces, NoiseM = 0.005 }, new ContactsRecord(), new DescribedCloud());
-                    SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain(i));
-                    sum += SetScore.Of(record.Sets, poles, [.. poles.Select(_ => true)]);
-                }
-
-                Print(Invariant($"{planes} {kappa}"), sum, "");
-            }
-        }
+        if (plans.Contains("drawn")) DrawnSets.Run(options);
+        if (plans.Contains("uniform")) DrawnSets.Uniform(options);
     }
 
     /// <summary>Twenty thousand faces: how long it takes.</summary>
     private static void Large()
     {
         var all = new List<Face>();
-        for (ulong seed = 1; all.Count < 20_000; seed++) all.AddRange(DrawFaces(400, 120, 77).Faces.Select(f => f with { Middle = f.Middle + new Vec3(50 * seed, 0, 0) }));
+        for (ulong seed = 1; all.Count < 20_000; seed++) all.AddRange(DrawnSets.Draw(DrawnSets.Large, 77).Faces.Select(f => f with { Middle = f.Middle + new Vec3(50 * seed, 0, 0) }));
         var input = new SetsInput(new SurveyFrame(), new FaceSet { Faces = [.. all.Take(20_000)], NoiseM = 0.005 }, new ContactsRecord(), new DescribedCloud());
         long start = Stopwatch.GetTimestamp();
         TimeSpan busy = Process.GetCurrentProcess().TotalProcessorTime;
         SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain());
         TimeSpan used = Process.GetCurrentProcess().TotalProcessorTime - busy;
         Console.WriteLine(Invariant($"20000 faces: {record.Sets.Length} sets, {Stopwatch.GetElapsedTime(start).TotalSeconds:0.0} s, {used.TotalSeconds:0.0} s of processor"));
-    }
-
-    private static (Vec3[] Poles, Face[] Faces) DrawFaces(int planes, double kappa, ulong seed)
-    {
-        var d = new Draws(seed, 31, 0);
-        int sets = 1 + d.NextBelow(3);
-        var poles = new List<Vec3>();
-        while (poles.Count < sets)
-        {
-            Vec3 p = Random(ref d);
-            if (poles.TrueForAll(o => Math.Abs(o.Dot(p)) < Math.Cos(40 * Degree))) poles.Add(p);
-        }
-
-        var faces = new List<Face>();
-        int all = planes * sets * 5 / 4;
-        for (int i = 0; i < all; i++)
-        {
-            Vec3 plane = i < planes * sets ? Fisher.Draw(poles[i % sets], kappa, ref d) : Random(ref d);
-            var place = new Vec3(40 * d.NextUnit(), 40 * d.NextUnit(), 10 * d.NextUnit());
-            (Vec3 e1, Vec3 e2) = Tangent.Axes(plane);
-            int pieces = 1 + d.NextBelow(4);
-            for (int k = 0; k < pieces; k++)
-            {
-                double area = 0.05 * Math.Exp(1.2 * Math.Abs(d.NextNormal()));
-                Vec3 at = place + (e1 * (1.5 * d.NextNormal())) + (e2 * (1.5 * d.NextNormal()));
-                faces.Add(Perturbed(plane, at, area, faces.Count + 1, ref d));
-            }
-        }
-
-        return ([.. poles], [.. faces]);
-    }
-
-    private static Vec3 Random(ref Draws d)
-    {
-        double z = (2 * d.NextUnit()) - 1, a = 2 * Math.PI * d.NextUnit(), h = Math.Sqrt(1 - (z * z));
-        return new Vec3(h * Math.Cos(a), h * Math.Sin(a), z);
-    }
-
-    // Attitude errors as the targets for faces have them: about 0.9 deg at 0.1 m², falling with the area.
-    private static Face Perturbed(Vec3 normal, Vec3 at, double area, int id, ref Draws d)
-    {
-        double sigma = 0.28 * Degree / Math.Sqrt(area);
-        (Vec3 e1, Vec3 e2) = Tangent.Axes(normal);
-        Vec3 n = (normal + (e1 * (sigma * d.NextNormal())) + (e2 * (sigma * d.NextNormal()))).Unit();
-        return new Face
-        {
-            FaceId = id,
-            Normal = n.Z < 0 ? -n : n,
-            Middle = at,
-            AreaM2 = area,
-            LengthM = Math.Sqrt(area),
-            Region = new PoleRegion { Cone95Deg = 2.4477 * sigma / Degree },
-        };
     }
 
     private static SetScore One(string what, SimulatedOutcrop rock, SetsInput input, ulong seed)
@@ -202,7 +127,7 @@ public sealed class SetsStudy : IStudy
         var d = new Draws(seed, 32, 0);
         foreach (SimulatedFace f in kept)
         {
-            faces.Add(Perturbed(f.Normal, f.Middle - rock.Origin, f.AreaM2, faces.Count + 1, ref d));
+            faces.Add(DrawnSets.Perturbed(f.Normal, f.Middle - rock.Origin, f.AreaM2, faces.Count + 1, ref d));
             number[f.Id] = faces.Count;
             domains.Add(f.Kind switch { FaceKind.Joint => FaceDomain.Host, FaceKind.CoolingJoint => FaceDomain.Dike, FaceKind.Contact => FaceDomain.Margin, _ => FaceDomain.Host });
             places.Add(f.InPlace ? InPlace.Yes : InPlace.No);
@@ -212,7 +137,7 @@ public sealed class SetsStudy : IStudy
         for (int i = 0; i < kept.Length / 5; i++)
         {
             int beside = d.NextBelow(kept.Length);
-            faces.Add(Perturbed(Random(ref d), faces[beside].Middle + (Random(ref d) * 0.5), 0.03 + (0.1 * d.NextUnit()), faces.Count + 1, ref d));
+            faces.Add(DrawnSets.Perturbed(DrawnSets.Random(ref d), faces[beside].Middle + (DrawnSets.Random(ref d) * 0.5), 0.03 + (0.1 * d.NextUnit()), faces.Count + 1, ref d));
             domains.Add(domains[beside]);
             places.Add(places[beside]);
         }
@@ -255,11 +180,14 @@ public sealed class SetsStudy : IStudy
         return SetScore.Of([.. record.Sets.Where(s => s.Domain == domain)], poles, [.. faces.Select(n => n >= 10)]);
     }
 
-    private static void Print(string what, SetScore s, string tail)
+    internal static void Print(string what, SetScore s, string tail)
     {
         double[] sorted = [.. s.ErrorsDeg.Order()];
         double median = sorted.Length > 0 ? sorted[sorted.Length / 2] : double.NaN, max = sorted.Length > 0 ? sorted[^1] : double.NaN;
         double share = sorted.Length > 0 ? (double)s.Covered / sorted.Length : double.NaN;
-        Console.WriteLine(Invariant($"{what} | {s.True} {s.Found} {s.Invented} | {median:0.00} {max:0.00}, {share:0.000} of {sorted.Length} {tail}"));
+        double[] ratio = [.. s.ErrorsDeg.Zip(s.ConesDeg).Select(p => p.First / p.Second).Order()];
+        // The median error of a two-dimensional normal law is 0.481 of its 95 % radius.
+        double sharp = ratio.Length > 0 ? 0.481 / Math.Max(1e-9, ratio[ratio.Length / 2]) : double.NaN;
+        Console.WriteLine(Invariant($"{what} | {s.True} {s.Found} {s.Invented} | {median:0.00} {max:0.00}, {share:0.000} of {sorted.Length}, sharp {sharp:0.00} {tail}"));
     }
 }

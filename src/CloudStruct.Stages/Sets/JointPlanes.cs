@@ -23,8 +23,9 @@ internal static class JointPlanes
     private const double LeastReachM = 5;
     private const double ReachInSizes = 6;
 
-    // However uncertain, faces this far from parallel are not called one plane.
-    private static readonly double CosineOfFarthest = Math.Cos(10 * Degree);
+    // Errors of attitude are what they are stated to be only on average: planes that miss one another by up to so many times
+    // what joins them may still be pieces of one.
+    private const double Looser = 2.5;
 
     /// <summary>Planes of one domain, in order of their first face.</summary>
     /// <param name="faces">All faces.</param>
@@ -34,25 +35,14 @@ internal static class JointPlanes
     public static JointPlane[] Of(Face[] faces, int[] members, double noiseM, double? reachM)
     {
         int[] order = [.. members.OrderByDescending(m => faces[m].AreaM2).ThenBy(m => m)];
-        var seeds = new List<int>();
-        var normals = new List<Vec3>();   // of the seeds, side by side: nearly all pairs fail on the angle alone
+        var seeds = new NearFaces(faces, reachM);
         var pieces = new List<List<int>>();
         foreach (int face in order)
         {
-            int best = -1;
-            double least = 1;
-            Vec3 normal = faces[face].Normal;
-            for (int s = 0; s < normals.Count; s++)
-            {
-                if (Math.Abs(normals[s].Dot(normal)) < CosineOfFarthest) continue;
-                double misfit = Misfit(faces[seeds[s]], faces[face], noiseM, reachM);
-                if (misfit < least) (best, least) = (s, misfit);
-            }
-
+            int best = seeds.Best(face, s => Misfit(faces[s], faces[face], noiseM, reachM), 1);
             if (best < 0)
             {
                 seeds.Add(face);
-                normals.Add(normal);
                 pieces.Add([face]);
             }
             else
@@ -64,6 +54,39 @@ internal static class JointPlanes
         return [.. pieces.Select(p => Joined(faces, [.. p.Order()])).OrderBy(p => p.Faces[0])];
     }
 
+    /// <summary>Per plane the number of its group: planes that may be pieces of one joint, though not near enough to be joined.</summary>
+    /// <param name="faces">All faces.</param>
+    /// <param name="planes">Planes of one domain.</param>
+    /// <param name="noiseM">Scatter of points about a face [m].</param>
+    /// <param name="reachM">Farthest from the larger face; null: by its size.</param>
+    /// <remarks>Only the variance of a mean uses them: putting two independent planes in one group costs a degree of freedom,
+    /// taking two pieces of one joint for independent makes the cone too narrow.</remarks>
+    public static int[] Groups(Face[] faces, JointPlane[] planes, double noiseM, double? reachM)
+    {
+        int[] largest = [.. planes.Select(p => p.Faces.MaxBy(f => faces[f].AreaM2))];
+        int[] order = [.. Enumerable.Range(0, planes.Length).OrderByDescending(p => faces[largest[p]].AreaM2).ThenBy(p => p)];
+        int[] group = new int[planes.Length];
+        var heads = new NearFaces(faces, reachM);
+        int count = 0;
+        var numbers = new List<int>();
+        foreach (int p in order)
+        {
+            int best = heads.Best(largest[p], h => Misfit(faces[h], faces[largest[p]], noiseM, reachM), Looser);
+            if (best < 0)
+            {
+                heads.Add(largest[p]);
+                numbers.Add(count);
+                group[p] = count++;
+            }
+            else
+            {
+                group[p] = numbers[best];
+            }
+        }
+
+        return group;
+    }
+
     /// <summary>One standard deviation of a face's attitude in each direction [rad].</summary>
     public static double ErrorOf(Face f) => Math.Max(0.02, f.Region.Cone95Deg) * Degree / Cone95Sigmas;
 
@@ -71,7 +94,7 @@ internal static class JointPlanes
     private static double Misfit(Face large, Face small, double noiseM, double? reachM)
     {
         Vec3 between = small.Middle - large.Middle;
-        double distance2 = between.Dot(between), reach = reachM ?? Math.Max(LeastReachM, ReachInSizes * Math.Sqrt(large.AreaM2));
+        double distance2 = between.Dot(between), reach = ReachOf(large, reachM);
         if (distance2 > reach * reach) return double.PositiveInfinity;
         double errorLarge = ErrorOf(large), errorSmall = ErrorOf(small);
         double cosine = Math.Abs(large.Normal.Dot(small.Normal));
@@ -80,6 +103,9 @@ internal static class JointPlanes
         double offset = Math.Abs(large.Normal.Dot(between)) / (2 * (noiseM + (Math.Sqrt(distance2) * lean)));
         return Math.Max(angle, offset);
     }
+
+    /// <summary>How far from a face its plane is looked for [m].</summary>
+    public static double ReachOf(Face large, double? reachM) => reachM ?? Math.Max(LeastReachM, ReachInSizes * Math.Sqrt(large.AreaM2));
 
     private static JointPlane Joined(Face[] faces, int[] own)
     {

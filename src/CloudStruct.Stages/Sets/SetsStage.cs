@@ -1,4 +1,5 @@
 using CloudStruct.Maths.Directions;
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Attitudes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
@@ -67,34 +68,58 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
     {
         Face[] faces = input.Faces.Faces;
         string word = domain.ToString().ToLowerInvariant();
-        JointPlane[] planes = JointPlanes.Of(faces, members, input.Faces.NoiseM, settings.ReachM);
-        Vec3[] poles = [.. planes.Select(p => p.Normal)];
-        double[] weights = Weights(planes, settings.Weighting);
+        JointPlane[] joined = JointPlanes.Of(faces, members, input.Faces.NoiseM, settings.ReachM);
+        var planes = new DomainPlanes(
+            domain,
+            joined,
+            [.. joined.Select(p => p.Normal)],
+            Weights(joined, settings.Weighting),
+            JointPlanes.Groups(faces, joined, input.Faces.NoiseM, settings.ReachM));
         var rules = new ClusterRules(settings.MostSets, settings.FewestPlanes, settings.ValleyDepth, settings.WidestDeg);
-        AxisClusters clusters = AxisClusters.Find(poles, weights, rules, context.Seed, context.Stop);
-        Remarks(context, word, clusters, planes.Length, members.Length, settings, domain);
+        AxisClusters clusters = AxisClusters.Find(planes.Poles, planes.Weights, rules, context.Seed, context.Stop);
+        Remarks(context, word, clusters, joined.Length, members.Length, settings, domain);
+        if (clusters.Count == 0) return [];
 
         // Numbered in order of exposed area.
         int[] byArea = [.. Enumerable.Range(0, clusters.Count)
-            .OrderByDescending(c => planes.Where((_, i) => clusters.ClusterOf[i] == c).Sum(p => p.AreaM2)).ThenBy(c => c)];
+            .OrderByDescending(c => joined.Where((_, i) => clusters.ClusterOf[i] == c).Sum(p => p.AreaM2)).ThenBy(c => c)];
         int[] rock = RockOf(input, members);
+        (Symmetric3 Covariance, double Groups)[] regions = MixtureMeans.Of(clusters.Mixture, planes.Poles, planes.Weights, planes.Groups);
+        double[][] shares = SharesOf(clusters.Mixture, planes);
         var sets = new OrientationSet[clusters.Count];
         for (int s = 0; s < byArea.Length; s++)
         {
-            int[] own = [.. Enumerable.Range(0, planes.Length).Where(i => clusters.ClusterOf[i] == byArea[s])];
-            sets[s] = OneSet(input, settings, domain, Invariant($"{word}-{s + 1}"), [.. own.Select(i => planes[i])], [.. own.Select(i => weights[i])], clusters.Lost[byArea[s]], rock);
-            foreach (int face in own.SelectMany(i => planes[i].Faces)) setOfFace[face] = sets[s].Set;
+            int c = byArea[s];
+            int[] own = [.. Enumerable.Range(0, joined.Length).Where(i => clusters.ClusterOf[i] == c)];
+            SetMean mean = SetMean.Of(
+                clusters.Mixture.Components[c], planes.Poles, shares[c], regions[c].Covariance, regions[c].Groups, input.Frame.Reference);
+            sets[s] = OneSet(input, settings, domain, Invariant($"{word}-{s + 1}"), [.. own.Select(i => joined[i])], mean, rock);
+            foreach (int face in own.SelectMany(i => joined[i].Faces)) setOfFace[face] = sets[s].Set;
         }
 
         return sets;
     }
 
+    /// <summary>Per component: weight of every plane times its share in the component.</summary>
+    private static double[][] SharesOf(AxisMixture mixture, DomainPlanes planes)
+    {
+        int k = mixture.Components.Length;
+        double[][] result = [.. Enumerable.Range(0, k).Select(_ => new double[planes.Poles.Length])];
+        double[] share = new double[k + 1];
+        for (int i = 0; i < planes.Poles.Length; i++)
+        {
+            mixture.Shares(planes.Poles[i], share);
+            for (int c = 0; c < k; c++) result[c][i] = planes.Weights[i] * share[c];
+        }
+
+        return result;
+    }
+
     private static OrientationSet OneSet(
-        SetsInput input, SetSettings settings, FaceDomain domain, string name, JointPlane[] planes, double[] weights, double lost, int[] rock)
+        SetsInput input, SetSettings settings, FaceDomain domain, string name, JointPlane[] planes, SetMean mean, int[] rock)
     {
         Face[] faces = input.Faces.Faces;
-        SetMean mean = SetMean.Of([.. planes.Select(p => p.Normal)], weights, lost);
-        Vec3 normal = -mean.Tensor.MeanAxis;
+        Vec3 normal = mean.Mean;
         (double shape, double strength) = mean.Tensor.Woodcock;
         int[] own = [.. planes.SelectMany(p => p.Faces)];
         int[] planeOfFace = new int[faces.Length];
@@ -110,7 +135,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
             Mean = Attitude.FromNormal(normal, input.Frame.TurnDeg),
             Normal = normal,
             Kappa = mean.Kappa,
-            Cone95Deg = mean.Cone95Deg,
+            Cone95Deg = mean.Region.Cone95Deg,
             S1 = mean.Tensor.S1,
             S2 = mean.Tensor.S2,
             S3 = mean.Tensor.S3,
