@@ -166,10 +166,10 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
         double evidence = 0, evidenceArea = 0;
         for (int d = 0; d < found.Count; d++)
         {
-            (bool[] inside, float[] odds, Looks[] looks) = cut.Run(found[d], free, labels);
+            (bool[] inside, float[] odds, Looks[] looks, MarginFit margins) = cut.Run(found[d], free, labels);
             var say = new bool[n];
             for (int i = 0; i < n; i++) say[i] = inside[patches.OfPoint[i]];
-            PointCut.Run(described, patches, features, found[d], looks, inside, free, settings.SmoothingPerM, say, context);
+            PointCut.Run(described, patches, features, found[d], margins, looks, inside, free, settings.SmoothingPerM, say, context);
             double area = 0;
             for (int i = 0; i < n; i++)
             {

@@ -23,8 +23,8 @@ internal sealed class DikeCut
     /// <param name="dike">The dike.</param>
     /// <param name="free">Rock that no other dike has taken.</param>
     /// <param name="labels">Hand labels; train labels join what is learnt.</param>
-    /// <returns>Per patch whether it is dike, and the log odds with the pull of the sheet (0 far away).</returns>
-    public (bool[] Inside, float[] Odds, Looks[] Looks) Run(FoundDike dike, bool[] free, PatchLabels labels)
+    /// <returns>Per patch whether it is dike, and the log odds with the pull of the margins (0 far away); the looks; the margins in detail.</returns>
+    public (bool[] Inside, float[] Odds, Looks[] Looks, MarginFit Margins) Run(FoundDike dike, bool[] free, PatchLabels labels)
     {
         Sheet sheet = dike.Sheet;
         double width = sheet.WidthM, reach = (0.2 * width) + 0.1;
@@ -52,10 +52,26 @@ internal sealed class DikeCut
                 if (active[i]) odds[i] = (float)(LookOdds(looks, i) + Pull(depth[i], width, dike.ByColour));
             }
         });
-        PatchCut.Run(patches, odds, active, inside, free, settings.SmoothingPerM);
-        for (int i = 0; i < inside.Length; i++) inside[i] &= active[i];
-        Fill(inside, free, active);
-        return (inside, odds, looks);
+        Cut();
+        // The outline's own edge, freed of its bulges, says where the margins run; then once more.
+        MarginFit fit = MarginFit.Of(sheet, Edges(inside, free), 0.3 * patches.SizeM);
+        double most = dike.ByColour ? PointCut.Most : 3;
+        Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                if (active[i]) odds[i] = (float)(LookOdds(looks, i) + fit.Pull(patches.X[i], patches.Y[i], patches.Z[i], most));
+            }
+        });
+        Cut();
+        return (inside, odds, looks, fit);
+
+        void Cut()
+        {
+            PatchCut.Run(patches, odds, active, inside, free, settings.SmoothingPerM);
+            for (int i = 0; i < inside.Length; i++) inside[i] &= active[i];
+            Fill(inside, free, active);
+        }
     }
 
     /// <summary>Log odds that follow from the place alone: sure rock deep inside, none well outside.</summary>
@@ -66,6 +82,24 @@ internal sealed class DikeCut
     {
         double soft = byColour ? (0.12 * widthM) + 0.04 : (0.05 * widthM) + 0.03;
         return Math.Clamp(depthM / soft, -3.5, byColour ? 0.6 : 1.6);
+    }
+
+    /// <summary>Places midway between patches of the dike and free ones beside them.</summary>
+    private List<(float X, float Y, float Z)> Edges(bool[] inside, bool[] free)
+    {
+        var places = new List<(float, float, float)>();
+        for (int i = 0; i < inside.Length; i++)
+        {
+            if (!inside[i]) continue;
+            for (int k = 0; k < 27; k++)
+            {
+                int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
+                if (j < 0 || inside[j] || !free[j]) continue;
+                places.Add(((patches.X[i] + patches.X[j]) / 2, (patches.Y[i] + patches.Y[j]) / 2, (patches.Z[i] + patches.Z[j]) / 2));
+            }
+        }
+
+        return places;
     }
 
     internal float LookOdds(Looks[] looks, int patch)

@@ -75,7 +75,7 @@ internal sealed class Features
     /// <param name="context">Context.</param>
     public void Standardise(Patches patches, bool[] rock, StageContext context)
     {
-        int n = patches.Count, stride = Math.Max(1, n / 40_000);
+        int n = patches.Count, stride = Math.Max(1, n / 12_000);
         directionFits = new double[Columns][];
         (middles, scales) = (new float[Columns], new float[Columns]);
         for (int c = 0; c < Columns; c++)

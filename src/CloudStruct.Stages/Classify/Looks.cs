@@ -8,7 +8,7 @@ namespace CloudStruct.Stages.Classify;
 /// columns for that and gets one normal law a side.</remarks>
 internal sealed class Looks
 {
-    private const int MostItems = 3000, MostMixed = 1000, Kinds = 4;
+    private const int MostItems = 3000, MostMixed = 1000, Kinds = 4, RowKinds = 5;
 
     private readonly int[] columns;
     private readonly Discriminant? plain;
@@ -64,6 +64,21 @@ internal sealed class Looks
         return plain == null ? null : new Looks(columns, plain, null, null) { IsColour = columns[0] < features.ColourColumns };
     }
 
+    /// <summary>Learns colour from single rows: mixtures that may take the time to settle.</summary>
+    /// <param name="inside">Row-major rows of the inside, three numbers each.</param>
+    /// <param name="outside">Rows of the outside.</param>
+    /// <param name="dimensions">Length of a row.</param>
+    /// <returns>Null when a side has too few rows or no mixture fits.</returns>
+    public static Looks? OfRows(List<double> inside, List<double> outside, int dimensions)
+    {
+        if (Math.Min(inside.Count, outside.Count) < 40 * dimensions) return null;
+        GaussianMixture? inner = Settled(inside), outer = Settled(outside);
+        return inner == null || outer == null ? null : new Looks([.. Enumerable.Range(0, dimensions)], null, inner, outer) { IsColour = true };
+
+        GaussianMixture? Settled(List<double> items) =>
+            GaussianMixture.Fit(CollectionsMarshal.AsSpan(items), dimensions, RowKinds, CovarianceModel.Own, seed: 1, starts: 1, rounds: 25);
+    }
+
     /// <summary>Whether the columns are colour, of which single points know more than their patch.</summary>
     public bool IsColour { get; private init; }
 
@@ -74,7 +89,7 @@ internal sealed class Looks
     /// <summary>Log odds of a row, given in the order of the columns learnt.</summary>
     public float LogOdds(ReadOnlySpan<float> row, float clip)
     {
-        Span<double> item = stackalloc double[row.Length], logs = stackalloc double[Kinds];
+        Span<double> item = stackalloc double[row.Length], logs = stackalloc double[RowKinds];
         for (int c = 0; c < row.Length; c++) item[c] = row[c];
         if (plain != null)
         {

@@ -68,9 +68,12 @@ internal sealed class Sheet
         double tilt = (p.G * (1 - f)) + (q.G * f);
         double yaw = q.S > p.S ? (q.A + q.B - p.A - p.B) / 2 / (q.S - p.S) : 0;
         double depth = Math.Min(t - a, b - t) / Math.Sqrt(1 + (tilt * tilt) + (yaw * yaw));
-        double beyond = Math.Max(Knots[0].S - Knots[0].HalfM - s, s - Knots[^1].S - Knots[^1].HalfM);
+        double beyond = Beyond(s);
         return beyond > 0 ? Math.Min(depth, -beyond) : depth;
     }
+
+    /// <summary>How far a place lies beyond the ends of the sheet [m], negative between them.</summary>
+    public double Beyond(double s) => Math.Max(Knots[0].S - Knots[0].HalfM - s, s - Knots[^1].S - Knots[^1].HalfM);
 
     /// <summary>The pieces as the record keeps them.</summary>
     public SlabWindow[] Windows()
