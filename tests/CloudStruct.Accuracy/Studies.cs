@@ -1,3 +1,5 @@
+using CloudStruct.Accuracy.Deep;
+
 namespace CloudStruct.Accuracy;
 
 /// <summary>The studies by name.</summary>
@@ -8,6 +10,7 @@ public static class Studies
     {
         ["classes"] = new ClassesStudy(),
         ["contacts"] = new ContactsStudy(),
+        ["deep"] = new DeepStudy(),
         ["faces"] = new FacesStudy(),
         ["sets"] = new SetsStudy(),
         ["width"] = new WidthStudy(),

@@ -14,6 +14,12 @@ public sealed record StudyOptions
     /// <summary>About how many points to make; null: as the plan says.</summary>
     public int? Points { get; init; }
 
+    /// <summary>Scenes made at once, each on one thread.</summary>
+    public int Workers { get; init; } = Environment.ProcessorCount;
+
+    /// <summary>File to write tables to; null for the terminal alone.</summary>
+    public string? Out { get; init; }
+
     /// <summary>Reads --plan A,B --seeds 5-9 --points 300000.</summary>
     public static StudyOptions Parse(ReadOnlySpan<string> args)
     {
@@ -25,6 +31,8 @@ public sealed record StudyOptions
             {
                 "--plan" => o with { Plans = value.Split(',') },
                 "--seeds" => o with { Seeds = SeedsOf(value) },
+                "--workers" => o with { Workers = int.Parse(value, CultureInfo.InvariantCulture) },
+                "--out" => o with { Out = value },
                 "--points" => o with { Points = int.Parse(value, CultureInfo.InvariantCulture) },
                 _ => throw new ArgumentException($"unknown option {args[i]}"),
             };

@@ -24,11 +24,12 @@ namespace CloudStruct.Accuracy;
 public sealed class WholeScene
 {
     /// <summary>Makes, measures and scores.</summary>
-    public WholeScene(OutcropPlan plan, ulong seed, int? points = null)
+    public WholeScene(OutcropPlan plan, ulong seed, int? points = null, int threads = 0)
     {
-        Outcrop = Simulate.Outcrop.Make(plan, seed, points);
+        threads = threads > 0 ? threads : Environment.ProcessorCount;
+        Outcrop = Simulate.Outcrop.Make(plan, seed, points, threads);
         var clock = Stopwatch.StartNew();
-        StageContext context = StageContext.Plain(seed, Environment.ProcessorCount);
+        StageContext context = StageContext.Plain(seed, threads);
         // One file, or tiles as two flights give them; a model that is out of true comes with its true sigmas.
         IPointSource[] sources = plan.Tiles > 1 ? [.. DemoSurvey.Of(Outcrop).Tiles.Select(t => t.Source)] : [Outcrop.AsSource()];
         bool turned = plan.ModelTiltSigmaDeg > 0 || plan.ModelTurnSigmaDeg > 0;
@@ -42,12 +43,15 @@ public sealed class WholeScene
         ContactsRecord contacts = new ContactsStage().Run(new ContactsInput(described, classes, faces, []), new ContactSettings(), context);
         (faces, Contacts) = CoverFaces.Drop(faces, contacts, classes, out _);
         WidthRecord = new WidthStage().Run(new WidthInput(described, classes, Contacts), new WidthSettings(), context);
-        Sets = new SetsStage().Run(new SetsInput(cloud.Frame, faces, Contacts, described), new SetSettings(), context);
+        var forSets = new SetsInput(cloud.Frame, faces, Contacts, described);
+        Sets = new SetsStage().Run(forSets, new SetSettings(), context);
         Seconds = clock.Elapsed.TotalSeconds;
         int[] nearest = TruthOfPoints.Nearest(cloud, Outcrop);
         Faces.Add(Outcrop, cloud, faces, nearest);
         Classes = ClassScore.Of(Outcrop, nearest, classes);
         Width.Add(Outcrop with { Origin = cloud.Frame.Origin }, Contacts, WidthRecord);   // records count from the survey's own origin
+        SetScore = SetsStudy.Score(Outcrop, forSets, Sets);
+        ContactFloorsDeg = [.. ContactFloor.ErrorsDeg(Outcrop, cloud.Frame.Origin, Contacts)];
     }
 
     /// <summary>The outcrop.</summary>
@@ -70,6 +74,12 @@ public sealed class WholeScene
 
     /// <summary>Sets as measured.</summary>
     public SetsRecord Sets { get; }
+
+    /// <summary>Sets against truth.</summary>
+    public SetScore SetScore { get; }
+
+    /// <summary>Contact errors that remain with the true margins [deg].</summary>
+    public double[] ContactFloorsDeg { get; }
 
     /// <summary>Wall time of the stages [s].</summary>
     public double Seconds { get; }

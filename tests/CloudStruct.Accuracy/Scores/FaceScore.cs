@@ -19,7 +19,7 @@ namespace CloudStruct.Accuracy.Scores;
 /// reported area. Sharpness: 1 when the median error is what the stated ellipse expects, above when cones are too wide.
 /// Floor: plain least squares on the points that truly belong to the face.
 /// </remarks>
-public sealed class FaceScore
+public sealed partial class FaceScore
 {
     private static readonly (string Name, double From, double To)[] Classes =
         [(">= 1 m2", 1, double.PositiveInfinity), ("0.25-1 m2", 0.25, 1), ("0.05-0.25 m2", 0.05, 0.25)];
@@ -155,6 +155,7 @@ public sealed class FaceScore
         if (c < 0) return;
         judged[c]++;
         if (off <= f.Region.Cone95Deg) inside[c]++;
+        if (off <= f.Region.Cone95TotalDeg) insideTotal[c]++;
         double s1 = f.Region.Ellipse95MajorDeg, s2 = f.Region.Ellipse95MinorDeg;
         relative[c].Add(off / f.Region.Cone95Deg * PoleRegions.Cone95(s1, s2) / PoleRegions.Circle(s1, s2, 0.5));
     }

@@ -1,0 +1,49 @@
+namespace CloudStruct.Accuracy.Deep;
+
+/// <summary>What is asked of a plan, by the kind of outcrop it is.</summary>
+/// <param name="Plan">Name of the plan.</param>
+/// <param name="Iou">Dike IoU asked for; null where nothing is.</param>
+/// <param name="ContactDeg">Median and 95th percentile of the contact error [deg]; null where nothing is asked.</param>
+/// <param name="Width">Median and 95th percentile of the relative width error; null where nothing is asked.</param>
+public sealed record Family(string Plan, double? Iou = null, (double, double)? ContactDeg = null, (double, double)? Width = null)
+{
+    private static readonly (double, double) ClearContact = (0.9, 4), LongContact = (1.5, 9), TextureContact = (3, 10);
+    private static readonly (double, double) ClearWidth = (0.01, 0.03), LongWidth = (0.02, 0.08), TextureWidth = (0.05, 0.15);
+
+    /// <summary>All families, in the order of the page. Plans that no figure is stated for are shown without one.</summary>
+    public static Family[] All { get; } =
+    [
+        new("demo", 0.95, ClearContact, ClearWidth),
+        new("two-dikes", 0.95, ClearContact, ClearWidth),
+        new("tilted", 0.95, ClearContact, ClearWidth),
+        new("long", 0.92, LongContact, LongWidth),
+        new("bent", 0.92, LongContact, LongWidth),
+        new("stepped", 0.92, LongContact, LongWidth),
+        new("tapering", 0.92, LongContact, LongWidth),
+        new("low-contrast", 0.88, TextureContact, TextureWidth),
+        new("texture-only", 0.88, TextureContact, TextureWidth),
+        new("crossing"),
+        new("tip"),
+        new("thin"),
+        new("flat-lying"),
+        new("stained"),
+        new("scree"),
+        new("tiles"),
+        new("turned"),
+        new("south"),
+        new("wall"),
+        new("pavement"),
+        new("no-dike"),
+        new("gully"),
+        new("banded"),
+        new("shaded"),
+        new("faces-only"),
+        new("faces-smooth"),
+        new("random-joints"),
+        new("lognormal-joints"),
+        new("no-colour"),
+    ];
+
+    /// <summary>What is asked of a plan; nothing of one that is not listed.</summary>
+    public static Family Of(string plan) => Array.Find(All, f => f.Plan == plan) ?? new Family(plan);
+}
