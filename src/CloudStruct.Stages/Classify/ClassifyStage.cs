@@ -41,9 +41,10 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
 
         double narrowest = settings.NarrowestDikeM ?? Math.Max(LeastDikeM, 6 * patches.SizeM), widest = settings.WidestDikeM ?? (Extent(described.Cloud) / 3);
         var finder = new DikeFinder(patches, features, rock, context);
-        List<FoundDike> found = finder.Run(narrowest, widest, settings.MostDikes, labels);
+        var drawing = new DikeDrawing(described, patches, features, rock, settings, labels, context);
+        finder.Run(narrowest, widest, settings.MostDikes, labels, drawing);
         context.Progress(0.8);
-        Outcome outcome = Draw(described, patches, features, settings, labels, kind, found, context);
+        Outcome outcome = Gather(described, patches, kind, drawing.Kept);
         Mark(outcome, labels);
         context.Progress(0.95);
         double thinnest = Thinnest(outcome, narrowest, settings);
@@ -52,7 +53,7 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
     }
 
     /// <summary>What is drawn so far: class, odds, and number of the dike per point; the dikes in order of area.</summary>
-    private sealed record Outcome(byte[] Class, byte[] Probability, byte[] DikeOfPoint, List<FoundDike> Dikes, double EvidencePerM2);
+    private sealed record Outcome(byte[] Class, byte[] Probability, byte[] DikeOfPoint, List<Drawn> Dikes, double EvidencePerM2);
 
     /// <summary>Host for rock, Cover, or Loose or Unknown for small separate pieces, per patch.</summary>
     private static byte[] Kinds(Patches patches, Features features, ClassifySettings settings, PatchLabels labels, StageContext context)
@@ -154,46 +155,40 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
         }
     }
 
-    private static Outcome Draw(
-        DescribedCloud described, Patches patches, Features features, ClassifySettings settings, PatchLabels labels, byte[] kind, List<FoundDike> found, StageContext context)
+    /// <summary>Class, odds and number of the dike per point, from what was drawn.</summary>
+    private static Outcome Gather(DescribedCloud described, Patches patches, byte[] kind, List<Drawn> drawn)
     {
         int n = described.Cloud.Count;
         byte[] classes = new byte[n], probability = new byte[n], dikeOf = new byte[n];
         for (int i = 0; i < n; i++) classes[i] = kind[patches.OfPoint[i]];
-        bool[] free = [.. kind.Select(k => k == (byte)RockClass.Host)];
-        var cut = new DikeCut(patches, features, settings, context);
         var areas = new List<double>();
         double evidence = 0, evidenceArea = 0;
-        for (int d = 0; d < found.Count; d++)
+        for (int d = 0; d < drawn.Count; d++)
         {
-            (bool[] inside, float[] odds, Looks[] looks, MarginFit margins) = cut.Run(found[d], free, labels);
-            var say = new bool[n];
-            for (int i = 0; i < n; i++) say[i] = inside[patches.OfPoint[i]];
-            PointCut.Run(described, patches, features, found[d], margins, looks, inside, free, settings.SmoothingPerM, say, context);
+            Drawn one = drawn[d];
             double area = 0;
             for (int i = 0; i < n; i++)
             {
                 int p = patches.OfPoint[i];
-                if (free[p] && odds[p] != 0) probability[i] = Math.Max(probability[i], Probability(odds[p], say[i]));
-                if (!say[i]) continue;
+                if (kind[p] == (byte)RockClass.Host && one.Odds[p] != 0 && dikeOf[i] == 0) probability[i] = Math.Max(probability[i], Probability(one.Odds[p], one.Say[i]));
+                if (!one.Say[i]) continue;
                 classes[i] = (byte)RockClass.Dike;
                 dikeOf[i] = (byte)(d + 1);
                 area += described.AreaM2[i];
-                evidence += Math.Clamp(odds[p], 0, Appearance.Clip) * described.AreaM2[i];
+                evidence += Math.Clamp(one.Odds[p], 0, Appearance.Clip) * described.AreaM2[i];
                 evidenceArea += described.AreaM2[i];
             }
 
             areas.Add(area);
-            for (int p = 0; p < free.Length; p++) free[p] &= !inside[p];
         }
 
         // Numbers in order of exposed area.
-        int[] order = [.. Enumerable.Range(0, found.Count).OrderByDescending(d => areas[d]).ThenBy(d => d)];
-        var number = new byte[found.Count + 1];
+        int[] order = [.. Enumerable.Range(0, drawn.Count).OrderByDescending(d => areas[d]).ThenBy(d => d)];
+        var number = new byte[drawn.Count + 1];
         for (int k = 0; k < order.Length; k++) number[order[k] + 1] = (byte)(k + 1);
         for (int i = 0; i < n; i++) dikeOf[i] = number[dikeOf[i]];
         double perM2 = (evidenceArea > 0 ? evidence / evidenceArea : 0.5 * Appearance.Clip) / SheetFitter.IndependentM2;
-        return new Outcome(classes, probability, dikeOf, [.. order.Select(d => found[d])], perM2);
+        return new Outcome(classes, probability, dikeOf, [.. order.Select(d => drawn[d])], perM2);
     }
 
     /// <summary>The odds of a patch, drawn to the side of the cut that the point came to lie on.</summary>
@@ -237,7 +232,7 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
 
         for (int d = 0; d < outcome.Dikes.Count; d++)
         {
-            if (outcome.Dikes[d].ByColour || !described.Cloud.HasColour) continue;
+            if (outcome.Dikes[d].Dike.ByColour || !described.Cloud.HasColour) continue;
             context.Say(new Remark(Name, $"Dike {d + 1} is told from its host by texture, not by colour: its margins are less certain.", true));
         }
     }
@@ -254,8 +249,8 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
             [
                 .. outcome.Dikes.Select((d, k) => new DikeBody
                 {
-                    Dike = k + 1, Windows = d.Sheet.Windows(), MarginWanderM = d.Judgement.WanderM,
-                    Separation = Math.Max(d.Judgement.ColourAuc, d.Judgement.TextureAuc), ByColour = d.ByColour,
+                    Dike = k + 1, Windows = d.Dike.Sheet.Windows(), MarginWanderM = d.ScatterM,
+                    Separation = Math.Max(d.Dike.Judgement.ColourAuc, d.Dike.Judgement.TextureAuc), ByColour = d.Dike.ByColour,
                 }),
             ],
             ThinnestDikeM = thinnest,

@@ -1,8 +1,13 @@
+using CloudStruct.Records.Frame;
+
 namespace CloudStruct.Stages.Classify;
 
 /// <content>Corridors, training sides, and following a sheet along strike.</content>
 internal sealed partial class DikeFinder
 {
+    /// <summary>Cosine of 15 deg, as in the search: flatter slabs are beds or benches.</summary>
+    private static readonly double SteepestPole = Math.Cos(15 * Math.PI / 180);
+
     /// <summary>Patches of rock about a sheet, sorted by s.</summary>
     private sealed record Corridor(List<int> Patch, List<int> Fold, double[] S, double[] V, double[] T)
     {
@@ -118,6 +123,68 @@ internal sealed partial class DikeFinder
 
         sheet.Knots.Clear();
         sheet.Knots.AddRange(Smoothed(knots));
+    }
+
+    /// <summary>The plane slab near the sheet that gains most log odds, over all directions within some twenty degrees.</summary>
+    /// <remarks>The search's pole may be twenty degrees off where shade or a step tells the same side; followed from there, a
+    /// sheet of one tilt cannot come back and what is learnt of it stays half host.</remarks>
+    private Sheet Aimed(Sheet sheet, Corridor corridor, float[] odds)
+    {
+        Knot knot = sheet.Knots[0];
+        double width = knot.B - knot.A, reach = 1.1 * width, bin = Math.Max(patches.SizeM / 2, width / 60);
+        int bins = (int)Math.Ceiling(2 * reach / bin), least = (int)(0.5 * width / bin), most = (int)(1.9 * width / bin);
+        var sum = new double[bins + 1];
+        Vec3 best = sheet.N;
+        (double top, int from, int to) = Score(best);
+        for (double step = 12; step > 1; step /= 2)
+        {
+            for (int again = 0; again < 2; again++)
+            {
+                Vec3 about = best, e1 = Math.Abs(about.Z) < 0.9 ? about.Cross(Vec3.Up).Unit() : about.Cross(new Vec3(1, 0, 0)).Unit(), e2 = about.Cross(e1);
+                double tan = Math.Tan(step * Math.PI / 180);
+                bool moved = false;
+                for (int k = 0; k < 6; k++)
+                {
+                    Vec3 near = (about + (e1 * (tan * Math.Cos(k * Math.PI / 3))) + (e2 * (tan * Math.Sin(k * Math.PI / 3)))).Unit();
+                    if (Math.Abs(near.Z) > SteepestPole) continue;
+                    (double value, int a, int b) = Score(near);
+                    // A degree that wins nothing is not taken.
+                    if (value <= top * (1 + 1e-3)) continue;
+                    (top, from, to, best, moved) = (value, a, b, near, true);
+                }
+
+                if (!moved) break;
+            }
+        }
+
+        double low = (from * bin) - reach, high = (to * bin) - reach;
+        var aimed = new Sheet(sheet.Origin + (best * ((low + high) / 2)), best);
+        aimed.Knots.Add(new Knot { S = 0, HalfM = knot.HalfM, A = -(high - low) / 2, B = (high - low) / 2 });
+        return aimed;
+
+        (double Value, int From, int To) Score(Vec3 normal)
+        {
+            Array.Clear(sum);
+            for (int i = 0; i < odds.Length; i++)
+            {
+                int p = corridor.Patch[i];
+                double t = normal.Dot(new Vec3(patches.X[p], patches.Y[p], patches.Z[p]) - sheet.Origin);
+                int at = (int)((t + reach) / bin) + 1;
+                if (t >= -reach && at <= bins) sum[at] += odds[i] * patches.AreaM2[p];
+            }
+
+            for (int k = 1; k <= bins; k++) sum[k] += sum[k - 1];
+            (double Value, int From, int To) win = (double.NegativeInfinity, 0, 1);
+            for (int a = 0; a + least <= bins; a++)
+            {
+                for (int b = a + least; b <= Math.Min(bins, a + most); b++)
+                {
+                    if (sum[b] - sum[a] > win.Value) win = (sum[b] - sum[a], a, b);
+                }
+            }
+
+            return win;
+        }
     }
 
     private static double Usual(List<Knot> knots, Knot first, double width)
