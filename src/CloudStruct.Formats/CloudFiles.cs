@@ -12,7 +12,7 @@ namespace CloudStruct.Formats;
 /// <summary>The door for cloud files: what is in a file decides, its name only helps to say what is wrong.</summary>
 public static class CloudFiles
 {
-    private const string Mend = "Export the cloud as uncompressed LAS (.las) or as PLY and run again";
+    private const string Mend = "Export the cloud as LAS, LAZ or PLY and run again";
 
     private static readonly string[] CloudExtensions = [".las", ".laz", ".ply", ".glb", ".gltf", ".xyz"];
 
@@ -58,12 +58,14 @@ public static class CloudFiles
             las.Projection.KeyDoubles, las.Projection.KeyText);
         var problems = new List<string>(las.Problems);
         problems.AddRange(crs.Problems);
-        if (las.Name.EndsWith(".laz", StringComparison.OrdinalIgnoreCase)) problems.Add("It is named .laz though its points are not compressed.");
-        else if (!las.Name.EndsWith(".las", StringComparison.OrdinalIgnoreCase)) problems.Add("It is LAS though its name says otherwise.");
+        bool laz = las.Name.EndsWith(".laz", StringComparison.OrdinalIgnoreCase), plain = las.Name.EndsWith(".las", StringComparison.OrdinalIgnoreCase);
+        if (laz && las.Laz is null) problems.Add("It is named .laz though its points are not compressed.");
+        else if (plain && las.Laz is not null) problems.Add("It is named .las though its points are compressed.");
+        else if (!laz && !plain) problems.Add($"It is {(las.Laz is null ? "LAS" : "LAZ")} though its name says otherwise.");
         return new CloudHeader
         {
             Name = las.Name,
-            Format = Invariant($"LAS 1.{las.Minor}, point format {las.PointFormat}"),
+            Format = Invariant($"{(las.Laz is null ? "LAS" : "LAZ")} 1.{las.Minor}, point format {las.PointFormat}"),
             Bytes = las.FileBytes,
             Points = las.Present,
             HasColour = LasRecord.ColourOffset(las.PointFormat) >= 0,

@@ -1,3 +1,4 @@
+using CloudStruct.Formats.Laz;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 
@@ -56,6 +57,9 @@ internal sealed record LasHeader
 
     /// <summary>What is wrong though the points can be read, a sentence each.</summary>
     public required string[] Problems { get; init; }
+
+    /// <summary>How the points are compressed; null when they are plain records.</summary>
+    public LazLayout? Laz { get; init; }
 
     /// <summary>Whether the file is cut short.</summary>
     public bool IsTruncated => Present < Declared;

@@ -1,5 +1,6 @@
 using System.Buffers.Binary;
 using System.Text;
+using CloudStruct.Formats.Laz;
 using CloudStruct.Records.Complaints;
 using static System.FormattableString;
 
@@ -88,10 +89,25 @@ internal sealed partial class LasHeaderReader
         if (records.Count > MostListed) Fact(name, Invariant($"and {records.Count - MostListed} more"));
     }
 
-    private void RefuseCompressed(List<LasVariable> records)
+    private LazLayout? Compression(List<LasVariable> records, bool compressed, int format, int recordBytes)
     {
-        if (records.Any(r => r.User == "laszip encoded" && r.Id == 22204))
-            throw LasSource.Compressed(file.Name, 104, "a record of compression items");
+        LasVariable? record = records.FirstOrDefault(r => r.User == LazLayout.User && r.Id == LazLayout.Id);
+        if (record is null && !compressed) return null;
+        if (record is null)
+            throw Fault(104, "the points are compressed, but nothing says how", "no record of compression items", "The header is damaged; copy the file again, or export it again");
+        try
+        {
+            var layout = LazLayout.Read(file.Take(record.At, record.Bytes, "the compression record"), format, recordBytes);
+            if (layout.Compressor == 0) return null;
+            if (!compressed) throw new LazDamageException("the header says that points are plain, the compression record says that they are not");
+            Fact("compression", Invariant($"compressor {layout.Compressor}, {(layout.ChunkPoints == 0 ? "chunks of differing size" : Invariant($"chunks of {layout.ChunkPoints} points"))}, items {string.Join(", ", layout.Items.Select(i => Invariant($"{i.Type} version {i.Version}")))}"));
+            return layout;
+        }
+        catch (LazDamageException e)
+        {
+            throw new InputException(Invariant($"{file.Name}, byte {record.At}"), "the compression of the points is not one that is read", e.Message,
+                "Export the cloud again as LAS or LAZ", e);
+        }
     }
 
     // Descriptors only name what follows the standard fields: the points can be read without them.

@@ -2,6 +2,7 @@ using System.Buffers.Binary;
 using System.Globalization;
 using System.Text;
 using CloudStruct.Formats.Bytes;
+using CloudStruct.Formats.Laz;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -46,7 +47,7 @@ internal sealed partial class LasHeaderReader
         int encoding = minor >= 2 ? U16(6) : 0;
         int headerBytes = HeaderBytes(minor);
         long pointsAt = U32(96);
-        (int format, int recordBytes) = PointFormat();
+        (int format, int recordBytes, bool compressed) = PointFormat();
         if (pointsAt < headerBytes || pointsAt > file.Length)
             throw Fault(96, "the points are said to start outside the file", Invariant($"byte {pointsAt} in a file of {file.Length} bytes with a header of {headerBytes}"),
                 pointsAt == 0 ? "The header was never completed by the program that wrote it; export the cloud again"
@@ -58,8 +59,8 @@ internal sealed partial class LasHeaderReader
         List<LasVariable> records = Variables(headerBytes, pointsAt);
         long pointsEnd = file.Length;
         if (minor >= 4 && headerBytes >= 375) pointsEnd = Extended(records, pointsAt);
-        RefuseCompressed(records);
-        long present = Present(pointsAt, pointsEnd, declared, recordBytes, records);
+        LazLayout? laz = Compression(records, compressed, format, recordBytes);
+        long present = laz is null ? Present(pointsAt, pointsEnd, declared, recordBytes, records) : declared;
         (Vec3? min, Vec3? max) = Bounds(declared, scale, offset);
         DescribeExtras(records, recordBytes - LasRecord.MinimumBytes(format));
         return new LasHeader
@@ -67,7 +68,7 @@ internal sealed partial class LasHeaderReader
             Name = file.Name, FileBytes = file.Length, Minor = minor, Encoding = encoding, PointFormat = format,
             RecordBytes = recordBytes, PointsAt = pointsAt, Declared = declared, Present = present, Scale = scale, Offset = offset,
             Min = min, Max = max, Date = Date(), Projection = Projection(records, minor >= 4 && (encoding & (1 << 4)) != 0),
-            Facts = [.. facts], Problems = [.. problems],
+            Laz = laz, Facts = [.. facts], Problems = [.. problems],
         };
     }
 
@@ -82,18 +83,21 @@ internal sealed partial class LasHeaderReader
         return stated;
     }
 
-    private (int Format, int RecordBytes) PointFormat()
+    private (int Format, int RecordBytes, bool Compressed) PointFormat()
     {
         int stated = head[104], recordBytes = U16(105);
-        // Compressed points raise the format by 128; very old writers set bit 6 instead.
-        if ((stated & 0xC0) != 0) throw LasSource.Compressed(file.Name, 104, Invariant($"point format byte {stated}"));
+        // Compressed points raise the format by 128; both upper bits together meant a scheme that was given up.
+        if ((stated & 0xC0) == 0xC0)
+            throw Fault(104, "the points are compressed in a way that was given up long ago", Invariant($"point format byte {stated}"), "Export the cloud again as LAS or LAZ");
+        bool compressed = (stated & 0xC0) != 0;
+        stated &= 0x3F;
         if (stated > LasRecord.LastFormat)
             throw Fault(104, "this point format does not exist", Invariant($"format {stated}; LAS has 0 to {LasRecord.LastFormat}"),
                 "The header is damaged; copy or export the file again");
         if (recordBytes < LasRecord.MinimumBytes(stated))
             throw Fault(105, "a point record is too short for its format", Invariant($"{recordBytes} bytes; format {stated} needs {LasRecord.MinimumBytes(stated)}"),
                 "The header is damaged; copy or export the file again");
-        return (stated, recordBytes);
+        return (stated, recordBytes, compressed);
     }
 
     private long DeclaredPoints(int minor, int headerBytes)

@@ -1,12 +1,13 @@
 using System.Buffers.Binary;
 using CloudStruct.Formats.Bytes;
+using CloudStruct.Formats.Laz;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Points;
 using static System.FormattableString;
 
 namespace CloudStruct.Formats.Las;
 
-/// <summary>Points of an uncompressed LAS file, streamed from large reads in file order.</summary>
+/// <summary>Points of a LAS or LAZ file in file order, streamed: plain records from large reads, compressed ones chunk by chunk.</summary>
 /// <remarks>Points flagged as withheld are deleted in the words of the standard: they are left out and counted in
 /// <see cref="SourceBlock.Withheld"/>.</remarks>
 internal sealed class LasSource : IPointSource
@@ -28,11 +29,6 @@ internal sealed class LasSource : IPointSource
     /// <inheritdoc/>
     public CloudHeader Header { get; }
 
-    /// <summary>The refusal of compressed points.</summary>
-    public static InputException Compressed(string name, long at, string found) => new(
-        Invariant($"{name}, byte {at}"), "the points are compressed (LAZ), and this version reads uncompressed LAS and PLY only", found,
-        "Export or convert the cloud to uncompressed LAS (.las) and run again");
-
     /// <inheritdoc/>
     public IEnumerable<SourceBlock> Read(CancellationToken stop)
     {
@@ -40,15 +36,12 @@ internal sealed class LasSource : IPointSource
             throw new InputException(Invariant($"{las.Name}, byte {las.PointsAt}"), "the file is cut short",
                 Invariant($"{las.Declared} points of {las.RecordBytes} bytes declared, {las.Present} are there in {las.FileBytes} bytes"),
                 "The copy is incomplete; copy the file again and compare sizes");
-        return Blocks(stop);
+        return las.Laz is null ? Blocks(stop) : Decompressed(stop);
     }
 
     private IEnumerable<SourceBlock> Blocks(CancellationToken stop)
     {
-        using var file = new FileBytes(path);
-        if (file.Length != las.FileBytes)
-            throw new InputException(las.Name, "the file changed while it was in use", Invariant($"{file.Length} bytes, {las.FileBytes} when opened"),
-                "Wait until it is fully written, then run again");
+        using FileBytes file = Reopen();
         long left = las.Present, at = las.PointsAt;
         int perRead = (int)Math.Min(left, Math.Max(1, BufferBytes / las.RecordBytes));
         byte[] buffer = new byte[perRead * las.RecordBytes];
@@ -76,6 +69,50 @@ internal sealed class LasSource : IPointSource
                 throw;
             }
             yield return block;
+        }
+    }
+
+    private IEnumerable<SourceBlock> Decompressed(CancellationToken stop)
+    {
+        using FileBytes file = Reopen();
+        var block = new SourceBlock(LasRecord.ColourOffset(las.PointFormat) >= 0);
+        try
+        {
+            foreach ((byte[] records, int count) in new LazPoints(file, las.Laz!, las.PointsAt, las.Declared).Read(stop))
+            {
+                for (int done = 0; done < count;)
+                {
+                    int n = Math.Min(count - done, SourceBlock.Capacity - block.Count - block.Withheld);
+                    Unpack(records.AsSpan(done * las.RecordBytes, n * las.RecordBytes), n, block);
+                    done += n;
+                    if (block.Count + block.Withheld < SourceBlock.Capacity) continue;
+                    SourceBlock full = block;
+                    block = new SourceBlock(full.HasColour);
+                    yield return full;
+                }
+            }
+
+            if (block.Count + block.Withheld > 0)
+            {
+                SourceBlock rest = block;
+                block = new SourceBlock(rest.HasColour);
+                yield return rest;
+            }
+        }
+        finally
+        {
+            block.Dispose();
+        }
+    }
+
+    private FileBytes Reopen()
+    {
+        var file = new FileBytes(path);
+        if (file.Length == las.FileBytes) return file;
+        using (file)
+        {
+            throw new InputException(las.Name, "the file changed while it was in use", Invariant($"{file.Length} bytes, {las.FileBytes} when opened"),
+                "Wait until it is fully written, then run again");
         }
     }
 

@@ -76,7 +76,7 @@ internal sealed record SurveyFolder
             throw new InputException(
                 shown,
                 "no cloud was found",
-                clouds == full ? "no file ending in .las or .ply directly in the folder, and no folder 'clouds'" : "no file ending in .las or .ply in the folder 'clouds'",
+                clouds == full ? "no file ending in .las, .laz or .ply directly in the folder, and no folder 'clouds'" : "no file ending in .las, .laz or .ply in the folder 'clouds'",
                 "Put the clouds into a folder 'clouds' inside the survey (folders further down are not searched)");
         }
 

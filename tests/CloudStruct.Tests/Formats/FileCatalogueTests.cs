@@ -15,7 +15,7 @@ public partial class FileCatalogueTests
     private static readonly string[] Refused =
     [
         "pd_no_vertex.ply", "tm_ply_empty_header.ply", "pd_sized_dims.ply", "pd_unsized_dims.ply", "as_issue623.ply",
-        "garbage_nVariableLength.las", "ign_made-a-reader-fail.laz",
+        "garbage_nVariableLength.las",
     ];
 
     public static TheoryData<string, string> Files()
@@ -46,7 +46,7 @@ public partial class FileCatalogueTests
     public void A_file_is_read_whole_or_refused(string name, string facts)
     {
         string path = Repo.Path("testdata/" + name);
-        if (Refused.Contains(Path.GetFileName(name)) || name.StartsWith("laz/", StringComparison.Ordinal) || name.StartsWith("gltf/", StringComparison.Ordinal))
+        if (Refused.Contains(Path.GetFileName(name)) || name.StartsWith("gltf/", StringComparison.Ordinal))
         {
             var e = Assert.Throws<InputException>(() => CloudFile.Points(path));
             Assert.StartsWith(Path.GetFileName(name), e.Message, StringComparison.Ordinal);
@@ -57,7 +57,7 @@ public partial class FileCatalogueTests
         Match las = LasFacts().Match(facts);
         if (las.Success)
         {
-            Assert.Equal($"LAS {las.Groups[1].Value}, point format {las.Groups[2].Value}", header.Format);
+            Assert.Equal($"{(name.EndsWith(".laz", StringComparison.Ordinal) ? "LAZ" : "LAS")} {las.Groups[1].Value}, point format {las.Groups[2].Value}", header.Format);
             long count = long.Parse(las.Groups[4].Value, NumberStyles.AllowThousands, CultureInfo.InvariantCulture);
             Assert.Equal(count, header.Points);
             Assert.Equal(count, points.Count + points.Withheld);
@@ -85,7 +85,9 @@ public partial class FileCatalogueTests
         long before = GC.GetAllocatedBytesForCurrentThread();
         Touch(path);
         long spent = GC.GetAllocatedBytesForCurrentThread() - before;
-        long allowed = (1 << 20) + (8 * new FileInfo(path).Length);
+        // Models of a compressed file take megabytes whatever it holds, and its points are some five times its size.
+        bool packed = name.EndsWith(".laz", StringComparison.Ordinal);
+        long allowed = (packed ? 1 << 23 : 1 << 20) + ((packed ? 40 : 8) * new FileInfo(path).Length);
         Assert.True(spent <= allowed, $"{name}: {spent} bytes for a file of {new FileInfo(path).Length}");
     }
 

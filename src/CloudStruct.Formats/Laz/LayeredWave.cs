@@ -1,0 +1,16 @@
+namespace CloudStruct.Formats.Laz;
+
+/// <summary>The wave packet of point formats 9 and 10.</summary>
+internal sealed class LayeredWave(bool version4) : Companion(29, version4)
+{
+    private readonly WaveModels?[] models = new WaveModels?[4];
+
+    /// <inheritdoc/>
+    public override int LayerCount => 1;
+
+    /// <inheritdoc/>
+    protected override void Decode(int channel, ReadOnlySpan<ArithmeticDecoder?> layers, Span<byte> value)
+    {
+        if (layers[0] is { } stream) (models[channel] ??= new WaveModels()).Next(stream, value);
+    }
+}
