@@ -6,6 +6,7 @@ using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
+using CloudStruct.Records.Sets;
 
 namespace CloudStruct.Formats;
 
@@ -50,6 +51,10 @@ public static class EvidenceFiles
     /// <summary>The line of a baseline/*.geojson; z is 0 where the file has none.</summary>
     /// <exception cref="InputException">The file does not hold exactly one line.</exception>
     public static Vec3[] ReadBaseline(string path) => GeoJsonLine.Read(path);
+
+    /// <summary>The zones of a zones/*.geojson: polygons, named by their property name or zone, else by the file.</summary>
+    /// <exception cref="InputException">The file is not understood, or a feature is no polygon.</exception>
+    public static Zone[] ReadZones(string path) => GeoJsonZones.Read(path);
 
     private static LabelPoint[] LabelledPoints(string path)
     {

@@ -29,6 +29,8 @@ public sealed class SetsStudy : IStudy
     /// <summary>Smallest face handed over [m²].</summary>
     private const double SmallestM2 = 0.03;
 
+    private readonly List<(bool Found, double LogRatio, bool Inside)> spacings = [];
+
     /// <inheritdoc/>
     public void Run(StudyOptions options)
     {
@@ -47,6 +49,7 @@ public sealed class SetsStudy : IStudy
             }
         }
 
+        PrintSpacing();
         Print("all outcrops, true faces", sum, "");
         Print("all outcrops, found faces", real, "");
         if (plans.Contains("large")) Large();
@@ -67,7 +70,7 @@ public sealed class SetsStudy : IStudy
         Console.WriteLine(Invariant($"20000 faces: {record.Sets.Length} sets, {Stopwatch.GetElapsedTime(start).TotalSeconds:0.0} s, {used.TotalSeconds:0.0} s of processor"));
     }
 
-    private static SetScore One(string what, SimulatedOutcrop rock, SetsInput input, ulong seed)
+    private SetScore One(string what, SimulatedOutcrop rock, SetsInput input, ulong seed)
     {
         long start = Stopwatch.GetTimestamp();
         SetsRecord record = new SetsStage().Run(input, new SetSettings(), StageContext.Plain(seed, 2, r => Console.WriteLine("    " + r.Text)));
@@ -76,10 +79,20 @@ public sealed class SetsStudy : IStudy
         Print(Invariant($"{what} {input.Faces.Faces.Length}"), score, Invariant($"{seconds:0.00} s"));
         foreach (OrientationSet s in record.Sets)
         {
-            Console.WriteLine(Invariant($"    {s.Set} {s.Mean.StrikeDeg:000}/{s.Mean.DipDeg:00} faces {s.Count} n {s.NEffective:0.0} kappa {s.Kappa:0} cone {s.Cone95Deg:0.00} spacing {s.SpacingM?.Value:0.00} ({s.SpacingM?.Low95:0.00}-{s.SpacingM?.High95:0.00})"));
+            double truth = TrueSpacing(rock, s);
+            if (s.SpacingM is { } e && double.IsFinite(truth)) spacings.Add((what.EndsWith("found", StringComparison.Ordinal), Math.Log(e.Value / truth), e.Low95 <= truth && truth <= e.High95));
+            Console.WriteLine(Invariant($"    {s.Set} {s.Mean.StrikeDeg:000}/{s.Mean.DipDeg:00} faces {s.Count} n {s.NEffective:0.0} kappa {s.Kappa:0} cone {s.Cone95Deg:0.00} stable {s.Stability:0.00} spacing {s.SpacingM?.Value:0.00} ({s.SpacingM?.Low95:0.00}-{s.SpacingM?.High95:0.00}) true {TrueSpacing(rock, s):0.00} persistence {s.PersistenceM?.Value:0.00} ({s.PersistenceM?.Low95:0.00}-{s.PersistenceM?.High95:0.00}) blind {s.BlindShare:0.000}"));
         }
 
         return score;
+    }
+
+    /// <summary>Spacing of the host set whose pole is nearest, within 15 deg; NaN in a dike.</summary>
+    private static double TrueSpacing(SimulatedOutcrop rock, OrientationSet set)
+    {
+        if (set.Domain != FaceDomain.Host || rock.HostSetPoles.Length == 0) return double.NaN;
+        int nearest = Enumerable.Range(0, rock.HostSetPoles.Length).MaxBy(p => Math.Abs(rock.HostSetPoles[p].Dot(set.Normal)));
+        return Math.Abs(rock.HostSetPoles[nearest].Dot(set.Normal)) > Math.Cos(15 * Degree) ? rock.HostSetSpacingM[nearest] : double.NaN;
     }
 
     /// <summary>What the stages before this one find; domain and place of a face by the truth of most of its points.</summary>
@@ -178,6 +191,16 @@ public sealed class SetsStudy : IStudy
         }
 
         return SetScore.Of([.. record.Sets.Where(s => s.Domain == domain)], poles, [.. faces.Select(n => n >= 10)]);
+    }
+
+    private void PrintSpacing()
+    {
+        foreach (var half in spacings.GroupBy(x => x.Found))
+        {
+            double[] sorted = [.. half.Select(x => x.LogRatio).Order()];
+            double mean = sorted.Average(), sd = Math.Sqrt(sorted.Sum(x => (x - mean) * (x - mean)) / Math.Max(1, sorted.Length - 1));
+            Console.WriteLine(Invariant($"host spacing, {(half.Key ? "found" : "true")} faces: stated over true median {Math.Exp(sorted[sorted.Length / 2]):0.00}, spread of the logarithm {sd:0.00}, inside {half.Count(x => x.Inside)} of {sorted.Length}"));
+        }
     }
 
     internal static void Print(string what, SetScore s, string tail)

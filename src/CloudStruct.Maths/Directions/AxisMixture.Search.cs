@@ -13,7 +13,7 @@ public sealed partial record AxisMixture
     private const int FirstRounds = 12;
     private const double NarrowStartDeg = 7, BroadStartDeg = 14;
 
-    private static readonly Vec3[] Places = NetPlaces(20);
+    private static readonly Vec3[] Places = NetPlaces(14);
 
     /// <summary>The best mixture with one cluster more, from the densest places of what is not explained yet, seen narrowly and
     /// broadly; null when no such cluster survives.</summary>

@@ -67,4 +67,16 @@ public sealed record OrientationSet
 
     /// <summary>User zone; empty for the whole survey.</summary>
     public string Zone { get; init; } = "";
+
+    /// <summary>The cone with the common errors of the whole model added [deg].</summary>
+    public double? Cone95TotalDeg { get; init; }
+
+    /// <summary>Share of redrawn outcrops in which the set came back, 0 to 1; null in zones.</summary>
+    public double? Stability { get; init; }
+
+    /// <summary>ISRM 1978 word for the spacing; empty when it is not known.</summary>
+    public string SpacingClass { get; init; } = "";
+
+    /// <summary>ISRM 1978 word for the persistence; empty when it is not known.</summary>
+    public string PersistenceClass { get; init; } = "";
 }

@@ -11,7 +11,7 @@ namespace CloudStruct.Stages.Sets;
 /// <param name="Tensor">Orientation tensor of the poles, each weighted by its weight times its share in the set.</param>
 /// <param name="Kappa">Fisher's (n - 1)/(n - R) of the poles turned to the side of the mean, n the effective number.</param>
 /// <param name="Region">Cone and ellipse of the mean, without and with the common errors of the model.</param>
-/// <param name="Variance">Covariance of the mean as a unit vector [rad²], widened for its own uncertainty.</param>
+/// <param name="Variance">Covariance of the mean as a unit vector [rad²].</param>
 /// <param name="Groups">Independent observations it rests on.</param>
 internal sealed record SetMean(Vec3 Mean, OrientationTensor Tensor, double Kappa, PoleRegion Region, Symmetric3 Variance, double Groups)
 {
@@ -49,6 +49,6 @@ internal sealed record SetMean(Vec3 Mean, OrientationTensor Tensor, double Kappa
         double freedom = v1 > 0 ? (groups - 1) * Math.Pow(v1 + v2, 2) / ((v1 * v1) + (v2 * v2)) : 2 * (groups - 1);
         double widening = FisherSnedecor.InvCDF(2, freedom, 0.95) * 2 / ChiSquared.InvCDF(2, 0.95);
         Symmetric3 wide = covariance * widening;
-        return new SetMean(mean, t, kappa, PoleRegions.From(mean, wide, reference), wide, groups);
+        return new SetMean(mean, t, kappa, PoleRegions.From(mean, wide, reference), covariance, groups);
     }
 }

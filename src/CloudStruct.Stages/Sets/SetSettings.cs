@@ -6,9 +6,10 @@ namespace CloudStruct.Stages.Sets;
 /// <summary>Settings of the stage sets.</summary>
 public sealed record SetSettings : IStageSettings
 {
-    /// <summary>How planes are weighted: count (every plane alike, less where its own attitude is uncertain) or area (by exposed
-    /// area). Count asks how often an attitude occurs, area how much rock surface has it.</summary>
-    public SetWeighting Weighting { get; init; } = SetWeighting.Count;
+    /// <summary>How planes are weighted: count (every plane alike, less where its own attitude is uncertain), exposure (the same,
+    /// more where the surface shows planes of that attitude rarely) or area (by exposed area). Count and exposure ask how often an
+    /// attitude occurs, on the surface and in the rock; area asks how much rock surface has it.</summary>
+    public SetWeighting Weighting { get; init; } = SetWeighting.Exposure;
 
     /// <summary>Most sets looked for in one domain.</summary>
     public int MostSets { get; init; } = 8;
@@ -27,14 +28,14 @@ public sealed record SetSettings : IStageSettings
     /// the larger face's area, at least 5 m.</summary>
     public double? ReachM { get; init; }
 
-    /// <summary>Breadth of the lanes along a set's normal in which its planes are counted for spacing [m]. Empty: the mean
-    /// exposed length of the set's faces, at least twenty times the spacing of the points.</summary>
+    /// <summary>Breadth of the lines along a set's normal on which its planes are counted for spacing [m]. Empty: four times the
+    /// spacing of the points.</summary>
     public double? LaneM { get; init; }
 
     /// <inheritdoc/>
     public IEnumerable<SettingComplaint> Check()
     {
-        if (!Enum.IsDefined(Weighting)) yield return new("sets.weighting", Invariant($"{(int)Weighting}"), "must be count or area");
+        if (!Enum.IsDefined(Weighting)) yield return new("sets.weighting", Invariant($"{(int)Weighting}"), "must be count, exposure or area");
         if (MostSets is < 1 or > 20) yield return new("sets.most_sets", Invariant($"{MostSets}"), "must be 1 to 20");
         if (FewestPlanes < 3) yield return new("sets.fewest_planes", Invariant($"{FewestPlanes}"), "must be 3 or more");
         if (!(ValleyDepth > 0 && ValleyDepth <= 1)) yield return new("sets.valley_depth", Invariant($"{ValleyDepth}"), "must be above 0 and at most 1");

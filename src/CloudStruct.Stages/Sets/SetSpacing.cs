@@ -1,56 +1,86 @@
 using CloudStruct.Maths.Rates;
-using CloudStruct.Maths.Directions;
-using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Width;
 
 namespace CloudStruct.Stages.Sets;
 
-/// <summary>Mean spacing of a set's exposed planes along its normal.</summary>
-/// <remarks>The exposure is cut into lanes along the mean normal, square in cross-section. In every lane the rock seen is
-/// measured along the normal, and the planes with a face in it are counted, each once: planes over length is the rate,
-/// whatever the lanes' ends cut off. A plane that shows no face in a lane is not counted there: this is the spacing of
-/// exposed planes, an upper bound of the spacing of joints.</remarks>
+/// <summary>Mean spacing of a set's exposed planes along its normal, with limits for the spacing of all its joints.</summary>
+/// <remarks>In every cube of the surface lines are laid over the ground in the direction in which the set's normal falls on it.
+/// Along each the rock seen is measured along the normal, and the planes of the set that the line meets are counted, each once:
+/// planes over length is the rate of an exponential law, whatever the ends cut off. A joint between blocks that end level shows
+/// no face and is not met; on a cliff that the set itself makes every course of blocks ends at a joint of its own. So the value
+/// is of exposed planes, and the limits allow for what that was worth on simulated rock whose joints are all known.</remarks>
 internal static class SetSpacing
 {
     /// <summary>Fewest separate planes for a spacing.</summary>
     private const int FewestPlanes = 4;
 
-    // Along the normal the rock is seen in steps of this part of a lane; a gap of one step is bridged, being as wide as a face
-    // seen edge-on may hide.
-    private const int StepsInLane = 10;
+    // Where the ground lies nearer to the set's planes than 20 deg a line along the normal is short and meets what it meets by chance.
+    private const double LeastSine = 0.34;
+
+    // Exposed over true spacing on simulated outcrops (plan no-dike, seeds 1-6, 18 sets): mean and spread of the logarithm. The
+    // first is the share of joints without a face, the second how much that differs from set to set. Judging by the angle
+    // between set and ground (lines only where it is above 50 deg) made the spread larger (0.52), broad lanes instead of lines no smaller.
+    private const double HiddenLog = 0.34, HiddenSpread = 0.45;
+
+    // A line is so many point spacings broad: then gaps between points do not break it.
+    private const double LineSpacings = 4;
 
     /// <summary>Spacing with its 95 % limits, or null when too few planes or too little rock was seen.</summary>
     /// <param name="cloud">The cloud.</param>
+    /// <param name="surface">The rock seen, in cubes.</param>
     /// <param name="rock">Per point: a face of the set's domain that it lies on, 0-based, or -1.</param>
     /// <param name="planeOfFace">Per face: number of its plane in this set, or -1.</param>
     /// <param name="normal">Mean pole of the set.</param>
-    /// <param name="laneM">Breadth of a lane [m].</param>
-    public static Estimate? Of(WorkingCloud cloud, int[] rock, int[] planeOfFace, Vec3 normal, double laneM)
+    /// <param name="lineM">Breadth of a line [m]; null: by the spacing of the points.</param>
+    public static Estimate? Of(WorkingCloud cloud, SurfaceCells surface, int[] rock, int[] planeOfFace, Vec3 normal, double? lineM)
     {
-        (Vec3 e1, Vec3 e2) = Tangent.Axes(normal);
-        double step = laneM / StepsInLane;
-        var seen = new HashSet<(int U, int V, int T)>();
-        var events = new HashSet<(int U, int V, int Plane)>();
-        for (int i = 0; i < rock.Length; i++)
+        double breadth = lineM ?? (LineSpacings * cloud.SpacingM);
+        double step = cloud.SpacingM;
+        if (!(breadth > 0 && step > 0)) return null;
+        var met = new HashSet<(int U, int Plane)>();
+        var planes = new HashSet<int>();
+        var seen = new List<(int U, int T, int V)>();
+        var cells = new List<(double Planes, double LengthM)>();
+        foreach (SurfaceCells.Cell cell in surface.Cells)
         {
-            if (rock[i] < 0) continue;
-            Vec3 p = cloud.Place(i);
-            int u = (int)Math.Floor(p.Dot(e1) / laneM), v = (int)Math.Floor(p.Dot(e2) / laneM);
-            seen.Add((u, v, (int)Math.Floor(p.Dot(normal) / step)));
-            if (planeOfFace[rock[i]] >= 0) events.Add((u, v, planeOfFace[rock[i]]));
+            Vec3 across = normal.Cross(cell.Normal);
+            if (across.Length < LeastSine) continue;
+            Vec3 u = across.Unit(), v = normal.Cross(u);
+            seen.Clear();
+            met.Clear();
+            foreach (int i in cell.Points)
+            {
+                Vec3 p = cloud.Place(i);
+                int line = (int)Math.Floor(p.Dot(u) / breadth), plane = planeOfFace[rock[i]];
+                if (plane < 0) seen.Add((line, (int)Math.Floor(p.Dot(normal) / step), (int)Math.Floor(p.Dot(v) / breadth)));
+                else if (met.Add((line, plane))) planes.Add(plane);
+            }
+
+            cells.Add((met.Count, Steps(seen) * step));
         }
 
-        int planes = events.Select(e => e.Plane).Distinct().Count();
-        if (planes < FewestPlanes) return null;
+        if (planes.Count < FewestPlanes || ClusteredRate.MeanGap(cells, planes.Count) is not { } shown) return null;
+        double sampling = Math.Log(shown.High95 / shown.Value), half = Math.Sqrt((sampling * sampling) + Math.Pow(1.96 * HiddenSpread, 2));
+        return new Estimate(shown.Value, shown.Value * Math.Exp(-HiddenLog - half), shown.Value * Math.Exp(half - HiddenLog));
+    }
 
-        // A bridged step counts as seen.
-        int bridged = seen.Count(s => !seen.Contains((s.U, s.V, s.T + 1)) && seen.Contains((s.U, s.V, s.T + 2)));
-        double length = (seen.Count + bridged) * step;
+    /// <summary>Steps along the normal that lines make over the ground. Where the ground lies over itself (a cliff that goes in and
+    /// out) each layer counts; what is steep within one step does not. Gaps of up to three steps are bridged: points lie unevenly,
+    /// and a face seen edge-on hides as much. Steps as long as a line is broad (tried) made treads too long by one step each.</summary>
+    private static int Steps(List<(int U, int T, int V)> seen)
+    {
+        seen.Sort();
+        int steps = 0;
+        (int U, int T, int V) last = (int.MinValue, 0, 0);
+        foreach ((int U, int T, int V) s in seen)
+        {
+            bool sameLine = s.U == last.U;
+            if (!sameLine || s.T != last.T || s.V > last.V + 2) steps += sameLine && s.T > last.T && s.T <= last.T + 4 ? s.T - last.T : 1;
+            last = s;
+        }
 
-        // Neighbouring lanes meet the same planes: the rate is that of all lanes, its error that of the separate planes.
-        double rate = events.Count / length;
-        return new CensoredRate(planes, planes / rate).MeanGap;
+        return steps;
     }
 }

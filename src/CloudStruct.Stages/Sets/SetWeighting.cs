@@ -8,4 +8,7 @@ public enum SetWeighting
 
     /// <summary>By exposed area: close to area per volume of rock, but a few large faces decide.</summary>
     Area,
+
+    /// <summary>As count, times the reciprocal of what part of planes of that attitude the surface can show, at most ten.</summary>
+    Exposure,
 }

@@ -2,6 +2,7 @@ using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
+using CloudStruct.Records.Sets;
 
 namespace CloudStruct.Stages.Sets;
 
@@ -10,4 +11,8 @@ namespace CloudStruct.Stages.Sets;
 /// <param name="Faces">The faces.</param>
 /// <param name="Contacts">Domain of every face and whether it is in place; empty arrays: all host, as the faces say.</param>
 /// <param name="Described">The cloud: where rock was seen, for spacing.</param>
-public sealed record SetsInput(SurveyFrame Frame, FaceSet Faces, ContactsRecord Contacts, DescribedCloud Described);
+public sealed record SetsInput(SurveyFrame Frame, FaceSet Faces, ContactsRecord Contacts, DescribedCloud Described)
+{
+    /// <summary>Zones that the user drew; survey coordinates.</summary>
+    public IReadOnlyList<Zone> Zones { get; init; } = [];
+}

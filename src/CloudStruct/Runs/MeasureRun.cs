@@ -105,7 +105,7 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
         if (onCover > 0) runner.Say(new Remark("faces", FormattableString.Invariant($"{onCover} flat pieces lie on cover and were left out."), false));
         string widthKey = contactKey, setKey = contactKey;
         WidthRecord width = runner.Run(new WidthStage(), new WidthInput(described, classes, contacts), recipe.Width, ref widthKey, cloud.Count);
-        SetsRecord sets = runner.Run(new SetsStage(), new SetsInput(cloud.Frame, faces, contacts, described), recipe.Sets, ref setKey);
+        SetsRecord sets = runner.Run(new SetsStage(), new SetsInput(cloud.Frame, faces, contacts, described) { Zones = evidence.Zones }, recipe.Sets, ref setKey);
         var findings = new Findings
         {
             SurveyName = survey.Name,

@@ -8,6 +8,7 @@ using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
+using CloudStruct.Records.Sets;
 using CloudStruct.Records.Stages;
 
 namespace CloudStruct.Runs;
@@ -26,6 +27,9 @@ internal sealed record SurveyEvidence
 
     /// <summary>The line that fixes chainage, map coordinates; empty when there is none.</summary>
     public required Vec3[] Baseline { get; init; }
+
+    /// <summary>Zones that the user drew, map coordinates, in order of files and features.</summary>
+    public Zone[] Zones { get; init; } = [];
 
     /// <summary>Damaged files that the recipe allowed to leave out, with the reason.</summary>
     public required string[] LeftOut { get; init; }
@@ -82,6 +86,7 @@ internal sealed record SurveyEvidence
             Labels = EvidenceFiles.ReadLabels(survey.Labels),
             Readings = survey.Readings is { } r ? EvidenceFiles.ReadReadings(r, new Declination(survey.Notes.Declination, crs, flown), survey.Notes.Notation) : [],
             Baseline = survey.Baseline is { } b ? EvidenceFiles.ReadBaseline(b) : [],
+            Zones = [.. survey.Zones.SelectMany(EvidenceFiles.ReadZones)],
             LeftOut = [.. leftOut],
             LeftOutFiles = [.. leftFiles],
             Remarks = [.. survey.PassedOver.Concat(sources.SelectMany(s => s.Header.Problems.Select(p => $"{s.Header.Name}: {p}"))).Select(p => new Remark("files", p, false)), .. leftOut.Select(l => new Remark("files", "Left out: " + l, true))],

@@ -35,6 +35,9 @@ internal sealed record SurveyFolder
     /// <summary>The line that fixes chainage when there is one.</summary>
     public required string? Baseline { get; init; }
 
+    /// <summary>Files of zones that the user drew.</summary>
+    public string[] Zones { get; init; } = [];
+
     /// <summary>survey.yaml when there is one.</summary>
     public required string? NotesFile { get; init; }
 
@@ -46,7 +49,7 @@ internal sealed record SurveyFolder
 
     /// <summary>All files that a run reads, in order.</summary>
     public IEnumerable<string> Files =>
-        new[] { NotesFile, Checkpoints, Readings, Baseline }.OfType<string>().Concat(Labels).Concat(Clouds);
+        new[] { NotesFile, Checkpoints, Readings, Baseline }.OfType<string>().Concat(Zones).Concat(Labels).Concat(Clouds);
 
     /// <summary>Name without the user's folders, with forward slashes.</summary>
     public string Relative(string file) => Path.GetRelativePath(Root, file).Replace('\\', '/');
@@ -92,6 +95,7 @@ internal sealed record SurveyFolder
             Checkpoints = Present(full, Path.Combine(full, "control", "checkpoints.csv"), passed),
             Readings = Present(full, Path.Combine(full, "field", "readings.csv"), passed),
             Baseline = Child(full, "baseline") is { } b ? FilesIn(full, b, [".geojson"], passed, other: null).FirstOrDefault() : null,
+            Zones = Child(full, "zones") is { } z ? FilesIn(full, z, [".geojson"], passed, other: "holds no zones that we read") : [],
             NotesFile = notesFile,
             UsualOut = Path.Combine(full, "results"),
             PassedOver = [.. passed],

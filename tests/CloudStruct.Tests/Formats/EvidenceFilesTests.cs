@@ -4,6 +4,7 @@ using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
+using CloudStruct.Records.Sets;
 using Microsoft.Data.Sqlite;
 using NetTopologySuite.Geometries;
 using NetTopologySuite.IO;
@@ -150,5 +151,17 @@ public sealed class EvidenceFilesTests : IDisposable
         using SqliteCommand command = db.CreateCommand();
         command.CommandText = sql;
         command.ExecuteNonQuery();
+    }
+
+    [Fact]
+    public void Zones_are_named_polygons()
+    {
+        const string ring = "[[0,0],[4,0],[4,4],[0,0]]";
+        Zone[] z = EvidenceFiles.ReadZones(Text("z.geojson",
+            "{\"type\":\"FeatureCollection\",\"features\":[{\"type\":\"Feature\",\"properties\":{\"name\":\"cliff\"},\"geometry\":{\"type\":\"Polygon\",\"coordinates\":["
+            + ring + "]}},{\"type\":\"Feature\",\"properties\":{},\"geometry\":{\"type\":\"Polygon\",\"coordinates\":[" + ring + "]}}]}"));
+        Assert.Equal(["cliff", "z 2"], z.Select(x => x.Name));
+        Assert.Equal(4, z[0].Rings[0].Length);
+        Assert.Throws<InputException>(() => EvidenceFiles.ReadZones(Text("y.geojson", "{\"type\":\"Point\",\"coordinates\":[1,2]}")));
     }
 }

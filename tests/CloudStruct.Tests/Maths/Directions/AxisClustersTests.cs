@@ -33,6 +33,21 @@ public class AxisClustersTests
         Assert.True(wrong <= 4, $"{wrong} axes left their set");
     }
 
+    // Where scikit-learn's DBSCAN (eps 10 deg, 5 points, angular distance of axes) and we both give a label, the labels are the
+    // same up to renaming. Its two outliers were drawn from set 1, as the table says: tails that reach farther than its 10 deg may
+    // stay in their set with us, or belong to none, but never to another.
+    [Fact]
+    public void Labels_agree_with_those_of_a_density_clustering_by_another_library()
+    {
+        ReferenceTable t = ReferenceTable.Read("reference/axes_dbscan.csv");
+        AxisClusters c = Find([.. Enumerable.Range(0, t.Count).Select(i => new TrendPlunge(t.Number(i, "trend"), t.Number(i, "plunge")).ToVector())]);
+        var pairs = Enumerable.Range(0, t.Count).Select(i => (Theirs: (int)t.Number(i, "dbscan_eps10_min5"), Ours: c.ClusterOf[i])).ToArray();
+        Assert.Equal(3, pairs.Where(p => p.Theirs >= 0 && p.Ours >= 0).Distinct().Count());
+        Assert.True(pairs.Count(p => p.Theirs >= 0 && p.Ours < 0) <= 0.05 * t.Count);
+        int first = pairs.Where((p, i) => t.Number(i, "true_set") == 1 && p.Ours >= 0).GroupBy(p => p.Ours).MaxBy(g => g.Count())!.Key;
+        Assert.All(pairs.Where(p => p.Theirs < 0), p => Assert.Contains(p.Ours, new[] { -1, first }));
+    }
+
     [Fact]
     public void Uniform_axes_have_no_cluster()
     {
@@ -56,6 +71,26 @@ public class AxisClustersTests
         }
 
         Assert.True(missed <= 1, $"{missed} of 10 draws had another number of sets");
+    }
+
+    // The variance of a mean in a clear set is that of the plain mean, Σ d²/(n (n - 1)).
+    [Fact]
+    public void The_mean_of_a_lone_set_has_the_variance_of_a_plain_mean()
+    {
+        Vec3[] axes = DensityTests.Cluster(40, new(40, 30), 400);
+        double[] ones = [.. axes.Select(_ => 1.0)];
+        AxisClusters c = Find(axes);
+        (CloudStruct.Maths.Fitting.Symmetric3 covariance, double groups) = MixtureMeans.Of(c.Mixture, axes, ones, [.. Enumerable.Range(0, 40)])[0];
+        OrientationTensor t = OrientationTensor.Of(axes);
+        Assert.Equal(40, groups, 0.5);
+        Assert.Equal((1 - t.S1) / 39, covariance.Xx + covariance.Yy + covariance.Zz, 0.1 * (1 - t.S1) / 39);
+
+        // Pairs that share their error count as one: the variance grows, the number halves.
+        Vec3[] twice = [.. axes, .. axes];
+        int[] pairs = [.. Enumerable.Range(0, 80).Select(i => i % 40)];
+        (CloudStruct.Maths.Fitting.Symmetric3 paired, double half) = MixtureMeans.Of(Find(twice).Mixture, twice, [.. twice.Select(_ => 1.0)], pairs)[0];
+        Assert.Equal(40, half, 0.5);
+        Assert.Equal(covariance.Xx + covariance.Yy + covariance.Zz, paired.Xx + paired.Yy + paired.Zz, 0.1 * (1 - t.S1) / 39);
     }
 
     // A heavy core with a halo is one set: mixtures alone would split it.

@@ -8,6 +8,7 @@ using CloudStruct.Records.Points;
 using CloudStruct.Records.Sets;
 using CloudStruct.Records.Stages;
 using CloudStruct.Stages.Sets;
+using CloudStruct.Tests.Kit;
 
 namespace CloudStruct.Tests.Stages.Sets;
 
@@ -151,7 +152,82 @@ public class SetsStageTests
         Assert.NotNull(risers.SpacingM);
         Assert.InRange(risers.SpacingM.Value, 0.7, 0.9);
         Assert.True(risers.SpacingM.Low95 < 0.8 && risers.SpacingM.High95 > 0.8);
+        Assert.Equal("wide", risers.SpacingClass);
+        Assert.InRange(risers.P32PerM!.Value, 1 / 0.9, 1 / 0.7);
         Assert.Equal(12, risers.ExposedLengthMeanM!.Value, 1e-9);
+    }
+
+    // A model tilted by unknown 0.5 deg: the total cone holds it, the internal one does not. 2.4477 standard deviations (Rayleigh).
+    [Fact]
+    public void Common_errors_widen_the_total_cone_only()
+    {
+        var frame = new SurveyFrame { Reference = new ModelReference { TiltSigmaDeg = 0.5, AzimuthSigmaDeg = 0.5 } };
+        OrientationSet plain = Run([.. Set(400, 75, 55, 0.5, 9, 300)]).Sets[0], tied = Run([.. Set(400, 75, 55, 0.5, 9, 300)], frame: frame).Sets[0];
+        Assert.Equal(plain.Cone95Deg, tied.Cone95Deg, 1e-12);
+        Assert.Equal(plain.Cone95Deg, plain.Cone95TotalDeg!.Value, 1e-9);
+        Assert.Equal(Math.Sqrt(Math.Pow(plain.Cone95Deg, 2) + Math.Pow(2.4477 * 0.5, 2)), tied.Cone95TotalDeg!.Value, 0.02);
+    }
+
+    [Fact]
+    public void A_set_that_all_places_show_is_stable()
+    {
+        OrientationSet set = Assert.Single(Run([.. Set(60, 75, 55, 0.5, 9, 200)]).Sets);
+        Assert.Equal(1, set.Stability);
+    }
+
+    // The same rock in two halves, turned 25 deg against each other about the vertical: one set broadly seen, or two; in zones the truth.
+    [Fact]
+    public void Zones_hold_their_own_means_and_are_compared()
+    {
+        Face[] west = [.. Set(60, 90, 80, 0.5, 1, 300)], east = [.. Set(60, 98, 80, 0.5, 2, 300)];
+        Face[] faces = [.. west, .. east.Select(f => f with { Middle = f.Middle + new Vec3(0, 500, 0) })];
+        faces = [.. faces.Select((f, i) => f with { FaceId = i + 1 })];
+        Zone Box(string name, double y0, double y1) => new(name, [[new(-10, y0, 0), new(4000, y0, 0), new(4000, y1, 0), new(-10, y1, 0), new(-10, y0, 0)]]);
+        var input = new SetsInput(new SurveyFrame(), new FaceSet { Faces = faces, NoiseM = 0.005 }, new ContactsRecord(), new DescribedCloud())
+        {
+            Zones = [Box("south", -100, 100), Box("north", 400, 600), Box("nowhere", 9000, 9100)],
+        };
+        SetsRecord r = new SetsStage().Run(input, new SetSettings { ValleyDepth = 0.05 }, StageContext.Plain());
+        OrientationSet south = r.Sets.Single(s => s.Zone == "south"), north = r.Sets.Single(s => s.Zone == "north");
+        Assert.Equal(90, south.Mean.StrikeDeg, 1.5);
+        Assert.Equal(98, north.Mean.StrikeDeg, 1.5);
+        Assert.Equal(south.Set, north.Set);
+        Assert.Equal(3, r.Sets.Length);
+        CommonMean row = Assert.Single(r.CommonMeans);
+        Assert.Equal(("host-1 in south", "host-1 in north", MeansVerdict.Apart), (row.First, row.Second, row.Verdict));
+        Assert.Equal(8, row.AngleDeg, 2.0);
+    }
+
+    [Fact]
+    public void Sets_of_two_domains_are_held_against_each_other()
+    {
+        Face[] faces = [.. Set(60, 90, 80, 0.5, 1, 200), .. Set(60, 90, 80, 0.5, 2, 200), .. Set(60, 105, 80, 0.5, 3, 200)];
+        faces = [.. faces.Select((f, i) => f with { FaceId = i + 1 })];
+        FaceDomain[] domain = [.. faces.Select((_, i) => i < 60 ? FaceDomain.Host : i < 120 ? FaceDomain.Dike : FaceDomain.Margin)];
+        CommonMean[] rows = Run(faces, domain).CommonMeans;
+        Assert.Equal(["host-1 dike-1", "host-1 margin-1", "dike-1 margin-1"], rows.Select(m => $"{m.First} {m.Second}"));
+        Assert.Equal([MeansVerdict.Alike, MeansVerdict.Apart, MeansVerdict.Apart], rows.Select(m => m.Verdict));
+        Assert.All(rows, m => Assert.InRange(m.NFirst, 40, 61));
+    }
+
+    // ISRM 1978 as tabulated in Brady and Brown, tables 3.1 and 3.2; boundaries belong to the upper class.
+    [Fact]
+    public void Class_words_are_those_of_the_standard()
+    {
+        ReferenceTable t = ReferenceTable.Read("reference/isrm_classes.csv");
+        for (int i = 0; i < t.Count; i++)
+        {
+            bool spacing = t.Text(i, "kind") == "spacing";
+            double scale = spacing ? 0.001 : 1, low = t.Number(i, "lower") * scale;
+            string word = t.Text(i, "class").Replace(' ', '_');
+            Assert.Equal(word, spacing ? IsrmClass.OfSpacing(low) : IsrmClass.OfPersistence(low));
+            if (t.Text(i, "upper").Length == 0) continue;
+            double below = (t.Number(i, "upper") * scale) - 1e-9;
+            Assert.Equal(word, spacing ? IsrmClass.OfSpacing(below) : IsrmClass.OfPersistence(below));
+        }
+
+        Assert.Equal("", IsrmClass.OfSpacing(null));
+        Assert.Equal("", IsrmClass.OfPersistence(double.NaN));
     }
 
     [Fact]
