@@ -12,6 +12,7 @@ public static class Studies
         ["contacts"] = new ContactsStudy(),
         ["deep"] = new DeepStudy(),
         ["faces"] = new FacesStudy(),
+        ["planes"] = new PlanesStudy(),
         ["sets"] = new SetsStudy(),
         ["width"] = new WidthStudy(),
         ["whole"] = new WholeStudy(),

@@ -112,7 +112,8 @@ internal static class ClassifiedCloudWriter
         bool In<T>(T[] column) => point >= 0 && point < column.Length;
         columns.Class[i] = In(f.Classes.Class) ? f.Classes.Class[point] : (byte)RockClass.Unknown;
         columns.DikeProbability[i] = In(f.Classes.DikeProbability) ? f.Classes.DikeProbability[point] : (byte)0;
-        columns.FaceId[i] = In(f.Faces.FaceOfPoint) ? (uint)f.Faces.FaceOfPoint[point] : 0;
+        int face = In(f.Faces.FaceOfPoint) ? f.Faces.FaceOfPoint[point] : 0;
+        columns.FaceId[i] = face > 0 ? (uint)f.Faces.Faces[face - 1].FaceId : 0;
         columns.RoughnessM[i] = In(f.Described.RoughnessM) ? f.Described.RoughnessM[point] : float.NaN;
     }
 }

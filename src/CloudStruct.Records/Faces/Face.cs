@@ -6,7 +6,8 @@ namespace CloudStruct.Records.Faces;
 /// <summary>One exposed planar piece of rock surface.</summary>
 public sealed record Face
 {
-    /// <summary>1, 2, ... in order of falling area.</summary>
+    /// <summary>Number above 0 that follows from place and attitude, so that it outlives changed settings; no two faces of a
+    /// survey share one. Not the position in <see cref="FaceSet.Faces"/>.</summary>
     public int FaceId { get; init; }
 
     /// <summary>Middle of the covered surface, local [m].</summary>
@@ -45,7 +46,8 @@ public sealed record Face
     /// <summary>Whether the rock is in place.</summary>
     public InPlace InPlace { get; init; } = InPlace.Unknown;
 
-    /// <summary>Number of its two ends along strike that run out of sight (0, 1 or 2); null when not determined.</summary>
+    /// <summary>Number of its two ends along strike that run out of sight (0, 1 or 2): no rock or ground goes on from the face there.
+    /// Null when not determined.</summary>
     public int? EndsHidden { get; init; }
 
     /// <summary>Outline on the plane, local [m], closed (first equals last), counter-clockwise seen against the normal.</summary>

@@ -3,10 +3,11 @@ namespace CloudStruct.Records.Faces;
 /// <summary>What the stage faces gives.</summary>
 public sealed record FaceSet
 {
-    /// <summary>Faces in order of their numbers: Faces[i].FaceId == i + 1.</summary>
+    /// <summary>Faces by falling area. Whatever refers to a face by its place in this list counts from 1; <see cref="Face.FaceId"/> is for
+    /// readers of the results.</summary>
     public Face[] Faces { get; init; } = [];
 
-    /// <summary>Face number per working point; 0 none.</summary>
+    /// <summary>Place in <see cref="Faces"/>, counted from 1, per working point; 0 none.</summary>
     public int[] FaceOfPoint { get; init; } = [];
 
     /// <summary>Smallest face reported [m²].</summary>
@@ -15,9 +16,9 @@ public sealed record FaceSet
     /// <summary>Farthest a point may lie from its face [m].</summary>
     public double ToleranceM { get; init; }
 
-    /// <summary>Scatter about large faces [m].</summary>
+    /// <summary>Standard deviation of the points' errors along the normal, with the part that fitted planes absorb [m].</summary>
     public double NoiseM { get; init; }
 
-    /// <summary>Length over which the scatter is correlated [m].</summary>
+    /// <summary>Length over which those errors are correlated [m].</summary>
     public double NoiseLengthM { get; init; }
 }

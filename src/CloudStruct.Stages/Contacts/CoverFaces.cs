@@ -8,7 +8,7 @@ namespace CloudStruct.Stages.Contacts;
 /// class tells that it is none.</summary>
 public static class CoverFaces
 {
-    /// <summary>The faces without those of which more than half the points are cover, numbered anew in the same order, and the
+    /// <summary>The faces without those of which more than half the points are cover, in the same order, and the
     /// contacts with what they say of the faces cut alike.</summary>
     /// <param name="faces">All flat pieces.</param>
     /// <param name="contacts">Domains and places of those faces.</param>
@@ -33,7 +33,7 @@ public static class CoverFaces
         return (
             faces with
             {
-                Faces = [.. kept.Select((f, k) => faces.Faces[f - 1] with { FaceId = k + 1 })],
+                Faces = [.. kept.Select(f => faces.Faces[f - 1])],
                 FaceOfPoint = Array.ConvertAll(faces.FaceOfPoint, f => number[f]),
             },
             contacts with

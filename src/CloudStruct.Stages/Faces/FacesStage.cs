@@ -1,5 +1,6 @@
 using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
 using static System.FormattableString;
@@ -39,6 +40,7 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
         pieces.Refit(surface, scatter, 2);
         new Competing(surface, scatter, Band()).Play(pieces, scatter, 3);
         new Joining(surface, scatter, noise.LengthM).Into(pieces);
+        if (new Splitting(surface, scatter, noise.LengthM).Into(pieces) > 0) new Competing(surface, scatter, Band()).Play(pieces, scatter, 2);
         context.Progress(0.7);
 
         Refusing.Spreads(surface, pieces, out double usual);
@@ -78,13 +80,13 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
             },
             length: 4);
         double refusedM2 = Enumerable.Range(0, pieces.Count).Where(k => refused[k]).Sum(k => measured[k]!.AreaM2);
-        FaceSet found = Number(surface, pieces, measured, refused, noise);
+        FaceSet found = Number(surface, pieces, measured, refused, noise, input.Cloud.Frame.Origin);
         Say(context, found, refused.Count(r => r), refusedM2);
         return found;
     }
 
     // Faces by falling area; equal areas by the first point.
-    private static FaceSet Number(Surface surface, Pieces pieces, Face?[] measured, bool[] refused, SceneNoise noise)
+    private static FaceSet Number(Surface surface, Pieces pieces, Face?[] measured, bool[] refused, SceneNoise noise, Vec3 origin)
     {
         int[] order = [.. Enumerable.Range(0, pieces.Count).Where(k => measured[k] is not null && !refused[k])];
         Array.Sort(order, (a, b) =>
@@ -92,14 +94,16 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
             int byArea = measured[b]!.AreaM2.CompareTo(measured[a]!.AreaM2);
             return byArea != 0 ? byArea : pieces.Of(a)[0].CompareTo(pieces.Of(b)[0]);
         });
-        var number = new int[pieces.Count];
-        for (int f = 0; f < order.Length; f++) number[order[f]] = f + 1;
+        var position = new int[pieces.Count];
+        for (int f = 0; f < order.Length; f++) position[order[f]] = f + 1;
+        Face[] faces = [.. order.Select(k => measured[k]!)];
+        int[] ids = FaceNumbers.Of(faces, origin);
         return new FaceSet
         {
-            Faces = [.. order.Select((k, f) => measured[k]! with { FaceId = f + 1 })],
-            FaceOfPoint = [.. pieces.Label.Select(l => number[l])],
+            Faces = [.. faces.Select((face, f) => face with { FaceId = ids[f] })],
+            FaceOfPoint = [.. pieces.Label.Select(l => position[l])],
             SmallestFaceM2 = surface.Settings.SmallestFaceM2,
-            NoiseM = noise.ScatterM,
+            NoiseM = noise.ErrorM,
             NoiseLengthM = noise.LengthM,
         };
     }

@@ -15,7 +15,7 @@ internal sealed class Measuring
 
     // A strip along the outline is less sure than noise alone makes it: edges are worn, and some of its points are the
     // neighbour's. Each side of it is taken to be off by so much of the scatter, over so many spacings, independently.
-    private const double RimOffsetOverScatter = 0.3;
+    private const double RimOffsetOverScatter = 0.4;
     private const double RimSpacings = 1.5;
 
     private readonly Surface surface;
@@ -44,7 +44,7 @@ internal sealed class Measuring
         PatchRecord? record = modes.Record(u, v, pseudo, w);
         Roughness rough = Rough(record, rms);
         double waviness = Math.Min(rms, rough.WavinessM);
-        (double length, double height) = Extents(label, normal, patch.Plane.Centroid, out Vec3 middle);
+        (double length, double height) = Extents(label, normal, patch.Plane.Centroid, out Vec3 middle, out int? ends);
         var face = new Face
         {
             Middle = middle,
@@ -59,6 +59,7 @@ internal sealed class Measuring
             WavinessM = waviness,
             Points = pieces.Of(label).Length,
             InPlace = InPlace.Unknown,
+            EndsHidden = ends,
             Outline = Outline(patch, found),
         };
         return (face, rough);
@@ -107,9 +108,10 @@ internal sealed class Measuring
         return new Roughness(Math.Sqrt(record.MeanSquare / variance), power, Math.Sqrt(Math.Max(0, excess)));
     }
 
-    private (double Length, double Height) Extents(int label, Vec3 normal, Vec3 origin, out Vec3 middle)
+    private (double Length, double Height) Extents(int label, Vec3 normal, Vec3 origin, out Vec3 middle, out int? ends)
     {
         (Vec3 along, Vec3 down) = PoleRegions.StrikeAndDip(normal);
+        ends = Ends.Hidden(surface, pieces, label, along, down);
         double lowU = double.MaxValue, highU = double.MinValue, lowV = double.MaxValue, highV = double.MinValue, u = 0, v = 0;
         ReadOnlySpan<int> own = pieces.Of(label);
         foreach (int i in own)

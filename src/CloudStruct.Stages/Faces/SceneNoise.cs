@@ -9,6 +9,8 @@ internal sealed class SceneNoise
     /// <summary>How firmly a single face keeps to the variance of the scene.</summary>
     private const double Freedom = 6;
 
+    private const int Rounds = 3;
+
     private const double LargeM2 = 0.5;
     private const double SoundSpread = 1.35;
     private const int FewestLarge = 5;
@@ -24,6 +26,9 @@ internal sealed class SceneNoise
 
     /// <summary>Scatter of the points about large faces [m].</summary>
     public double ScatterM { get; }
+
+    /// <summary>Standard deviation of the points' errors, the part that the planes have taken included [m].</summary>
+    public double ErrorM => Math.Sqrt(Prior.Variance);
 
     /// <summary>Length over which it is correlated [m].</summary>
     public double LengthM { get; }
@@ -85,8 +90,7 @@ internal sealed class SceneNoise
         var bins = new LagBins(h / 4, 4000 * h);
         var laws = new NoiseLaws(bins, h, Math.Max(1.0, 20 * h));
         int[] chosen = Largest(pieces, spread, most);
-        NoisePrior flat = laws.Flat(scatterM * scatterM, Freedom);
-        var likelihoods = new NoiseLikelihood?[chosen.Length];
+        var records = new PatchRecord?[chosen.Length];
         BlockParallel.For(
             chosen.Length,
             surface.Threads,
@@ -97,13 +101,48 @@ internal sealed class SceneNoise
                 for (int c = from; c < to; c++)
                 {
                     (double[] u, double[] v, _, double[] pseudo, double[] w) = WidePatch.Of(surface, pieces, chosen[c], scatterM).Columns(surface);
-                    if (modes.Record(u, v, pseudo, w) is { } record) likelihoods[c] = laws.Weigh(record, flat.Variance, Freedom);
+                    records[c] = modes.Record(u, v, pseudo, w);
                 }
             },
             length: 4);
-        NoiseLikelihood[] told = [.. likelihoods.OfType<NoiseLikelihood>()];
-        NoisePrior prior = laws.Learn(told, flat);
-        return new SceneNoise(scatterM, told.Length == 0 ? 3 * h : Length(laws, told, prior), bins, laws, prior);
+
+        // Residuals scatter less than errors: the plane takes the long waves. The variance that patches are held to starts at that
+        // of the residuals and is moved to that of the errors that the laws make of them.
+        NoisePrior prior = laws.Flat(scatterM * scatterM, Freedom);
+        double length = 3 * h;
+        for (int round = 0; round < Rounds; round++)
+        {
+            var told = new NoiseLikelihood?[chosen.Length];
+            double variance = prior.Variance;
+            BlockParallel.For(
+                chosen.Length,
+                surface.Threads,
+                surface.Stop,
+                (from, to) =>
+                {
+                    for (int c = from; c < to; c++) told[c] = records[c] is { } record ? laws.Weigh(record, variance, Freedom) : null;
+                },
+                length: 4);
+            NoiseLikelihood[] all = [.. told.OfType<NoiseLikelihood>()];
+            if (all.Length == 0) break;
+            prior = laws.Learn(all, laws.Flat(variance, Freedom));
+            length = Length(laws, all, prior);
+            if (round < Rounds - 1) prior = prior with { Variance = ErrorVariance(pieces, chosen, told, laws, prior) };
+        }
+
+        return new SceneNoise(scatterM, length, bins, laws, prior);
+    }
+
+    // Median over the faces, each weighing as much as it has points: some undulate, and must not speak for the rest.
+    private static double ErrorVariance(Pieces pieces, int[] chosen, NoiseLikelihood?[] told, NoiseLaws laws, NoisePrior prior)
+    {
+        var own = new List<(double Variance, double Points)>();
+        for (int c = 0; c < chosen.Length; c++)
+        {
+            if (told[c] is { } l) own.Add((laws.Slopes(l, prior).ErrorVariance, pieces.Of(chosen[c]).Length));
+        }
+
+        return Math.Max(prior.Variance, Middle([.. own]));
     }
 
     private static double Length(NoiseLaws laws, NoiseLikelihood[] told, NoisePrior prior)

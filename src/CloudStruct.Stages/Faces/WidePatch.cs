@@ -10,6 +10,13 @@ internal sealed class WidePatch
 {
     private const double BandOverScatter = 4;
 
+    // Where the noise is smooth the tight band cuts whole corners off a face, and what is left is tilted. So the gathering goes on
+    // beyond the outline over unowned points that lie nearly in the plane. On single faces under noise of 11 to 22 cm this brought coverage
+    // between 0.25 and 1 m² from 0.80-0.90 to 0.89-0.95. Beside small faces it gathers worn edges instead.
+    private const double BeyondOverBand = 0.75;
+    private const double BeyondBendDeg = 12;
+    private const double RimlessM2 = 0.25;
+
     private WidePatch(int[] points, PlaneFit plane, double scaleM, Coverage coverage, Vec3 along, Vec3 up)
     {
         Points = points;
@@ -94,6 +101,7 @@ internal sealed class WidePatch
     private static int[] Gather(
         Surface surface, Pieces pieces, ReadOnlySpan<int> own, in PlaneFit plane, Coverage coverage, Vec3 along, Vec3 up, double bandM)
     {
+        double beyondCosine = own.Length * surface.PointAreaM2 >= RimlessM2 ? Math.Cos(BeyondBendDeg * Math.PI / 180) : 2;
         var added = new HashSet<int>();
         var front = new List<int>();
         foreach (int i in own) Look(i, plane);
@@ -112,7 +120,10 @@ internal sealed class WidePatch
                 if (j < 0) break;
                 if (pieces.Label[j] != 0) continue;
                 Vec3 d = surface.Place(j) - plane.Centroid;
-                if (Math.Abs(d.Dot(plane.Normal)) > bandM || !coverage.Holds(d.Dot(along), d.Dot(up))) continue;
+                double off = Math.Abs(d.Dot(plane.Normal));
+                if (off > bandM) continue;
+                bool under = coverage.Holds(d.Dot(along), d.Dot(up));
+                if (!under && (off > BeyondOverBand * bandM || surface.Agreement(j, plane.Normal) < beyondCosine)) continue;
                 if (added.Add(j)) front.Add(j);
             }
         }

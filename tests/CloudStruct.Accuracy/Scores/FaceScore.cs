@@ -27,7 +27,7 @@ public sealed partial class FaceScore
     private readonly double[] trueArea = new double[3], foundArea = new double[3], pointsTrue = new double[3], pointsCovered = new double[3];
     private readonly int[] trueCount = new int[3], foundCount = new int[3], inside = new int[3], judged = new int[3], pieces = new int[3];
     private readonly List<double>[] error = [[], [], []], floor = [[], [], []], relative = [[], [], []];
-    private readonly List<double> areaRatio = [];
+    private readonly List<double> areaRatio = [], pointsRatio = [];
     private double reportedArea, rightArea, offArea;
     private int reported, joined;
 
@@ -63,6 +63,10 @@ public sealed partial class FaceScore
 
     /// <summary>Median over faces in one piece of reported over true area.</summary>
     public double AreaRatio => Quantile(areaRatio, 0.5);
+
+    /// <summary>The same by working points: true areas are sums over cells that count no more than whole, so that they lose a little by
+    /// chance; points do not.</summary>
+    public double PointsRatio => Quantile(pointsRatio, 0.5);
 
     /// <summary>Median attitude error of found faces of 0.25 m² or more [deg].</summary>
     public double MedianErrorDeg => Quantile([.. error[0], .. error[1]], 0.5);
@@ -113,7 +117,7 @@ public sealed partial class FaceScore
     {
         Console.WriteLine(
             Invariant($"{title}: {reported} reported; recall >= 0.25 m2 {RecallByArea:F3} by area {RecallByNumber:F3} by number, >= 0.05 m2 {RecallOfAllByArea:F3}, covered {Covered:F3}; ") +
-            Invariant($"precision {Precision:F3}, off any plane {OffPlane:F3}, pieces {PiecesPerFace:F2}, joined {Joined:F3}, area ratio {AreaRatio:F3}"));
+            Invariant($"precision {Precision:F3}, off any plane {OffPlane:F3}, pieces {PiecesPerFace:F2}, joined {Joined:F3}, area ratio {AreaRatio:F3}, points ratio {PointsRatio:F3}"));
         Console.WriteLine("  class          true  recall(area) recall(number) covered pieces |  error med   p95  floor med   p95 | coverage      n sharpness");
         for (int c = 0; c < 3; c++)
         {
@@ -175,7 +179,9 @@ public sealed partial class FaceScore
             foundArea[c] += t.AreaM2;
             pieces[c] += count[t.Id];
             error[c].Add(Angle(largest[t.Id]!.Normal, t.Normal));
-            if (count[t.Id] == 1) areaRatio.Add(largest[t.Id]!.AreaM2 / t.AreaM2);
+            if (count[t.Id] != 1) continue;
+            areaRatio.Add(largest[t.Id]!.AreaM2 / t.AreaM2);
+            pointsRatio.Add((double)largest[t.Id]!.Points / own[t.Id]);
         }
     }
 

@@ -34,6 +34,32 @@ public class FacesOnRockTests(ITestOutputHelper output)
     }
 
     [Fact]
+    public void A_changed_setting_leaves_the_numbers_of_faces_that_it_does_not_change()
+    {
+        (_, DescribedCloud described) = Rock("no-dike", 903, 120_000);
+        FaceSet first = new FacesStage().Run(described, new FaceSettings(), StageContext.Plain());
+        FaceSet second = new FacesStage().Run(described, new FaceSettings { SmallestFaceM2 = 0.1, BendDeg = 18 }, StageContext.Plain());
+        Assert.Equal(first.Faces.Length, first.Faces.Select(f => f.FaceId).Distinct().Count());
+        Assert.True(first.Faces.Length >= second.Faces.Length + 5, $"the settings must change something: {first.Faces.Length}, {second.Faces.Length}");
+
+        var shared = new Dictionary<(int First, int Second), int>();
+        for (int i = 0; i < first.FaceOfPoint.Length; i++)
+        {
+            (int, int) key = (first.FaceOfPoint[i], second.FaceOfPoint[i]);
+            shared[key] = shared.GetValueOrDefault(key) + 1;
+        }
+
+        (int First, int Second)[] same = [.. shared
+            .Where(s => s.Key.First > 0 && s.Key.Second > 0)
+            .Where(s => s.Value > 0.95 * Math.Max(first.Faces[s.Key.First - 1].Points, second.Faces[s.Key.Second - 1].Points))
+            .Select(s => s.Key)];
+        int kept = same.Count(s => first.Faces[s.First - 1].FaceId == second.Faces[s.Second - 1].FaceId);
+        output.WriteLine($"{kept} of {same.Length} faces that stay keep their numbers");
+        Assert.True(same.Length > 50);
+        Assert.True(kept >= 0.95 * same.Length, $"{kept} of {same.Length}");
+    }
+
+    [Fact]
     public void Any_number_of_threads_gives_the_same_faces_to_the_bit()
     {
         (_, DescribedCloud described) = Rock("demo", 7, 60_000);
