@@ -2,6 +2,7 @@ using CloudStruct.Formats.Bytes;
 using CloudStruct.Formats.Crs;
 using CloudStruct.Formats.Las;
 using CloudStruct.Formats.Ply;
+using CloudStruct.Formats.Text;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -49,8 +50,11 @@ public static class CloudFiles
         }
         if (start.Length > 3 && start.StartsWith("ply"u8) && start[3] is (byte)'\n' or (byte)'\r' or (byte)' ')
             return new PlySource(path, file, sampling);
+        if (Path.GetExtension(file.Name).ToLowerInvariant() is ".xyz" or ".txt" or ".csv" or ".asc" or ".pts" && file.Length > 0 && !IsPacked(start) && start.IndexOf((byte)0) < 0) return new TextSource(path, file);
         throw Refusal(file, start);
     }
+
+    private static bool IsPacked(ReadOnlySpan<byte> start) => start.StartsWith("PK\u0003\u0004"u8) || start is [0x1F, 0x8B, ..];
 
     private static CloudHeader Describe(LasHeader las)
     {
@@ -87,13 +91,11 @@ public static class CloudFiles
             return new InputException(file.Name, "glTF models are not read by this version", "a glTF file", "Export the model as PLY (mesh or points), or as LAS, and run again");
         if (start.StartsWith("ASTM-E57"u8))
             return new InputException(file.Name, "E57 is not read by this version", "an E57 file", Mend);
-        if (start.StartsWith("PK\u0003\u0004"u8) || start is [0x1F, 0x8B, ..])
+        if (IsPacked(start))
             return new InputException(file.Name, "the file is a compressed archive", "the mark of a zip or gzip file", "Unpack it first, then give the cloud inside");
         if (start.IndexOfAnyExcept((byte)0) < 0)
             return new InputException(file.Name, "the file starts with zeros where its format should stand", Invariant($"{file.Length} bytes"),
                 "The copy is incomplete; copy the file again");
-        if (extension is ".xyz" or ".txt" or ".csv" or ".asc" or ".pts")
-            return new InputException(file.Name, "clouds in plain text are not read by this version", Invariant($"a {extension} file"), Mend);
         string claim = extension is ".las" or ".laz" or ".ply" ? Invariant($"it is named {extension}, but its content is something else") : "its format is not one that is read";
         return new InputException(Invariant($"{file.Name}, byte 0"), claim, "first bytes " + Convert.ToHexString(start[..Math.Min(8, start.Length)]), Mend);
     }

@@ -13,6 +13,8 @@ public sealed class Figure(string name, Func<List<Sample>, double> statistic, in
     private const int Draws = 400;
     private readonly List<Sample[]> scenes = [];
 
+    private bool CountsThings => Unit.Length == 0;
+
     /// <summary>What it is.</summary>
     public string Name => name;
 
@@ -57,6 +59,22 @@ public sealed class Figure(string name, Func<List<Sample>, double> statistic, in
         Array.Sort(values);
         return (values[(int)(0.025 * Draws)], values[(int)(0.975 * Draws) - 1]);
     }
+
+    /// <summary>By how much the figure may miss what is asked by chance, on these few outcrops: twice its standard error.</summary>
+    /// <remarks>A share of many judged things that is asked to be p: binomial at p, half as wide again because things of one outcrop go
+    /// together. Anything else: from its scatter between outcrops, with Student's factor for so few (4.3 for three of them).</remarks>
+    public double ChanceOf(double asked)
+    {
+        if (statistic == Mean && CountsThings && asked is > 0 and < 1 && Judged >= 50) return 1.5 * 2 * Math.Sqrt(asked * (1 - asked) / Judged);
+        double[] each = [.. scenes.Where(s => s.Length > 0).Select(s => statistic([.. s]))];
+        if (each.Length < 2) return 0;
+        double mean = each.Average(), error = Math.Sqrt(each.Sum(v => (v - mean) * (v - mean)) / (each.Length - 1) / each.Length);
+        return error * (each.Length switch { 2 => 12.7, 3 => 4.3, 4 => 3.2, _ => 2.8 });
+    }
+
+    /// <summary>Whether it is as asked, or misses it by no more than chance allows.</summary>
+    public bool HoldsWithinChance =>
+        (least is not { } low || Value >= low - ChanceOf(low) - 1e-9) && (most is not { } high || Value <= high + ChanceOf(high) + 1e-9);
 
     /// <summary>Mean by weight; a share when values are 1 and 0.</summary>
     public static double Mean(List<Sample> samples) => samples.Sum(s => s.Value * s.Weight) / samples.Sum(s => s.Weight);

@@ -13,7 +13,7 @@ public class RefusalTests
     [InlineData("a.las", "hello world", "something else")]
     [InlineData("a.laz", "hello world", "something else")]
     [InlineData("a.ply", "solid cube", "something else")]
-    [InlineData("a.xyz", "1 2 3\n", "plain text")]
+    [InlineData("a.xyz", "hello\n", "not points")]
     [InlineData("a.glb", "glTF\u0002\0\0\0", "glTF")]
     [InlineData("a.gltf", "{}", "glTF")]
     [InlineData("a.las", "PK\u0003\u0004", "archive")]

@@ -1,6 +1,6 @@
 using System.Globalization;
 
-namespace CloudStruct.Formats.Ply;
+namespace CloudStruct.Formats.Bytes;
 
 /// <summary>Numbers written as text, invariant, with the spellings of not-a-number and infinity that C programs print.</summary>
 internal static class AsciiNumber
