@@ -11,7 +11,7 @@ public sealed class CorrelatedFit
     private readonly double[] residual;    // whitened residuals
     private readonly int count, parameters;
 
-    private CorrelatedFit(double[] factor, double[] whitened, double[] residual, double[] beta, double[] covariance, double likelihoodTerm)
+    private CorrelatedFit(double[] factor, double[] whitened, double[] residual, double[] beta, double[] covariance, double likelihoodTerm, double noiseTerm)
     {
         this.factor = factor;
         this.whitened = whitened;
@@ -19,6 +19,7 @@ public sealed class CorrelatedFit
         Beta = beta;
         Covariance = covariance;
         LogDeterminants = likelihoodTerm;
+        NoiseLogDeterminant = noiseTerm;
         count = residual.Length;
         parameters = beta.Length;
         foreach (double r in residual) SquareSum += r * r;
@@ -37,6 +38,10 @@ public sealed class CorrelatedFit
     /// <see cref="SquareSum"/>.</summary>
     public double LogDeterminants { get; }
 
+    /// <summary>ln det K: the part of minus twice the log likelihood that is not <see cref="SquareSum"/>, for models that differ in
+    /// their parameters.</summary>
+    public double NoiseLogDeterminant { get; }
+
     /// <summary>Variance of a linear combination of the parameters.</summary>
     public double VarianceOf(ReadOnlySpan<double> combination)
     {
@@ -47,6 +52,24 @@ public sealed class CorrelatedFit
         }
 
         return sum;
+    }
+
+    /// <summary>How far each observation lies from what all others say of it, in standard deviations of that difference (the
+    /// parameters taken as known).</summary>
+    /// <remarks>With P the inverse of the covariance and r the residuals: (P r)_i / √P_ii (Dubrule 1983, cross validation of
+    /// kriging in a unique neighbourhood, from memory).</remarks>
+    public double[] LeaveOneOut()
+    {
+        double[] inverse = LowerTriangle.Inverse(factor, count);
+        double[] v = [.. residual];
+        for (int i = count - 1; i >= 0; i--)
+        {
+            v[i] /= factor[(i * count) + i];
+            for (int j = 0; j < i; j++) v[j] -= factor[(i * count) + j] * v[i];
+        }
+
+        for (int i = 0; i < count; i++) v[i] /= Math.Sqrt(inverse[(i * count) + i]);
+        return v;
     }
 
     /// <summary>Best value at a new place, and the variance of its error, when the correlated part of the noise belongs to
@@ -120,6 +143,6 @@ public sealed class CorrelatedFit
             for (int a = 0; a < p; a++) y[i] -= x[(i * p) + a] * beta[a];
         }
 
-        return new CorrelatedFit(covariance, x, y, beta, inverse, logDet + logDetNormal);
+        return new CorrelatedFit(covariance, x, y, beta, inverse, logDet + logDetNormal, logDet);
     }
 }

@@ -28,5 +28,28 @@ public static partial class Sheets
     .Number("n_effective", "How many independent stations they are worth: neighbours resemble each other.", d => d.NEffective)
     .Metres("window_m", "Length of the window along strike in which attitudes were gathered.", d => d.WindowM)
     .Number("aspect_ratio_min", "Seen and hidden length over mean width: a lower bound, for the ends may lie outside the survey.", d => d.AspectRatioMin)
-    .Metres("thinnest_dike_m", "Thinnest dike that would have been seen; what is thinner may have been missed.", d => d.ThinnestDikeM);
+    .Metres("thinnest_dike_m", "Thinnest dike that would have been seen; what is thinner may have been missed.", d => d.ThinnestDikeM)
+    .Count("steps", "Steps of the true width along strike (width_trends.csv); empty with too few stations to look for any.", d => d.Steps)
+    .Number("trend", "Even change of the true width per metre of chainage, steps taken out: negative where the dike thins toward increasing chainage.", d => d.Trend?.Value)
+    .Number("trend_low95", "Lower 95 % limit of the same.", d => d.Trend?.Low95)
+    .Number("trend_high95", "Upper 95 % limit of the same.", d => d.Trend?.High95)
+    .Text("thickness_law", "The law of smallest Akaike criterion among the three that follow: lognormal, weibull or exponential; widths where a margin is hidden enter as lower bounds. Empty with fewer than three stations.", d => LawName(d.Laws.MinBy(l => l.Aic)))
+    .Number("lognormal_mu", "Lognormal law of the stations' widths: mean of ln(width / 1 m).", d => Law(d, ThicknessLawKind.Lognormal)?.First)
+    .Number("lognormal_sigma", "Lognormal law: standard deviation of ln(width).", d => Law(d, ThicknessLawKind.Lognormal)?.Second)
+    .Number("lognormal_aic", "Akaike criterion of the lognormal law, for the effective number of stations.", d => Law(d, ThicknessLawKind.Lognormal)?.Aic)
+    .Number("weibull_shape", "Weibull law: shape.", d => Law(d, ThicknessLawKind.Weibull)?.First)
+    .Metres("weibull_scale_m", "Weibull law: scale.", d => Law(d, ThicknessLawKind.Weibull)?.Second)
+    .Number("weibull_aic", "Akaike criterion of the Weibull law.", d => Law(d, ThicknessLawKind.Weibull)?.Aic)
+    .Metres("exponential_mean_m", "Exponential law: mean.", d => Law(d, ThicknessLawKind.Exponential)?.First)
+    .Number("exponential_aic", "Akaike criterion of the exponential law.", d => Law(d, ThicknessLawKind.Exponential)?.Aic);
+
+    private static ThicknessLaw? Law(DikeSummary d, ThicknessLawKind kind) => Array.Find(d.Laws, l => l.Kind == kind);
+
+    private static string LawName(ThicknessLaw? law) => law?.Kind switch
+    {
+        ThicknessLawKind.Lognormal => "lognormal",
+        ThicknessLawKind.Weibull => "weibull",
+        ThicknessLawKind.Exponential => "exponential",
+        _ => "",
+    };
 }

@@ -39,6 +39,12 @@ public sealed record DikeFrame
     /// <summary>Share of the variance of the scatter that neighbouring trace points do not share.</summary>
     public double TraceWhiteShare { get; init; }
 
-    /// <summary>Correlation of the scatter between facing places of the two margins.</summary>
+    /// <summary>Correlation of the undulation between facing places of the two margins.</summary>
     public double TraceShared { get; init; }
+
+    /// <summary>Undulation of a margin about its mean plane, one standard deviation [m].</summary>
+    public double WaveM { get; init; }
+
+    /// <summary>Length of its Matérn law of smoothness 3/2: about a fifth of a wavelength [m].</summary>
+    public double WaveRangeM { get; init; }
 }

@@ -53,4 +53,13 @@ public sealed record DikeSummary
 
     /// <summary>Thinnest dike that would have been seen [m].</summary>
     public double ThinnestDikeM { get; init; }
+
+    /// <summary>Laws fitted to the widths of the stations, in the order of their kinds; empty with too few stations.</summary>
+    public ThicknessLaw[] Laws { get; init; } = [];
+
+    /// <summary>Steps of the width; null when there were too few stations to look for any.</summary>
+    public int? Steps { get; init; }
+
+    /// <summary>Even change of the true width per metre of chainage; null when there were too few stations.</summary>
+    public Estimate? Trend { get; init; }
 }

@@ -9,6 +9,9 @@ public sealed record WidthRecord
     /// <summary>One per dike.</summary>
     public DikeSummary[] Dikes { get; init; } = [];
 
+    /// <summary>Steps and tapers, dike after dike.</summary>
+    public WidthTrend[] Trends { get; init; } = [];
+
     /// <summary>Distance between stations [m].</summary>
     public double StationM { get; init; }
 }

@@ -36,7 +36,7 @@ internal sealed partial class DikeTracer
         {
             Dike = Dike, CentreLine = line, ChainageM = chainage, Normal = normal, DipSigmaDeg = sigma, Constraint = Fixed, AIsLower = tracker.Sheet.AIsLower,
             WindowM = tracker.WindowM, TraceScatterM = noise.Noise.Sigma, TraceRangeM = noise.Noise.Range, TraceWhiteShare = noise.Noise.WhiteShare,
-            TraceShared = noise.Shared,
+            TraceShared = noise.Shared, WaveM = noise.WaveM, WaveRangeM = noise.WaveRangeM,
         };
     }
 
@@ -71,19 +71,16 @@ internal sealed partial class DikeTracer
     private Contact? Row(Margin margin, int at, int segment, double? lastTrend)
     {
         DikeStretch stretch = Stretches[at];
-        StretchFit? own = stretch.Fits[margin == Margin.A ? 0 : 1], both = stretch.Fits[2];
-        if (own is null) return null;
-        bool alone = both is null || own.TiltVariance < both.TiltVariance;
-        StretchFit fit = alone ? own : both!;
+        if (stretch.Fits[margin == Margin.A ? 0 : 1] is not { } fit) return null;
         SheetAxes axes = tracker.Sheet.At(stretch.S);
         double half = tracker.WindowM / 2;
-        Vec3 line = own.Line.Z > 0 ? -own.Line : own.Line, facing = axes.Normal * (margin == Margin.A ? -1 : 1);
+        Vec3 line = fit.Line.Z > 0 ? -fit.Line : fit.Line, facing = axes.Normal * (margin == Margin.A ? -1 : 1);
         var row = new Contact
         {
             Dike = Dike, Margin = margin, Segment = segment,
             ChainageFromM = ChainageAt(Math.Max(FromS, stretch.S - half)), ChainageToM = ChainageAt(Math.Min(ToS, stretch.S + half)),
-            Middle = own.Middle, ReliefM = fit.ReliefM, RmsM = own.LineRmsM, Points = fit.Cells,
-            Evidence = alone ? Evidence.Trace : Evidence.BothMargins, WindowM = tracker.WindowM,
+            Middle = fit.Middle, ReliefM = fit.ReliefM, RmsM = fit.LineRmsM, Points = fit.Cells,
+            Evidence = stretch.Both ? Evidence.BothMargins : Evidence.Trace, WindowM = tracker.WindowM,
             LineTrendDeg = Azimuth.Of(line, frame.TurnDeg),
             LinePlungeDeg = Math.Atan2(-line.Z, Math.Sqrt((line.X * line.X) + (line.Y * line.Y))) * 180 / Math.PI,
             MarginFacing = Compass[(int)Math.Round(Azimuth.Of(facing, frame.TurnDeg) / 45) % 8],

@@ -1,5 +1,6 @@
 using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
+using CloudStruct.Maths.Rates;
 using CloudStruct.Records.Attitudes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Frame;
@@ -44,9 +45,11 @@ internal static class Summaries
         double[] ordered = [.. widths.Order()];
         int n = ordered.Length;
         double median = n % 2 == 1 ? ordered[n / 2] : (ordered[(n / 2) - 1] + ordered[n / 2]) / 2;
+        // Widths of which one end is out of sight are at least as large as what shows of them.
+        double[] larger = [.. stations.Where(s => s.Status is StationStatus.AHidden or StationStatus.BHidden && s.VisibleWidthM is > 0).Select(s => s.VisibleWidthM!.Value)];
         return summary with
         {
-            WidthMeanM = About(average, error), WidthMedianM = About(median, medianError), WidthMinM = Own(measured[smallest]),
+            Laws = CensoredLaws.Of(widths, larger, effective), WidthMeanM = About(average, error), WidthMedianM = About(median, medianError), WidthMinM = Own(measured[smallest]),
             WidthMaxM = Own(measured[largest]), NEffective = effective, AspectRatioMin = (seen + hidden) / average,
         };
     }

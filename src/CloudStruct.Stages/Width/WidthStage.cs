@@ -19,6 +19,7 @@ public sealed class WidthStage : IStage<WidthInput, WidthSettings, WidthRecord>
     {
         WorkingCloud cloud = input.Described.Cloud;
         var stations = new List<Station>();
+        var trends = new List<WidthTrend>();
         var summaries = new List<DikeSummary>();
         foreach (DikeFrame frame in input.Contacts.Dikes)
         {
@@ -33,12 +34,15 @@ public sealed class WidthStage : IStage<WidthInput, WidthSettings, WidthRecord>
             own = Continuous(own);
             stations.AddRange(own);
             DikeSummary summary = Summaries.Of(frame, own, input.Contacts.Contacts, input.Classes.ThinnestDikeM, settings.StationM, cloud.Frame);
+            (WidthTrend[] rows, int? steps, Estimate? trend) = WidthTrends.Of(own);
+            summary = summary with { Steps = steps, Trend = trend };
+            trends.AddRange(rows);
             summaries.Add(summary);
             context.Say(Said(summary, own));
         }
 
         context.Progress(1);
-        return new WidthRecord { Stations = [.. stations], Dikes = [.. summaries], StationM = settings.StationM };
+        return new WidthRecord { Stations = [.. stations], Dikes = [.. summaries], Trends = [.. trends], StationM = settings.StationM };
     }
 
     private Remark Said(DikeSummary d, Station[] own)
@@ -46,8 +50,16 @@ public sealed class WidthStage : IStage<WidthInput, WidthSettings, WidthRecord>
         string width = d.WidthMeanM is { } w
             ? Invariant($"mean true width {w.Value:0.00} m ({w.Low95:0.00} to {w.High95:0.00}) from {d.Measured} of {own.Length} stations")
             : Invariant($"no true width at any of {own.Length} stations");
-        return new Remark(Name, Invariant($"Dike {d.Dike}: {width}; {d.HiddenLengthM:0.0} m hidden."), d.Measured == 0);
+        return new Remark(Name, Invariant($"Dike {d.Dike}: {width}; {d.HiddenLengthM:0.0} m hidden{Changes(d)}."), d.Measured == 0);
     }
+
+    private static string Changes(DikeSummary d) => d.Steps switch
+    {
+        null => "; too few stations to look for steps",
+        0 => "",
+        1 => "; its width changes by a step at one place (width_trends.csv)",
+        { } n => Invariant($"; its width changes by steps at {n} places (width_trends.csv)"),
+    };
 
     // Trends run on through 360 along one dike.
     private static Station[] Continuous(Station[] stations)

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Width;
@@ -22,6 +23,13 @@ public sealed class WidthScore
 
     /// <summary>Angles between contact rows and the dike's mean plane over their cones: of sense where the dike does not bend.</summary>
     public List<double> PlaneRatios { get; } = [];
+
+    /// <summary>Angles between contact rows and the best plane through the true margin over the stretch and the heights that the
+    /// trace spans, at least a third of its length [deg].</summary>
+    public List<double> SurfaceErrorsDeg { get; } = [];
+
+    /// <summary>Those over their cones.</summary>
+    public List<double> SurfaceRatios { get; } = [];
 
     /// <summary>Signed relative errors of the apparent width where only that is known.</summary>
     public List<double> ApparentErrors { get; } = [];
@@ -71,15 +79,25 @@ public sealed class WidthScore
             SimulatedDike dike = truth.Dikes[which[at]];
             int side = (c.Margin == Margin.A) == Same(contacts.Dikes[at], dike) ? 0 : 1;
             Vec3 mean = default;
+            var own = new List<Vec3>();
             foreach (MarginTrace t in contacts.Traces.Where(t => t.Dike == c.Dike && t.Margin == c.Margin))
             {
                 for (int i = 0; i < t.Points.Length; i++)
                 {
-                    if (t.ChainageM[i] >= c.ChainageFromM && t.ChainageM[i] <= c.ChainageToM) mean += dike.MarginNormalAt(side, t.Points[i] + origin);
+                    if (t.ChainageM[i] < c.ChainageFromM || t.ChainageM[i] > c.ChainageToM) continue;
+                    mean += dike.MarginNormalAt(side, t.Points[i] + origin);
+                    own.Add(t.Points[i]);
                 }
             }
 
             if (mean.Length < 1e-9) continue;
+            if (PatchPlane(dike, side, [.. own.Select(p => p + origin)]) is { } patch)
+            {
+                double off = Math.Acos(Math.Min(1, Math.Abs(patch.Dot(normal)))) * 180 / Math.PI;
+                SurfaceErrorsDeg.Add(off);
+                SurfaceRatios.Add(off / c.Region!.Cone95Deg);
+            }
+
             double error = Math.Acos(Math.Min(1, Math.Abs(mean.Unit().Dot(normal)))) * 180 / Math.PI;
             ContactErrorsDeg.Add(error);
             ContactRatios.Add(error / c.Region!.Cone95Deg);
@@ -106,6 +124,28 @@ public sealed class WidthScore
             WidthErrors.Add(error / w);
             WidthRatios.Add(error / ((s.TrueWidthHigh95M!.Value - s.TrueWidthLow95M!.Value) / 2));
         }
+    }
+
+    // Least squares through the margin on an even grid over the rectangle that the trace spans, a twentieth cut off at the top
+    // and the bottom.
+    private static Vec3? PatchPlane(SimulatedDike dike, int side, Vec3[] trace)
+    {
+        if (trace.Length < 3) return null;
+        const int columns = 17, rows = 9;
+        Vec3 up = dike.Normal.Cross(dike.Along), middle = trace.Aggregate(default(Vec3), (sum, p) => sum + p) / trace.Length;
+        double[] s = [.. trace.Select(p => (p - middle).Dot(dike.Along)).Order()], v = [.. trace.Select(p => (p - middle).Dot(up)).Order()];
+        (double low, double high) = (v[v.Length / 20], v[^(1 + (v.Length / 20))]);
+        double more = ((s[^1] - s[0]) / 3) - (high - low);   // over a smaller height the waves would be all of the dip
+        if (more > 0) (low, high) = (low - (more / 2), high + (more / 2));
+        var sums = new Moments(default);
+        for (int i = 0; i < columns * rows; i++)
+        {
+            Vec3 p = middle + (dike.Along * (s[0] + ((s[^1] - s[0]) * (i % columns) / (columns - 1)))) + (up * (low + ((high - low) * (i / columns) / (rows - 1))));
+            for (int round = 0; round < 3; round++) p -= dike.MarginNormalAt(side, p) * (side == 0 ? dike.SignedFromA(p) : dike.SignedFromB(p));
+            sums.Add(p.X - middle.X, p.Y - middle.Y, p.Z - middle.Z);
+        }
+
+        return PlaneFit.From(sums).Normal;
     }
 
     private static bool Same(DikeFrame frame, SimulatedDike dike) => frame.Normal[frame.Normal.Length / 2].Dot(dike.Normal) > 0;

@@ -69,15 +69,20 @@ public class ParallelPlanesTests
         Margin[] sides = sheet.Of(Of("A")[0]).Q < sheet.Of(Of("B")[0]).Q ? [Margin.A, Margin.B] : [Margin.B, Margin.A];
         TraceCell[] Cells(string margin, string? face) =>
             [.. Of(margin, face).Select(p => new TraceCell(margin == "A" ? sides[0] : sides[1], p, sheet.Of(p), 1))];
-        var noise = new TraceNoise(new CorrelatedNoise(0.02, 0.2, 0.9), 0, 0, 1);
+        var laws = new TraceLaws([(new TraceNoise(new CorrelatedNoise(0.02, 0.2, 0.9), 0, 0, 1), 1)]);
         TraceCell[] all = [.. Cells("A", null).Concat(Cells("B", null)).OrderBy(c => c.At.S)];
-        double middle = all.Average(c => c.At.S);
-        StretchFit both = StretchFit.Of(all, middle, noise, Vec3.Up)!;
-        Attitude a = Attitude.FromNormal(both.Pole(sheet.At(middle)).Normal);
+        StretchFit both = Fit(all, laws);
+        Attitude a = Attitude.FromNormal(both.Pole(sheet.At(both.S)).Normal);
         Assert.Equal(Answer(2, "dip"), a.DipDeg, 2 * Answer(2, "se_large_deg"));
         Assert.Equal(Answer(2, "dip_direction"), a.DipDirectionDeg, 0.5);
-        TraceCell[] one = Cells("A", "floor");
-        StretchFit line = StretchFit.Of(one, one.Average(c => c.At.S), noise, Vec3.Up)!;
+        StretchFit line = Fit(Cells("A", "floor"), laws);
         Assert.True(Math.Atan(Math.Sqrt(line.TiltVariance)) * 180 / Math.PI > 10);
+    }
+
+    private static StretchFit Fit(TraceCell[] cells, TraceLaws laws)
+    {
+        double middle = cells.Average(c => c.At.S);
+        PatchSlopes slopes = MarginModel.Of(cells, middle, laws)!.Patch(null, cells.Min(c => c.At.S), cells.Max(c => c.At.S), cells.Min(c => c.At.T), cells.Max(c => c.At.T));
+        return StretchFit.Of(middle, slopes, cells, Vec3.Up);
     }
 }
