@@ -38,6 +38,10 @@ public sealed record ContactSettings : IStageSettings
     /// <summary>... and this close to it [m]; empty: twice the scatter of the trace, at least 0.04 m.</summary>
     public double? SurfaceToleranceM { get; init; }
 
+    /// <summary>Error of a compass reading that takes part as prior, in each direction [deg]: the compass, and how far a hand-sized
+    /// piece departs from the contact over a stretch.</summary>
+    public double PriorSigmaDeg { get; init; } = 5;
+
     /// <inheritdoc/>
     public IEnumerable<SettingComplaint> Check()
     {
@@ -49,6 +53,7 @@ public sealed record ContactSettings : IStageSettings
         if (!(ReliefFactor is > 0 and <= 100)) yield return new("contacts.relief_factor", Invariant($"{ReliefFactor}"), "must be above 0 and at most 100");
         if (!(EdgeErrorM is >= 0 and <= 1)) yield return new("contacts.edge_error_m", Invariant($"{EdgeErrorM}"), "must be 0 to 1");
         if (!(SurfaceAngleDeg is > 0 and <= 45)) yield return new("contacts.surface_angle_deg", Invariant($"{SurfaceAngleDeg}"), "must be above 0 and at most 45");
+        if (!(PriorSigmaDeg is >= 0.5 and <= 30)) yield return new("contacts.prior_sigma_deg", Invariant($"{PriorSigmaDeg}"), "must be 0.5 to 30");
         if (SurfaceToleranceM is { } t && !(t is > 0 and <= 10)) yield return new("contacts.surface_tolerance_m", Invariant($"{t}"), "must be above 0 and at most 10, or empty");
     }
 }

@@ -11,6 +11,8 @@ namespace CloudStruct.Stages.Contacts;
 /// centre lines, and the domain of every face.</summary>
 public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, ContactsRecord>
 {
+    private const double LargestBendDeg = 60;
+
     /// <inheritdoc/>
     public string Name => "contacts";
 
@@ -31,11 +33,13 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
                 continue;
             }
 
+            TraceCell[] surface = tracer.MarkMargins(sides);
+            if (surface.Length > 0) tracer = tracer.With(surface);
             dikes.Add(tracer.Frame(input.Baseline));
             rows.AddRange(tracer.Rows());
             traces.AddRange(tracer.Traces());
-            tracer.MarkMargins(sides);
-            context.Say(tracer.Summary(Name));
+            context.Say(tracer.Summary(Name, tracer.Ends(cloud, input.Classes)));
+            if (Bends(body)) context.Say(new Remark(Name, Invariant($"Dike {body.Dike} bends by more than {LargestBendDeg} deg from its mean trend; margins beyond that are not followed. Measure the two limbs as surveys of their own."), true));
         }
 
         context.Progress(1);
@@ -61,7 +65,17 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
             ? new ColourEdges(input.Described, input.Classes, tracker).Refine(tracker.Cells)
             : tracker.Cells;
         cells = BracketedCells.Added(cells, cloud, input.Classes, body.Dike, tracker);
-        return new DikeTracer(body.Dike, tracker, cells, cloud.Frame, ground.NormalAt, settings);
+        var priors = new PriorPoles(input.Readings, cloud.Frame, tracker, settings.PriorSigmaDeg);
+        return new DikeTracer(body.Dike, tracker, cells, cloud.Frame, ground.NormalAt, priors, settings);
+    }
+
+    // The sheet's level line is a function over a straight axis.
+    private static bool Bends(DikeBody body)
+    {
+        SlabWindow[] windows = [.. body.Windows.Where(w => w.WidthM > 0 && w.LengthM > 0)];
+        Vec3 mean = default;
+        foreach (SlabWindow w in windows) mean += w.Normal * (w.Normal.Dot(windows[0].Normal) < 0 ? -w.LengthM : w.LengthM);
+        return windows.Length > 0 && mean.Length > 0 && windows.Any(w => Math.Abs(w.Normal.Unit().Dot(mean.Unit())) < Math.Cos(LargestBendDeg * Math.PI / 180));
     }
 
     // Direction in which a nearly level sheet is longest: from the first to the last window.

@@ -10,6 +10,7 @@ namespace CloudStruct.Stages.Contacts;
 internal sealed partial class DikeTracer
 {
     private static readonly string[] Compass = ["N", "NE", "E", "SE", "S", "SW", "W", "NW"];
+    private const double PriorLargestConeDeg = 25;   // a hand reading alone leaves 12 deg; what is wider says nothing
     private double[] chainage = [];
 
     /// <summary>Centre line with normals; fixes chainage for everything else.</summary>
@@ -64,6 +65,7 @@ internal sealed partial class DikeTracer
                 segment++;
                 lastTrend = row.TrendAlongDeg ?? lastTrend;
                 yield return row;
+                if (WithPrior(row, margin, at, lastTrend) is { } informed) yield return informed;
             }
         }
     }
@@ -80,7 +82,7 @@ internal sealed partial class DikeTracer
             Dike = Dike, Margin = margin, Segment = segment,
             ChainageFromM = ChainageAt(Math.Max(FromS, stretch.S - half)), ChainageToM = ChainageAt(Math.Min(ToS, stretch.S + half)),
             Middle = fit.Middle, ReliefM = fit.ReliefM, RmsM = fit.LineRmsM, Points = fit.Cells,
-            Evidence = stretch.Both ? Evidence.BothMargins : Evidence.Trace, WindowM = tracker.WindowM,
+            Evidence = OnSurface(margin, stretch.S) ? Evidence.Surface : stretch.Both ? Evidence.BothMargins : Evidence.Trace, WindowM = tracker.WindowM,
             LineTrendDeg = Azimuth.Of(line, frame.TurnDeg),
             LinePlungeDeg = Math.Atan2(-line.Z, Math.Sqrt((line.X * line.X) + (line.Y * line.Y))) * 180 / Math.PI,
             MarginFacing = Compass[(int)Math.Round(Azimuth.Of(facing, frame.TurnDeg) / 45) % 8],
@@ -88,12 +90,51 @@ internal sealed partial class DikeTracer
         };
         if (Fixed[at] != Constraint.Plane || Cone(fit) > settings.LargestConeDeg) return row;
         (Vec3 normal, Symmetric3 covariance) = fit.Pole(axes);
-        facing = normal * (margin == Margin.A ? -1 : 1);
-        double lean = -Math.Asin(Math.Clamp(normal.Z, -1, 1)) * 180 / Math.PI, error = 1.96 * Math.Sqrt(DipVariance(fit, axes)) * 180 / Math.PI;
+        return Plane(row, margin, normal, covariance, axes, lastTrend) with { RmsM = fit.RmsM };
+    }
+
+    // Whether most of what stands for a margin in a stretch lies on its exposed surface.
+    private bool OnSurface(Margin margin, double s)
+    {
+        int surface = 0, trace = 0;
+        foreach (TraceCell c in Near(s, tracker.WindowM / 2))
+        {
+            if (c.Margin != margin) continue;
+            if (c.Surface) surface++;
+            else trace++;
+        }
+
+        return surface > trace;
+    }
+
+    // The same stretch with the compass readings about it; none where they leave the dip as open as before.
+    private Contact? WithPrior(Contact row, Margin margin, int at, double? lastTrend)
+    {
+        StretchFit fit = Stretches[at].Fits[margin == Margin.A ? 0 : 1]!;
+        SheetAxes axes = tracker.Sheet.At(Stretches[at].S);
+        (Vec3 normal, Symmetric3 covariance) = fit.Pole(axes);
+        // A trace that fixes no dip says one thing only: the contact holds its direction. On level ground the fit may even lie down
+        // in the ground and claim to know it well.
+        double alongError = Math.Max(0.01, fit.LineRmsM / (tracker.WindowM / Math.Sqrt(12)));
+        BinghamAxis trace = row.Constraint == Constraint.Plane
+            ? BinghamAxis.FromNormal(normal, covariance)
+            : new BinghamAxis(Symmetric3.Outer(fit.Line, -0.5 / (alongError * alongError)));
+        if (priors.With(fit.S, trace) is not { } axis) return null;
+        Vec3 mode = axis.Mode, side = Level(axes);
+        if (mode.Dot(side) < 0) mode = -mode;
+        Contact informed = Plane(row, margin, mode, axis.Covariance(), axes, lastTrend) with { Evidence = Evidence.Prior };
+        return informed.Region!.Cone95Deg <= PriorLargestConeDeg ? informed : null;
+    }
+
+    private Contact Plane(Contact row, Margin margin, Vec3 normal, Symmetric3 covariance, SheetAxes axes, double? lastTrend)
+    {
+        Vec3 facing = normal * (margin == Margin.A ? -1 : 1), up = Vec3.Up - (normal * normal.Z);
+        double lean = -Math.Asin(Math.Clamp(normal.Z, -1, 1)) * 180 / Math.PI;
+        double error = 1.96 * Math.Sqrt(covariance.Form(up.Length > 1e-9 ? up.Unit() : axes.Up)) * 180 / Math.PI;
         return row with
         {
             Constraint = Constraint.Plane, Normal = normal.Z < 0 ? -normal : normal, Attitude = Attitude.FromNormal(normal, frame.TurnDeg),
-            Region = PoleRegions.From(normal, covariance, frame.Reference), RmsM = fit.RmsM,
+            Region = PoleRegions.From(normal, covariance, frame.Reference),
             TrendAlongDeg = Continue(Trend(normal, axes), lastTrend), LeanToBDeg = lean, LeanLow95Deg = Math.Max(-90, lean - error),
             LeanHigh95Deg = Math.Min(90, lean + error), MarginFacing = Compass[(int)Math.Round(Azimuth.Of(facing, frame.TurnDeg) / 45) % 8],
         };

@@ -1,8 +1,10 @@
 using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Attitudes;
+using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Frame;
+using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
 using static System.FormattableString;
 
@@ -26,6 +28,7 @@ internal sealed partial class DikeTracer
     private readonly TraceLaws laws;
     private readonly TraceNoise noise;
     private readonly Func<double, Vec3> groundAt;
+    private readonly PriorPoles priors;
 
     /// <summary>Fits along strike.</summary>
     /// <param name="dike">Number of the dike.</param>
@@ -33,8 +36,9 @@ internal sealed partial class DikeTracer
     /// <param name="cells">Its cells, refined.</param>
     /// <param name="frame">Survey frame.</param>
     /// <param name="groundAt">Unit normal of the ground about a place along the sheet.</param>
+    /// <param name="priors">Compass readings that take part.</param>
     /// <param name="settings">Settings.</param>
-    public DikeTracer(int dike, MarginTracker tracker, TraceCell[] cells, SurveyFrame frame, Func<double, Vec3> groundAt, ContactSettings settings)
+    public DikeTracer(int dike, MarginTracker tracker, TraceCell[] cells, SurveyFrame frame, Func<double, Vec3> groundAt, PriorPoles priors, ContactSettings settings)
     {
         Dike = dike;
         this.tracker = tracker;
@@ -43,6 +47,7 @@ internal sealed partial class DikeTracer
         this.frame = frame;
         this.settings = settings;
         this.groundAt = groundAt;
+        this.priors = priors;
         (FromS, ToS) = (cells[0].At.S, cells[^1].At.S);
         this.cells = cells = WithoutOutliers(TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, settings.EdgeErrorM / 3).Best);
         laws = TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, settings.EdgeErrorM / 3);
@@ -89,25 +94,36 @@ internal sealed partial class DikeTracer
     /// <summary>Margin polylines; after <see cref="Frame"/>.</summary>
     public IEnumerable<MarginTrace> Traces() =>
         from margin in (Margin[])[Margin.A, Margin.B]
-        from line in TraceLines.Of(Dike, margin, cells, tracker.CellM, noise.Noise.Sigma, ChainageAt)
+        from line in TraceLines.Of(Dike, margin, cells.Where(c => !c.Surface), tracker.CellM, noise.Noise.Sigma, ChainageAt)
         select line;
 
     /// <summary>Marks faces on the contacts of this dike.</summary>
-    public void MarkMargins(FaceSides sides)
+    /// <returns>Those faces as cells of their margins.</returns>
+    public TraceCell[] MarkMargins(FaceSides sides)
     {
         double tolerance = settings.SurfaceToleranceM ?? Math.Max(0.04, 2 * noise.Noise.Sigma);
-        sides.MarkMargins(tracker, cells, s => NormalAt(s), settings.SurfaceAngleDeg, tolerance);
+        return sides.MarkMargins(tracker, cells, s => NormalAt(s), settings.SurfaceAngleDeg, tolerance);
     }
 
+    /// <summary>The same dike with cells on exposed contact surfaces besides those of the traces.</summary>
+    public DikeTracer With(TraceCell[] surface) => new(Dike, tracker, [.. cells, .. surface.Where(c => c.At.S >= FromS && c.At.S <= ToS)], frame, groundAt, priors, settings);
+
     /// <summary>What there is to say about this dike.</summary>
-    public Remark Summary(string stage)
+    /// <param name="stage">Name of the stage.</param>
+    /// <param name="ends">What lies beyond its ends.</param>
+    public Remark Summary(string stage, string ends)
     {
         double share = (double)Fixed.Count(c => c == Constraint.Plane) / Fixed.Length;
-        string found = LineOnly
-            ? "its traces are too straight to give a dip; contact points at other heights (a step, a gully wall, a borehole) would mend that"
-            : Invariant($"strike and dip are fixed on {100 * share:0} % of its length");
-        return new Remark(stage, Invariant($"Dike {Dike}: followed over {ToS - FromS:0.0} m, {found}."), LineOnly);
+        const string mend = "contact points at other heights (a step, a gully wall, a borehole) or a compass reading of the contact in field/readings.csv with use prior would mend that";
+        string found = LineOnly ? "its traces are too straight to give a dip; " + mend
+            : share < 0.995 ? Invariant($"strike and dip are fixed on {100 * share:0} % of its length; elsewhere the traces are too straight; {mend}")
+            : "strike and dip are fixed on all of its length";
+        string priorsUsed = priors.Ids.Any() ? Invariant($" Compass readings that take part in the rows of evidence prior: {string.Join(", ", priors.Ids)}.") : "";
+        return new Remark(stage, Invariant($"Dike {Dike}: followed over {ToS - FromS:0.0} m, {found}.{ends}{priorsUsed}"), LineOnly);
     }
+
+    /// <summary>What lies beyond its ends, in words.</summary>
+    public string Ends(WorkingCloud cloud, ClassifiedCloud classes) => DikeEnds.Said(cloud, classes, tracker, FromS, ToS);
 
     private Vec3 NormalAt(double s)
     {

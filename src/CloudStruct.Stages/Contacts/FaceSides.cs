@@ -9,7 +9,7 @@ namespace CloudStruct.Stages.Contacts;
 /// <summary>Tells on which side of the rock each face is, and whether its rock is in place.</summary>
 internal sealed class FaceSides
 {
-    private const int PointsTried = 400;
+    private const int PointsTried = 400, LeastInCell = 8;
     private const double ReachM = 0.4;   // from the face to the trace that it must touch
     private readonly WorkingCloud cloud;
     private readonly FaceSet faces;
@@ -68,8 +68,10 @@ internal sealed class FaceSides
     /// <param name="normalAt">Unit normal of the dike at a place along the sheet.</param>
     /// <param name="angleDeg">Largest angle between face and contact [deg].</param>
     /// <param name="toleranceM">Largest distance of the trace from the face's plane, in the median [m].</param>
-    public void MarkMargins(MarginTracker tracker, TraceCell[] cells, Func<double, Vec3> normalAt, double angleDeg, double toleranceM)
+    /// <returns>The faces as cells of the margin that they lie on.</returns>
+    public TraceCell[] MarkMargins(MarginTracker tracker, TraceCell[] cells, Func<double, Vec3> normalAt, double angleDeg, double toleranceM)
     {
+        var surface = new List<TraceCell>();
         double least = Math.Cos(angleDeg * Math.PI / 180);
         for (int f = 0; f < faces.Faces.Length; f++)
         {
@@ -79,7 +81,34 @@ internal sealed class FaceSides
             if (Math.Abs(face.Normal.Dot(normalAt(at.S))) < least) continue;
             double away = Math.Min(Math.Abs(tracker.Guess.Distance(Margin.A, at)), Math.Abs(tracker.Guess.Distance(Margin.B, at)));
             if (away > 0.5) continue;
-            if (TouchesTrace(f, at, cells, toleranceM)) Domain[f] = FaceDomain.Margin;
+            if (!TouchesTrace(f, at, cells, toleranceM)) continue;
+            Domain[f] = FaceDomain.Margin;
+            surface.AddRange(CellsOf(f, tracker, toleranceM));
+        }
+
+        return [.. surface];
+    }
+
+    // Means of the face's points over cells as large as those of the traces, so that one error law holds for both.
+    private IEnumerable<TraceCell> CellsOf(int f, MarginTracker tracker, double toleranceM)
+    {
+        double size = tracker.CellM;
+        var sums = new SortedDictionary<(int, int, int), (int Count, Vec3 Sum)>();
+        foreach (int i in Members(f))
+        {
+            Vec3 p = cloud.Place(i);
+            var key = ((int)Math.Floor(p.X / size), (int)Math.Floor(p.Y / size), (int)Math.Floor(p.Z / size));
+            sums.TryGetValue(key, out (int Count, Vec3 Sum) old);
+            sums[key] = (old.Count + 1, old.Sum + p);
+        }
+
+        foreach ((int count, Vec3 sum) in sums.Values)
+        {
+            if (count < LeastInCell) continue;
+            Vec3 place = sum / count;
+            SheetPoint at = tracker.Sheet.Of(place);
+            double a = Math.Abs(tracker.Guess.Distance(Margin.A, at)), b = Math.Abs(tracker.Guess.Distance(Margin.B, at));
+            if (Math.Min(a, b) <= 5 * toleranceM) yield return new TraceCell(a < b ? Margin.A : Margin.B, place, at, count, true);
         }
     }
 

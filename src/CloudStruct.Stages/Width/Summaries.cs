@@ -122,7 +122,7 @@ internal static class Summaries
             scatter += Symmetric3.Outer(d - (mean * mean.Dot(d)), 1.0 / (normals.Length * windows));
         }
 
-        PoleRegion? surest = contacts.Where(c => c.Dike == frame.Dike && c.Region is not null).MinBy(c => c.Region!.Cone95Deg)?.Region;
+        PoleRegion? surest = contacts.Where(c => c.Dike == frame.Dike && c.Region is not null && c.Evidence != Evidence.Prior).MinBy(c => c.Region!.Cone95Deg)?.Region;
         if (surest is { MajorAxis.Length: > 0 } r)
         {
             const double toSigma = Math.PI / 180 / 2.4477;

@@ -9,7 +9,7 @@ namespace CloudStruct.Accuracy.Scores;
 /// the true margin and one plane is laid through them. What is left is the shape of the trace and the wander of the margin itself.</summary>
 public static class ContactFloor
 {
-    /// <summary>Angles between that plane and the mean true margin normal, of the rows that state a plane [deg].</summary>
+    /// <summary>Angles between that plane and the plane nearest to the true margin (as in <see cref="WidthScore.ContactErrorsDeg"/>), of the rows that state a plane [deg].</summary>
     public static IEnumerable<double> ErrorsDeg(SimulatedOutcrop truth, Vec3 origin, ContactsRecord contacts)
     {
         foreach (Contact c in contacts.Contacts)
@@ -20,7 +20,7 @@ public static class ContactFloor
             if (dike is null) continue;
             int side = (c.Margin == Margin.A) == (Chainward(contacts, c).Dot(dike.Normal) > 0) ? 0 : 1;
             var moments = new Moments(default);
-            Vec3 mean = default;
+            var own = new List<Vec3>();
             foreach (MarginTrace t in contacts.Traces.Where(t => t.Dike == c.Dike && t.Margin == c.Margin))
             {
                 for (int i = 0; i < t.Points.Length; i++)
@@ -29,12 +29,12 @@ public static class ContactFloor
                     Vec3 p = t.Points[i] + origin, n = dike.MarginNormalAt(side, p);
                     Vec3 on = t.Points[i] - (n * (side == 0 ? dike.SignedFromA(p) : dike.SignedFromB(p)));
                     moments.Add(on.X, on.Y, on.Z);
-                    mean += n;
+                    own.Add(p);
                 }
             }
 
-            if (moments.Weight < 3 || mean.Length < 1e-9) continue;
-            yield return Math.Acos(Math.Min(1, Math.Abs(PlaneFit.From(moments).Normal.Dot(mean.Unit())))) * 180 / Math.PI;
+            if (moments.Weight < 3 || WidthScore.PatchPlane(dike, side, [.. own]) is not { } patch) continue;
+            yield return Math.Acos(Math.Min(1, Math.Abs(PlaneFit.From(moments).Normal.Dot(patch)))) * 180 / Math.PI;
         }
     }
 

@@ -15,7 +15,10 @@ public sealed class WidthScore
     /// <summary>Errors over the half-length of their interval: within ±1 where the truth lies inside.</summary>
     public List<double> WidthRatios { get; } = [];
 
-    /// <summary>Angles between contact rows with a plane and the truth [deg].</summary>
+    /// <summary>Angles between contact rows with a plane and the truth: the plane nearest to the true margin over the stretch of
+    /// the row and the heights that its trace spans, at least a third of its length [deg]. A contact's attitude over a stretch is
+    /// that of its surface there; the mean of the normals along the trace, the other definition that was weighed, changes with the
+    /// places where the view happens to cross a wave, and no tool could know it better than by a degree.</summary>
     public List<double> ContactErrorsDeg { get; } = [];
 
     /// <summary>Those over their cones.</summary>
@@ -24,12 +27,11 @@ public sealed class WidthScore
     /// <summary>Angles between contact rows and the dike's mean plane over their cones: of sense where the dike does not bend.</summary>
     public List<double> PlaneRatios { get; } = [];
 
-    /// <summary>Angles between contact rows and the best plane through the true margin over the stretch and the heights that the
-    /// trace spans, at least a third of its length [deg].</summary>
-    public List<double> SurfaceErrorsDeg { get; } = [];
+    /// <summary>Angles between contact rows and the mean of the true margin's normals at the trace points of the row [deg].</summary>
+    public List<double> NormalErrorsDeg { get; } = [];
 
     /// <summary>Those over their cones.</summary>
-    public List<double> SurfaceRatios { get; } = [];
+    public List<double> NormalRatios { get; } = [];
 
     /// <summary>Signed relative errors of the apparent width where only that is known.</summary>
     public List<double> ApparentErrors { get; } = [];
@@ -90,17 +92,13 @@ public sealed class WidthScore
                 }
             }
 
-            if (mean.Length < 1e-9) continue;
-            if (PatchPlane(dike, side, [.. own.Select(p => p + origin)]) is { } patch)
-            {
-                double off = Math.Acos(Math.Min(1, Math.Abs(patch.Dot(normal)))) * 180 / Math.PI;
-                SurfaceErrorsDeg.Add(off);
-                SurfaceRatios.Add(off / c.Region!.Cone95Deg);
-            }
-
-            double error = Math.Acos(Math.Min(1, Math.Abs(mean.Unit().Dot(normal)))) * 180 / Math.PI;
+            if (mean.Length < 1e-9 || PatchPlane(dike, side, [.. own.Select(p => p + origin)]) is not { } patch) continue;
+            double error = Math.Acos(Math.Min(1, Math.Abs(patch.Dot(normal)))) * 180 / Math.PI, cone = c.Region!.Cone95Deg;
             ContactErrorsDeg.Add(error);
-            ContactRatios.Add(error / c.Region!.Cone95Deg);
+            ContactRatios.Add(error / cone);
+            error = Math.Acos(Math.Min(1, Math.Abs(mean.Unit().Dot(normal)))) * 180 / Math.PI;
+            NormalErrorsDeg.Add(error);
+            NormalRatios.Add(error / cone);
             PlaneRatios.Add(Math.Acos(Math.Min(1, Math.Abs(dike.Normal.Dot(normal)))) * 180 / Math.PI / c.Region!.Cone95Deg);
         }
 
@@ -126,9 +124,12 @@ public sealed class WidthScore
         }
     }
 
-    // Least squares through the margin on an even grid over the rectangle that the trace spans, a twentieth cut off at the top
-    // and the bottom.
-    private static Vec3? PatchPlane(SimulatedDike dike, int side, Vec3[] trace)
+    /// <summary>Least squares through the true margin on an even grid over the rectangle that a trace spans, a twentieth cut off at
+    /// the top and the bottom: its unit normal.</summary>
+    /// <param name="dike">The dike.</param>
+    /// <param name="side">Margin A (0) or B (1).</param>
+    /// <param name="trace">Map coordinates; null is returned for fewer than three points.</param>
+    internal static Vec3? PatchPlane(SimulatedDike dike, int side, Vec3[] trace)
     {
         if (trace.Length < 3) return null;
         const int columns = 17, rows = 9;

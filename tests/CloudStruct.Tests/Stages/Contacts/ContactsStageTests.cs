@@ -3,6 +3,7 @@ using CloudStruct.Records.Attitudes;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Width;
@@ -66,6 +67,54 @@ public class ContactsStageTests
         Assert.All(seen, s => Assert.Equal(2 / Math.Sin(Math.PI / 3), s.ApparentWidthM!.Value, 0.06));
         Assert.All(seen, s => Assert.Null(s.TrueWidthM));
         Assert.Null(width.Dikes[0].WidthMeanM);
+    }
+
+    [Fact]
+    public void A_compass_reading_gives_level_ground_its_dip_in_rows_of_their_own()
+    {
+        var scene = new DikeScene { Steps = false, DipDeg = 60 };
+        FieldReading Reading(ReadingUse use, double east) => new("r1", new Vec3(east, 0, double.NaN), 0.1, ReadingKind.Contact, new Attitude(33, 57), false, use);
+        (ContactsRecord contacts, _, List<Records.Stages.Remark> said) = DikeScene.Measure(scene.Make(), readings: [Reading(ReadingUse.Prior, 0.5)]);
+        Contact[] informed = [.. contacts.Contacts.Where(c => c.Evidence == Evidence.Prior)];
+        Assert.NotEmpty(informed);
+        Assert.All(informed, c => Assert.Equal(Constraint.Plane, c.Constraint));
+        Assert.All(informed, c => Assert.InRange(Angle(c.Normal!.Value, scene.Normal), 0, c.Region!.Cone95Deg));
+        Assert.All(informed, c => Assert.Equal(30, c.Attitude!.Value.StrikeDeg, 1.5));   // strike is the trace's, not the reading's
+        Assert.All(contacts.Contacts.Except(informed), c => Assert.Equal(Constraint.Line, c.Constraint));
+        Assert.Contains(said, r => r.Text.Contains("r1"));
+        Assert.Contains(said, r => r.Doubtful && r.Text.Contains("would mend that"));
+        foreach (FieldReading other in (FieldReading[])[Reading(ReadingUse.Check, 0.5), Reading(ReadingUse.Prior, 30)])
+        {
+            (ContactsRecord without, _, _) = DikeScene.Measure(scene.Make(), readings: [other]);
+            Assert.DoesNotContain(without.Contacts, c => c.Evidence == Evidence.Prior);
+        }
+    }
+
+    [Fact]
+    public void A_dike_that_ends_inside_the_survey_is_not_followed_beyond_its_end_and_that_is_said()
+    {
+        var scene = new DikeScene { StrikeDeg = 30, DipDeg = 80, EndsAtM = 4 };
+        double Along(Vec3 p) => (p.X * 0.5) + (p.Y * Math.Sqrt(0.75));
+        (ContactsRecord contacts, WidthRecord width, List<Records.Stages.Remark> said) = DikeScene.Measure(scene.Make());
+        Assert.All(width.Stations, s => Assert.True(Along(s.Place) < 4.6, $"{Along(s.Place)} {s.Status}"));
+        Assert.All(contacts.Traces, t => Assert.True(t.Points.Max(Along) < 4.6));
+        Assert.Contains(said, r => r.Text.Contains("At the end of its chainage host rock lies across"));
+        Assert.DoesNotContain(said, r => r.Text.Contains("At the start"));
+    }
+
+    [Fact]
+    public void A_step_of_the_width_is_found_with_place_and_size()
+    {
+        var scene = new DikeScene { StrikeDeg = 0, DipDeg = 80, Step = (0.7, 0.5) };
+        (_, WidthRecord width, _) = DikeScene.Measure(scene.Make());
+        WidthTrend step = Assert.Single(width.Trends, t => t.Kind == WidthTrendKind.Step);
+        Assert.InRange(0.7, step.ChainageM.Low95 + width.Stations[0].Place.Y - width.Stations[0].ChainageM, step.ChainageM.High95 + width.Stations[0].Place.Y - width.Stations[0].ChainageM);
+        Assert.Equal(0.5, step.SizeM.Value, 0.1);
+        Assert.Equal(1, width.Dikes[0].Steps);
+        (_, WidthRecord even, _) = DikeScene.Measure(new DikeScene { StrikeDeg = 0, DipDeg = 80 }.Make());
+        Assert.DoesNotContain(even.Trends, t => t.Kind == WidthTrendKind.Step);
+        Assert.Equal(0, even.Dikes[0].Steps);
+        Assert.Equal(3, even.Dikes[0].Laws.Length);
     }
 
     [Fact]

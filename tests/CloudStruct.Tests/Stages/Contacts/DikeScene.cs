@@ -2,6 +2,7 @@ using CloudStruct.Records.Attitudes;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
+using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
@@ -21,6 +22,8 @@ internal sealed record DikeScene
     public bool Steps { get; init; } = true;
     public (double FromM, double ToM) Cover { get; init; } = (1, -1);   // along strike
     public double GuessOffDeg { get; init; } = 4;
+    public double EndsAtM { get; init; } = double.PositiveInfinity;   // along strike: host rock beyond
+    public (double AtM, double ByM) Step { get; init; } = (0, 0);   // margin B moves out
 
     private Vec3 Along => new(Math.Sin(StrikeDeg * Math.PI / 180), Math.Cos(StrikeDeg * Math.PI / 180), 0);
 
@@ -45,7 +48,7 @@ internal sealed record DikeScene
             Vec3 p = (Along * s) + (right * y) + (Vec3.Up * Height(s, y));
             double q = Normal.Dot(p);
             (cloud.X[i], cloud.Y[i], cloud.Z[i]) = ((float)(p.X * Scale), (float)(p.Y * Scale), (float)(p.Z * Scale));
-            bool dike = Math.Abs(q) < WidthM / 2, hidden = s >= Cover.FromM && s <= Cover.ToM;
+            bool dike = q > -WidthM / 2 && q < (WidthM / 2) + (s > Step.AtM ? Step.ByM : 0) && s < EndsAtM, hidden = s >= Cover.FromM && s <= Cover.ToM;
             classes.Class[i] = (byte)(hidden ? RockClass.Cover : dike ? RockClass.Dike : RockClass.Host);
             classes.DikeOfPoint[i] = (byte)(dike && !hidden ? 1 : 0);
             classes.DikeProbability[i] = (byte)(dike && !hidden ? 250 : 5);
@@ -69,12 +72,12 @@ internal sealed record DikeScene
     }
 
     public static (ContactsRecord Contacts, WidthRecord Width, List<Remark> Said) Measure(
-        (DescribedCloud Described, ClassifiedCloud Classes) scene, int threads = 2, Vec3[]? baseline = null, FaceSet? faces = null)
+        (DescribedCloud Described, ClassifiedCloud Classes) scene, int threads = 2, Vec3[]? baseline = null, FaceSet? faces = null, FieldReading[]? readings = null)
     {
         var said = new List<Remark>();
         StageContext context = StageContext.Plain(1, threads, said.Add);
         faces ??= new FaceSet { FaceOfPoint = new int[scene.Described.Cloud.Count] };
-        ContactsRecord contacts = new ContactsStage().Run(new ContactsInput(scene.Described, scene.Classes, faces, baseline ?? []), new ContactSettings(), context);
+        ContactsRecord contacts = new ContactsStage().Run(new ContactsInput(scene.Described, scene.Classes, faces, baseline ?? []) { Readings = readings ?? [] }, new ContactSettings(), context);
         return (contacts, new WidthStage().Run(new WidthInput(scene.Described, scene.Classes, contacts), new WidthSettings(), context), said);
     }
 }
