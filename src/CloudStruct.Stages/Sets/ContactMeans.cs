@@ -18,7 +18,7 @@ internal static class ContactMeans
     {
         var means = new List<MeanToCompare>();
         foreach (var margin in contacts.Contacts
-            .Where(c => c.Constraint == Constraint.Plane && c.Normal is not null && c.Region is not null)
+            .Where(c => c.Constraint == Constraint.Plane && c.Evidence != Evidence.Prior && c.Normal is not null && c.Region is not null)
             .GroupBy(c => (c.Dike, c.Margin)).OrderBy(g => g.Key.Dike).ThenBy(g => g.Key.Margin))
         {
             Contact[] windows = [.. margin];
