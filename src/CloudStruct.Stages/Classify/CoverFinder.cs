@@ -182,7 +182,9 @@ internal sealed class CoverFinder
 
             // The worn crests of the rock are rough and flat too, but have a colour that the walls show as well.
             bool asOnWalls = c > 0 && Enumerable.Range(0, k).Any(o => ratio[o] >= 0.5 && SameHue(kinds, j, o, d));
-            cover[j] = green || (flatLying && (hue || (rougher > 0.7 && !asOnWalls))) || rougher > 1.6;
+            // A hue far from all that the walls show need not lie quite as flat: turf hangs over edges.
+            bool foreign = hue && mean[2] - rock[2] < -30 && !asOnWalls && sceneSteep > 0.08 && steepRatio < 0.6;
+            cover[j] = green || foreign || (flatLying && (hue || (rougher > 0.7 && !asOnWalls))) || rougher > 1.6;
         }
 
         return cover;

@@ -9,4 +9,5 @@ namespace CloudStruct.Stages.Classify;
 /// <param name="WindowM">Edge of the cubic window it was seen in [m].</param>
 /// <param name="Contrast">Squared differences to the two flanks multiplied, over the variance: 1 is one standard deviation on each side.</param>
 /// <param name="Evidence">Contrast times the number of independent patches.</param>
-internal sealed record SlabCandidate(Vec3 Middle, Vec3 Normal, double WidthM, double WindowM, double Contrast, double Evidence);
+/// <param name="ByColour">True when colour showed it, false when texture did.</param>
+internal sealed record SlabCandidate(Vec3 Middle, Vec3 Normal, double WidthM, double WindowM, double Contrast, double Evidence, bool ByColour);

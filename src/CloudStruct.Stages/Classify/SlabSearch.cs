@@ -336,7 +336,7 @@ internal sealed class SlabSearch
             if (weight == 0) continue;
             Vec3 at = sum / weight;
             at += pole * (((low + high) / 2) - pole.Dot(at));
-            var candidate = new SlabCandidate(at + centre, pole, high - low, WindowCells * cellM, contrast, evidence);
+            var candidate = new SlabCandidate(at + centre, pole, high - low, WindowCells * cellM, contrast, evidence, colour);
             if (!kept.Exists(o => Alike(o, candidate))) kept.Add(candidate);
         }
 

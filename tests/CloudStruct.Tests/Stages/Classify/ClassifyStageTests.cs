@@ -58,6 +58,40 @@ public sealed class ClassifyStageTests
         Assert.Equal(coloured, classes.UsedColour);
     }
 
+    // DESIGN section 5: none thicker than thinnest_dike_m would have been missed. The law: a strip whose width times the
+    // evidence per area is below twice the price of boundary disappears (closed form; MaxFlowTests holds the flow itself to it).
+    [Theory]
+    [InlineData(60)]
+    [InlineData(1000)]
+    public void A_dike_just_thicker_than_the_thinnest_is_found_and_a_much_thinner_one_is_not_reported(double smoothingPerM)
+    {
+        var settings = new ClassifySettings { SmoothingPerM = smoothingPerM };
+        double thinnest = Planted(2.5, settings).ThinnestDikeM;
+        Assert.InRange(thinnest, 0.25, 2.2);
+        Assert.Single(Planted(1.3 * thinnest, settings).Dikes);
+        Assert.Empty(Planted(0.5 * thinnest, settings).Dikes);
+    }
+
+    // Scored on places that taught nothing. Outlines lie within a patch (15 cm) of the margins of a 2 m dike.
+    [Fact]
+    public void Labels_for_training_give_classes_that_check_labels_confirm()
+    {
+        (DescribedCloud described, bool[] truth) = new PaintedGround(9, 40, 80, widthM: 2).Describe();
+        var points = new List<LabelPoint>();
+        for (int i = 0; i < truth.Length; i += 131)
+        {
+            RockClass c = truth[i] ? RockClass.Dike : RockClass.Host;
+            points.Add(new LabelPoint(described.Cloud.Place(i), c, points.Count % 4 == 0 ? LabelUse.Train : LabelUse.Check));
+        }
+
+        ClassifiedCloud classes = new ClassifyStage().Run(new ClassifyInput(described, new HandLabels { Points = [.. points] }), new ClassifySettings(), StageContext.Plain());
+        Assert.Single(classes.Dikes);
+        Assert.NotNull(classes.Check);
+        Assert.InRange(classes.Check.Kappa, 0.93, 1);
+        ClassSummary dike = Assert.Single(classes.Summary, s => s.Class == RockClass.Dike);
+        Assert.InRange(dike.Iou!.Value, 0.9, 1);
+    }
+
     [Fact]
     public void Any_number_of_threads_gives_the_same_bytes()
     {
@@ -105,6 +139,9 @@ public sealed class ClassifyStageTests
             wrong.Check().Select(c => c.Key));
         Assert.Empty(new ClassifySettings().Check());
     }
+
+    private static ClassifiedCloud Planted(double widthM, ClassifySettings settings) => new ClassifyStage().Run(
+        new ClassifyInput(new PaintedGround(8, 70, 80, widthM).Describe().Described, HandLabels.None), settings, StageContext.Plain());
 
     private static ClassifiedCloud Run(DescribedCloud described, int threads = 2) =>
         new ClassifyStage().Run(new ClassifyInput(described, HandLabels.None), new ClassifySettings(), StageContext.Plain(threads: threads));
