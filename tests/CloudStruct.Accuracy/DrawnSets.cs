@@ -29,19 +29,24 @@ internal static class DrawnSets
         new("elongated", 2, 3, 20, 100, 60, 200) { Elongation = 2.5 },
         new("upright", 2, 4, 15, 80, 40, 200) { Plunge = new(0, 6) },
         new("level", 2, 3, 15, 80, 40, 200) { OneLevel = true },
-        new("one piece", 2, 4, 15, 100, 30, 200) { MostPieces = 1 },
+        new("one-piece", 2, 4, 15, 100, 30, 200) { MostPieces = 1 },
     ];
 
     /// <summary>For timing.</summary>
     public static Family Large => new("large", 3, 3, 400, 400, 120, 120);
 
-    /// <summary>Draws and scores.</summary>
-    public static void Run(StudyOptions options)
+    /// <summary>Whether a plan is the name of a family.</summary>
+    public static bool Has(string plan) => Array.Exists(Families, f => f.Name == plan);
+
+    /// <summary>Draws and scores the families named, or all when "drawn" is asked for.</summary>
+    public static void Run(StudyOptions options, string[] plans)
     {
+        Family[] asked = [.. Families.Where(f => plans.Contains("drawn") || plans.Contains(f.Name))];
+        if (asked.Length == 0) return;
         Console.WriteLine("Drawn sets at least 40 deg and 4 spreads apart, 0 to 30 % stray planes");
         Console.WriteLine("family | true found invented | error median max, inside cone");
         SetScore all = SetScore.None;
-        foreach (Family family in Families)
+        foreach (Family family in asked)
         {
             SetScore sum = SetScore.None;
             int draws = Math.Max(1, 200 / Math.Max(1, options.Seeds.Length)), right = 0, total = 0;

@@ -40,7 +40,7 @@ public sealed class SetsStudy : IStudy
         SetScore sum = SetScore.None, real = SetScore.None;
         foreach (string plan in plans)
         {
-            if (plan is "drawn" or "large" or "uniform") continue;
+            if (plan is "drawn" or "large" or "uniform" || DrawnSets.Has(plan)) continue;
             foreach (ulong seed in options.Seeds)
             {
                 SimulatedOutcrop rock = Outcrop.Make(FacesStudy.Sized(OutcropPlan.ByName(plan), options.Points ?? 300_000), seed);
@@ -53,7 +53,7 @@ public sealed class SetsStudy : IStudy
         Print("all outcrops, true faces", sum, "");
         Print("all outcrops, found faces", real, "");
         if (plans.Contains("large")) Large();
-        if (plans.Contains("drawn")) DrawnSets.Run(options);
+        DrawnSets.Run(options, plans);
         if (plans.Contains("uniform")) DrawnSets.Uniform(options);
     }
 
