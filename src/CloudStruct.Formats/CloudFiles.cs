@@ -1,6 +1,8 @@
 using CloudStruct.Formats.Bytes;
 using CloudStruct.Formats.Crs;
+using CloudStruct.Formats.Gltf;
 using CloudStruct.Formats.Las;
+using CloudStruct.Formats.Meshes;
 using CloudStruct.Formats.Ply;
 using CloudStruct.Formats.Text;
 using CloudStruct.Records.Complaints;
@@ -50,6 +52,7 @@ public static class CloudFiles
         }
         if (start.Length > 3 && start.StartsWith("ply"u8) && start[3] is (byte)'\n' or (byte)'\r' or (byte)' ')
             return new PlySource(path, file, sampling);
+        if (start.StartsWith("glTF"u8) || Path.GetExtension(file.Name).ToLowerInvariant() is ".glb" or ".gltf") return new GltfSource(path, file.Length, sampling);
         if (Path.GetExtension(file.Name).ToLowerInvariant() is ".xyz" or ".txt" or ".csv" or ".asc" or ".pts" && file.Length > 0 && !IsPacked(start) && start.IndexOf((byte)0) < 0) return new TextSource(path, file);
         throw Refusal(file, start);
     }
@@ -87,8 +90,6 @@ public static class CloudFiles
         string extension = Path.GetExtension(file.Name).ToLowerInvariant();
         if (file.Length == 0)
             return new InputException(file.Name, "the file is empty", "0 bytes", "The copy failed; copy the file again");
-        if (start.StartsWith("glTF"u8) || extension is ".glb" or ".gltf")
-            return new InputException(file.Name, "glTF models are not read by this version", "a glTF file", "Export the model as PLY (mesh or points), or as LAS, and run again");
         if (start.StartsWith("ASTM-E57"u8))
             return new InputException(file.Name, "E57 is not read by this version", "an E57 file", Mend);
         if (IsPacked(start))

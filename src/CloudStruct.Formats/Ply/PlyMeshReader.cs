@@ -1,3 +1,4 @@
+using CloudStruct.Formats.Meshes;
 using CloudStruct.Formats.Bytes;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Points;
@@ -9,7 +10,7 @@ namespace CloudStruct.Formats.Ply;
 internal static class PlyMeshReader
 {
     /// <summary>Reads vertices and triangles.</summary>
-    public static PlyMesh Read(FileBytes file, PlyHeader header, PlyVertexLayout layout, double floatColourScale, CancellationToken stop)
+    public static TriangleMesh Read(FileBytes file, PlyHeader header, PlyVertexLayout layout, double floatColourScale, CancellationToken stop)
     {
         PlyElement vertices = layout.Element, faces = header.Faces!;
         // The header reader has checked the count against the file's size.
@@ -55,7 +56,7 @@ internal static class PlyMeshReader
             }
             if (verticesDone && facesDone) break;
         }
-        return new PlyMesh(x, y, z, red, green, blue, corners);
+        return new TriangleMesh(x, y, z, red, green, blue, corners);
     }
 
     private static void Fans(

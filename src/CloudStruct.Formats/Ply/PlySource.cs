@@ -1,3 +1,4 @@
+using CloudStruct.Formats.Meshes;
 using CloudStruct.Formats.Bytes;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Points;
@@ -20,7 +21,7 @@ internal sealed class PlySource : IPointSource
     private readonly double floatColourScale;
 
     // A mesh is needed whole each time its samples are read: kept while memory allows, so that it is loaded once as a rule.
-    private readonly WeakReference<PlyMesh> loaded = new(null!);
+    private readonly WeakReference<TriangleMesh> loaded = new(null!);
 
     /// <summary>Opens a file that starts with "ply".</summary>
     public PlySource(string path, FileBytes file, MeshSampling sampling)
@@ -44,7 +45,7 @@ internal sealed class PlySource : IPointSource
     {
         if (IsMesh)
         {
-            PlyMesh mesh = Mesh(stop);
+            TriangleMesh mesh = Mesh(stop);
             double area = MeshSampler.Area(mesh);
             if (!(area > 0) || !double.IsFinite(area))
                 throw new InputException(ply.Name, "the mesh has no area", Invariant($"{mesh.Triangles} triangles, area {area}"), "Export the mesh again");
@@ -57,9 +58,9 @@ internal sealed class PlySource : IPointSource
         foreach (SourceBlock block in new PlyVertexReader(ply, layout, cursor, floatColourScale).Blocks(stop)) yield return block;
     }
 
-    private PlyMesh Mesh(CancellationToken stop)
+    private TriangleMesh Mesh(CancellationToken stop)
     {
-        if (loaded.TryGetTarget(out PlyMesh? mesh)) return mesh;
+        if (loaded.TryGetTarget(out TriangleMesh? mesh)) return mesh;
         using FileBytes file = Open();
         mesh = PlyMeshReader.Read(file, ply, layout, floatColourScale, stop);
         loaded.SetTarget(mesh);

@@ -1,4 +1,5 @@
 using CloudStruct.Formats;
+using CloudStruct.Formats.Meshes;
 using CloudStruct.Formats.Ply;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Tests.Kit;

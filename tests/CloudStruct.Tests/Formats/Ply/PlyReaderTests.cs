@@ -1,6 +1,7 @@
 using System.Text;
 using CloudStruct.Formats;
 using CloudStruct.Formats.Las;
+using CloudStruct.Formats.Meshes;
 using CloudStruct.Formats.Ply;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Points;

@@ -1,6 +1,6 @@
 using CloudStruct.Records.Points;
 
-namespace CloudStruct.Formats.Ply;
+namespace CloudStruct.Formats.Meshes;
 
 /// <summary>Points spread over a mesh in proportion to area, the same each time.</summary>
 /// <remarks>Samples stand at even steps of cumulative area, so that each triangle gets its share to within one; inside a
@@ -15,7 +15,7 @@ internal static class MeshSampler
     private const int MostEdges = 1_000_000;
 
     /// <summary>Samples wanted for a mesh of an area.</summary>
-    public static long Wanted(PlyMesh mesh, double area, MeshSampling sampling)
+    public static long Wanted(TriangleMesh mesh, double area, MeshSampling sampling)
     {
         double spacing = sampling.Spacing ?? MedianEdge(mesh);
         double natural = spacing > 0 ? area / (spacing * spacing) : sampling.Most;
@@ -23,7 +23,7 @@ internal static class MeshSampler
     }
 
     /// <summary>Sum of the triangles' areas, in order.</summary>
-    public static double Area(PlyMesh mesh)
+    public static double Area(TriangleMesh mesh)
     {
         double area = 0;
         for (int t = 0; t < mesh.Triangles; t++) area += mesh.Area(t);
@@ -31,7 +31,7 @@ internal static class MeshSampler
     }
 
     /// <summary>Samples in order of triangles; the caller disposes of the blocks.</summary>
-    public static IEnumerable<SourceBlock> Blocks(PlyMesh mesh, double area, long wanted, CancellationToken stop)
+    public static IEnumerable<SourceBlock> Blocks(TriangleMesh mesh, double area, long wanted, CancellationToken stop)
     {
         double step = area / wanted, cumulated = 0;
         long next = 0;
@@ -65,7 +65,7 @@ internal static class MeshSampler
         }
     }
 
-    private static void Put(PlyMesh mesh, int triangle, int i, SourceBlock block)
+    private static void Put(TriangleMesh mesh, int triangle, int i, SourceBlock block)
     {
         ulong hash = Mixed((ulong)triangle);
         double u = Fraction(((hash >> 32) * (1.0 / 4294967296)) + (i * StepU));
@@ -81,7 +81,8 @@ internal static class MeshSampler
         block.Y[k] = mesh.Y[a] + (u * (mesh.Y[b] - mesh.Y[a])) + (v * (mesh.Y[c] - mesh.Y[a]));
         block.Z[k] = mesh.Z[a] + (u * (mesh.Z[b] - mesh.Z[a])) + (v * (mesh.Z[c] - mesh.Z[a]));
         block.Class[k] = 0;
-        if (mesh.HasColour)
+        if (mesh.Paint is { } paint) (block.Red[k], block.Green[k], block.Blue[k]) = paint(triangle, u, v);
+        else if (mesh.HasColour)
         {
             block.Red[k] = (ushort)Math.Round((w * mesh.Red[a]) + (u * mesh.Red[b]) + (v * mesh.Red[c]));
             block.Green[k] = (ushort)Math.Round((w * mesh.Green[a]) + (u * mesh.Green[b]) + (v * mesh.Green[c]));
@@ -90,7 +91,7 @@ internal static class MeshSampler
         block.Count = k + 1;
     }
 
-    private static double MedianEdge(PlyMesh mesh)
+    private static double MedianEdge(TriangleMesh mesh)
     {
         int every = Math.Max(1, mesh.Triangles / (MostEdges / 3));
         var edges = new List<double>();

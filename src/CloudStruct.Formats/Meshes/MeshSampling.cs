@@ -1,4 +1,4 @@
-namespace CloudStruct.Formats.Ply;
+namespace CloudStruct.Formats.Meshes;
 
 /// <summary>How densely a mesh is sampled to become a cloud.</summary>
 public sealed record MeshSampling

@@ -1,4 +1,4 @@
-namespace CloudStruct.Formats.Ply;
+namespace CloudStruct.Formats.Meshes;
 
 /// <summary>A triangle mesh in memory.</summary>
 /// <param name="X">Vertex coordinates, file units.</param>
@@ -8,11 +8,15 @@ namespace CloudStruct.Formats.Ply;
 /// <param name="Green">Vertex colour.</param>
 /// <param name="Blue">Vertex colour.</param>
 /// <param name="Corners">Three vertex indices a triangle.</param>
-internal sealed record PlyMesh(
+internal sealed record TriangleMesh(
     double[] X, double[] Y, double[] Z, ushort[] Red, ushort[] Green, ushort[] Blue, IReadOnlyList<int> Corners)
 {
-    /// <summary>Whether vertices have colour.</summary>
-    public bool HasColour => Red.Length > 0;
+    /// <summary>Colour at a place of a triangle (its number, shares of its second and third corner), for meshes that have it in textures;
+    /// null for those whose vertices have it.</summary>
+    public Func<int, double, double, (ushort R, ushort G, ushort B)>? Paint { get; init; }
+
+    /// <summary>Whether there is colour.</summary>
+    public bool HasColour => Paint is not null || Red.Length > 0;
 
     /// <summary>Triangles.</summary>
     public int Triangles => Corners.Count / 3;
