@@ -28,6 +28,15 @@ public sealed class PlanesStudy : IStudy
         foreach ((string name, var of) in tally) Console.WriteLine(Line(name, of));
     }
 
+    /// <summary>Faces of one scene of which at least half was found, and how many of their cones hold the true pole.</summary>
+    public static (int Inside, int Judged) Covered(ulong seed, int count)
+    {
+        var tally = new SortedDictionary<string, List<(double Off, double Cone, double Expected, bool InEllipse)>>(StringComparer.Ordinal);
+        One(seed, count, tally, new int[3], new int[3], new int[3]);
+        var all = Enumerable.Range(0, 3).SelectMany(c => tally[$"{c} {Classes[c]}"]).ToList();
+        return (all.Count(x => x.Off <= x.Cone), all.Count);
+    }
+
     private static string Line(string name, List<(double Off, double Cone, double Expected, bool InEllipse)> of)
     {
         double[] off = [.. of.Select(x => x.Off).Order()], ratio = [.. of.Select(x => x.Off / x.Expected).Order()];
@@ -65,7 +74,7 @@ public sealed class PlanesStudy : IStudy
             Records.Frame.Vec3 d = (normal.Dot(f.Normal) < 0 ? -normal : normal) - f.Normal, major = f.Region.MajorAxis, minor = f.Normal.Cross(major);
             double a = d.Dot(major) * 180 / Math.PI / s1, b = d.Dot(minor) * 180 / Math.PI / s2;
             var entry = (off, f.Region.Cone95Deg, expected, (a * a) + (b * b) <= 1);
-            foreach (string key in new[] { $"{c} {Classes[c]}", $"{c} {Classes[c]}, {scene.Shape}", $"{c} {Classes[c]}, seed {seed}", f.AreaM2 > 0.93 * area ? $"{c} {Classes[c]}, full {scene.Shape}" : $"{c} {Classes[c]}, part {scene.Shape}", aspect > 3.5 ? $"{c} {Classes[c]}, strip" : "", scene.LengthM > 0.12 ? $"{c} {Classes[c]}, long noise" : "" })
+            foreach (string key in new[] { $"{c} {Classes[c]}", $"{c} {Classes[c]}, {scene.Shape}", aspect > 3.5 ? $"{c} {Classes[c]}, strip" : "", scene.LengthM > 0.12 ? $"{c} {Classes[c]}, long noise" : "" })
             {
                 if (key.Length == 0) continue;
                 if (!tally.TryGetValue(key, out var list)) tally[key] = list = [];

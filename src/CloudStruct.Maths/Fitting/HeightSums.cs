@@ -26,7 +26,7 @@ internal struct HeightSums
         double mu = u / n, mv = v / n, mr = r / n;
         double suu = uu - (u * mu), suv = uv - (u * mv), svv = vv - (v * mv), sur = ur - (u * mr), svr = vr - (v * mr);
         double det = (suu * svv) - (suv * suv), b = 0, c = 0;
-        if (det > 1e-9 * suu * svv)
+        if (det > 1e-9 * (suu + svv) * (suu + svv))   // else the places lie in a line
         {
             b = ((sur * svv) - (svr * suv)) / det;
             c = ((svr * suu) - (sur * suv)) / det;

@@ -13,7 +13,7 @@ internal static class Refusing
     // A small flat piece is soon found by chance on bumpy ground, a large one hardly ever; and the waves of a small piece are few
     // and chancy, while those of a large one tell most. Beyond the limits more or less area says no more.
     private const double LeastM2 = 0.05, MostM2 = 1;
-    private const double SpreadWeight = 3, ScatterWeight = 3.4, WaveWeight = 1, WaveWeightBySize = 1, Limit = 2.5, LimitBySize = 1.4;
+    private const double SpreadWeight = 3, ScatterWeight = 3.4, WaveWeight = 1, WaveWeightBySize = 1, Limit = 2.25, LimitBySize = 1.25;
 
     // For places within a face, by spread and scatter alone.
     private const double WornSpreadWeight = 4, WornScatterWeight = 2.5;

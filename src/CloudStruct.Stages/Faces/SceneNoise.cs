@@ -136,10 +136,12 @@ internal sealed class SceneNoise
     // Median over the faces, each weighing as much as it has points: some undulate, and must not speak for the rest.
     private static double ErrorVariance(Pieces pieces, int[] chosen, NoiseLikelihood?[] told, NoiseLaws laws, NoisePrior prior)
     {
+        // By the shares as learnt: the half of the prior that prefers no law would let long waves in that the scene does not show.
+        NoisePrior learnt = prior with { LogShare = [.. prior.Share.Select(s => Math.Log(Math.Max(s, 1e-300)))] };
         var own = new List<(double Variance, double Points)>();
         for (int c = 0; c < chosen.Length; c++)
         {
-            if (told[c] is { } l) own.Add((laws.Slopes(l, prior).ErrorVariance, pieces.Of(chosen[c]).Length));
+            if (told[c] is { } l) own.Add((laws.Slopes(l, learnt).ErrorVariance, pieces.Of(chosen[c]).Length));
         }
 
         return Math.Max(prior.Variance, Middle([.. own]));

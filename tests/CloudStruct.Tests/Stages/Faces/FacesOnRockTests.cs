@@ -33,6 +33,24 @@ public class FacesOnRockTests(ITestOutputHelper output)
         Assert.True(score.MedianErrorDeg <= 1, $"median error {score.MedianErrorDeg}");
     }
 
+    // Quick version of the study planes: single faces under correlated noise of three laws that nothing was tuned on.
+    [Fact]
+    public void Cones_hold_the_true_poles_of_single_faces()
+    {
+        int inside = 0, judged = 0;
+        foreach (ulong seed in new ulong[] { 921, 922, 923 })
+        {
+            (int now, int of) = PlanesStudy.Covered(seed, 60);
+            (inside, judged) = (inside + now, judged + of);
+        }
+
+        output.WriteLine($"{inside} of {judged}");
+        Assert.True(judged > 140, $"{judged}");
+
+        // 0.93 less three standard errors of a share in 160.
+        Assert.True(inside >= 0.87 * judged, $"{inside} of {judged}");
+    }
+
     [Fact]
     public void A_changed_setting_leaves_the_numbers_of_faces_that_it_does_not_change()
     {

@@ -54,6 +54,28 @@ public class FacesStageTests
         Assert.Equal(faces, found.Faces.Length);
     }
 
+    [Theory]
+    [InlineData(5)]
+    [InlineData(7)]
+    public void Two_planes_that_meet_at_a_blunt_fold_are_two_faces_each_with_its_own_attitude(double foldDeg)
+    {
+        double half = foldDeg / 2 * Math.PI / 180;
+        FaceSet found = Run(new PatchCloud()
+            .Add(new Vec3(0.6 * Math.Cos(half), 0, -0.6 * Math.Sin(half)), new Attitude(0, foldDeg / 2), 2, 1.2, 0.003)
+            .Add(new Vec3(-0.6 * Math.Cos(half), 0, -0.6 * Math.Sin(half)), new Attitude(180, foldDeg / 2), 2, 1.2, 0.003)
+            .Describe());
+        Assert.Equal(2, found.Faces.Length);
+        Assert.All(found.Faces, f => Assert.Equal(foldDeg / 2, f.Attitude.DipDeg, 0.5));
+        Assert.Equal(180, Math.Abs(found.Faces[0].Attitude.StrikeDeg - found.Faces[1].Attitude.StrikeDeg), 25.0);
+    }
+
+    [Fact]
+    public void An_undulating_plane_stays_one_face()
+    {
+        FaceSet found = Run(new PatchCloud().Add(default, new Attitude(30, 60), 3, 2, 0.005, 1.5).Describe());
+        Assert.Single(found.Faces);
+    }
+
     [Fact]
     public void Parallel_faces_a_step_apart_stay_two()
     {
