@@ -1,5 +1,6 @@
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Contacts;
+using MathNet.Numerics.Distributions;
 
 namespace CloudStruct.Stages.Contacts;
 
@@ -11,12 +12,13 @@ namespace CloudStruct.Stages.Contacts;
 internal sealed class MarginModel
 {
     private const int Columns = 7, Rows = 5;   // of the grid that stands for a patch
+    private const double LeastFreedom = 4;
     private readonly TraceCell[] cells;
     private readonly double s0, t0;
     private readonly bool both;
-    private readonly (CorrelatedFit Fit, TraceNoise Noise, double Weight)[] fits;
+    private readonly (CorrelatedFit Fit, TraceNoise Noise, double Weight, double Widening)[] fits;
 
-    private MarginModel(TraceCell[] cells, double s0, double t0, bool both, (CorrelatedFit Fit, TraceNoise Noise, double Weight)[] fits)
+    private MarginModel(TraceCell[] cells, double s0, double t0, bool both, (CorrelatedFit Fit, TraceNoise Noise, double Weight, double Widening)[] fits)
     {
         this.cells = cells;
         this.s0 = s0;
@@ -31,10 +33,10 @@ internal sealed class MarginModel
     /// <param name="laws">Laws of scatter.</param>
     public static MarginModel? Of(TraceCell[] cells, double s0, TraceLaws laws)
     {
-        var fits = new List<(CorrelatedFit, TraceNoise, double)>();
+        var fits = new List<(CorrelatedFit, TraceNoise, double, double)>();
         foreach ((TraceNoise noise, double weight) in laws.Laws)
         {
-            if (Solve(cells, s0, noise) is { } fit) fits.Add((fit, noise, weight));
+            if (Solve(cells, s0, noise) is { } fit) fits.Add((fit, noise, weight, Widening(cells, noise)));
         }
 
         return fits.Count == 0 ? null : new MarginModel(cells, s0, cells.Average(c => c.At.T), IsBoth(cells), [.. fits]);
@@ -76,11 +78,12 @@ internal sealed class MarginModel
         double ms = s.Average(), mt = t.Average(), ss = s.Sum(v => (v - ms) * (v - ms)), tt = t.Sum(v => (v - mt) * (v - mt));
         double[] alongS = [.. s.Select(v => (v - ms) / ss)], upT = [.. t.Select(v => (v - mt) / tt)], sum = [.. alongS.Zip(upT, (a, b) => a + b)];
         double total = 0, tilt = 0, slope = 0, vt = 0, vs = 0, mixed = 0;
-        foreach ((CorrelatedFit fit, TraceNoise noise, double weight) in fits)
+        foreach ((CorrelatedFit fit, TraceNoise noise, double weight, double widening) in fits)
         {
             double[] near = Nearness(noise, s, t), own = Own(noise, s, t);
             (double Value, double Variance) T = Of(fit, noise, margin, near, own, s, t, upT), S = Of(fit, noise, margin, near, own, s, t, alongS);
             double cross = (Of(fit, noise, margin, near, own, s, t, sum).Variance - T.Variance - S.Variance) / 2;
+            (T.Variance, S.Variance, cross) = (T.Variance * widening, S.Variance * widening, cross * widening);
             total += weight;
             tilt += weight * T.Value;
             slope += weight * S.Value;
@@ -91,6 +94,25 @@ internal sealed class MarginModel
 
         (tilt, slope) = (tilt / total, slope / total);
         return new PatchSlopes(tilt, Math.Max(1e-12, (vt / total) - (tilt * tilt)), slope, Math.Max(1e-12, (vs / total) - (slope * slope)), (mixed / total) - (tilt * slope));
+    }
+
+    // The height of the waves is judged from the few that the cells show: Student's law with as many degrees of freedom takes the
+    // place of the normal one. Variances are widened by the square of the ratio of their quantiles.
+    private static double Widening(TraceCell[] cells, TraceNoise noise)
+    {
+        double sum = 0;
+        for (int i = 0; i < cells.Length; i++)
+        {
+            for (int j = 0; j < i; j++)
+            {
+                double alike = Correlation.At(CorrelationShape.Matern32, TraceNoise.Distance(cells[i].At.S - cells[j].At.S, cells[i].At.T - cells[j].At.T), noise.WaveRangeM);
+                sum += 2 * alike * (cells[i].Margin == cells[j].Margin ? 1 : noise.Shared);
+            }
+        }
+
+        double waves = (double)cells.Length * cells.Length / (sum + cells.Length);
+        double ratio = StudentT.InvCDF(0, 1, Math.Max(LeastFreedom, waves - 2), 0.975) / 1.959963985;
+        return ratio * ratio;
     }
 
     // Covariance of the undulation of one margin at each node with that of the same margin at each cell.
