@@ -4,8 +4,8 @@ using CloudStruct.Records.Frame;
 
 namespace CloudStruct.Stages.Width;
 
-/// <summary>The margins about one station: q = a + b s + l t per margin, l common, in axes of the station; what is left follows
-/// the traces as far as their noise is not white.</summary>
+/// <summary>The margins about one station: q = a + b s + l t per margin, l common, in axes of the station; the waves of the
+/// margins about it are followed, the errors of the traces are not.</summary>
 /// <param name="OffsetAM">Margin A along the normal, at the height where the two traces face each other [m].</param>
 /// <param name="OffsetBM">Margin B [m].</param>
 /// <param name="Stretch">Distance along the local normal per metre of q: below 1 where strike and dip differ from the axes.</param>
@@ -54,13 +54,19 @@ internal sealed record StationFit(double OffsetAM, double OffsetBM, double Stret
         }
 
         var noise = new CorrelatedNoise(frame.TraceScatterM, frame.TraceRangeM, frame.TraceWhiteShare);
-        double Between(Margin a, double sa, double ta, Margin b, double sb, double tb) =>
-            noise.Covariance(Math.Sqrt(((sa - sb) * (sa - sb)) + ((ta - tb) * (ta - tb)))) * (a == b ? 1 : frame.TraceShared);
+        double wave = frame.WaveM * frame.WaveM;
+        double WaveAt(double d) => wave > 0 ? wave * Correlation.At(CorrelationShape.Matern32, d, frame.WaveRangeM) : 0;
+        static double Apart(double ds, double dt) => Math.Sqrt((ds * ds) + (dt * dt));
         var covariance = new double[n * n];
         for (int i = 0; i < n; i++)
         {
-            for (int j = 0; j < i; j++) covariance[(i * n) + j] = Between(near[i].Margin, s[i], t[i], near[j].Margin, s[j], t[j]);
-            covariance[(i * n) + i] = noise.Variance();
+            for (int j = 0; j < i; j++)
+            {
+                double d = Apart(s[i] - s[j], t[i] - t[j]);
+                covariance[(i * n) + j] = near[i].Margin == near[j].Margin ? noise.Covariance(d) + WaveAt(d) : frame.TraceShared * WaveAt(d);
+            }
+
+            covariance[(i * n) + i] = noise.Variance() + wave;
         }
 
         double strike = 1 / (StrikePrior * StrikePrior);
@@ -70,14 +76,16 @@ internal sealed record StationFit(double OffsetAM, double OffsetBM, double Stret
         var difference = new double[n];
         for (int i = 0; i < n; i++)
         {
-            toA[i] = Between(near[i].Margin, s[i], t[i], Margin.A, 0, facing);
-            toB[i] = Between(near[i].Margin, s[i], t[i], Margin.B, 0, facing);
+            double k = WaveAt(Apart(s[i], t[i] - facing));
+            (toA[i], toB[i]) = near[i].Margin == Margin.A ? (k, k * frame.TraceShared) : (k * frame.TraceShared, k);
             difference[i] = toB[i] - toA[i];
         }
 
-        double own = noise.Covariance(0);
-        double a = fit.Predict([1, 0, 0, 0, 0], toA, own).Value;
-        (double across, double variance) = fit.Predict([-1, 0, 1, 0, 0], difference, 2 * own * (1 - frame.TraceShared));
+        // Traces rougher here than along the dike as a whole, behind soil or shade: the errors here are larger too.
+        double rough = Math.Max(1, fit.SquareSum / Math.Max(1, n - Parameters));
+        double a = fit.Predict([1, 0, 0, 0, 0], toA, wave).Value;
+        (double across, double variance) = fit.Predict([-1, 0, 1, 0, 0], difference, 2 * wave * (1 - frame.TraceShared));
+        variance *= rough;
         double slope = (fit.Beta[1] + fit.Beta[3]) / 2, tilt = fit.Beta[4], stretch = 1 / Math.Sqrt(1 + (slope * slope) + (tilt * tilt));
         return new StationFit(a, a + across, stretch, Math.Sqrt(variance) * stretch, heightA, heightB);
     }
