@@ -109,8 +109,9 @@ internal sealed partial class DikeFinder
                     bool holds = knot.Inside > 0.3 && (knot.AnyMargin || double.IsNaN(knot.FlankA) || double.IsNaN(knot.FlankB)) && knot.B - knot.A > 0.3 * width && knot.B - knot.A < 2.5 * width;
                     if (!holds)
                     {
-                        // Rock shows, but not this rock: the end, unless it is a local blemish.
-                        if (++failed == 3) break;
+                        // Something shows, but not this rock: the end, unless it is a local blemish, or soil and scree
+                        // that were not told from rock (three windows alone ended dikes a fifth too early there).
+                        if (++failed >= 3 && failed * step > 6) break;
                         continue;
                     }
 
