@@ -42,12 +42,13 @@ public sealed class ProductsWriter
         ResultFolder files, Findings findings, IPieces pieces, RunFacts facts, ProductSettings settings, StageContext context)
     {
         if (settings.Clouds == "none") return;
+        string name = ClassifiedCloudWriter.NameOf(settings);
         CrsInfo crs = findings.Intake.Frame.Crs;
         if (crs is not { HorizontalUnitM: 1, VerticalUnitM: 1 })
-            context.Say(new Remark("products", $"{ClassifiedCloudWriter.FileName} is in metres and names no coordinate system, because {crs.Name} is not in metres.", false));
-        using Stream stream = files.Create(ClassifiedCloudWriter.FileName);
+            context.Say(new Remark("products", $"{name} is in metres and names no coordinate system, because {crs.Name} is not in metres.", false));
+        using Stream stream = files.Create(name);
         if (settings.Clouds == "thinned") ClassifiedCloudWriter.WriteThinned(stream, findings, facts);
-        else ClassifiedCloudWriter.WriteAll(stream, findings, pieces, facts, context);
+        else ClassifiedCloudWriter.WriteAll(stream, findings, pieces, facts, context, settings.Clouds == "laz");
     }
 
     private static void WriteTables(ResultFolder files, Findings findings, RunFacts facts)

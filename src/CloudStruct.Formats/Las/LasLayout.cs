@@ -29,6 +29,9 @@ public sealed record LasLayout
     /// <summary>Where the points come from in the words of the standard: "OTHER", "MODIFICATION", "MERGE", "EXTRACTION".</summary>
     public string SystemIdentifier { get; init; } = "OTHER";
 
+    /// <summary>Whether points are compressed (LAZ): version-2 items under minor version 2, layered ones under 4.</summary>
+    public bool Compressed { get; init; }
+
     /// <summary>Columns of our own after the standard ones.</summary>
     public LasExtra[] Extras { get; init; } = [];
 

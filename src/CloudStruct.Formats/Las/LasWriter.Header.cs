@@ -1,5 +1,6 @@
 using System.Buffers.Binary;
 using System.Text;
+using CloudStruct.Formats.Laz;
 
 namespace CloudStruct.Formats.Las;
 
@@ -7,6 +8,7 @@ public sealed partial class LasWriter
 {
     private const string ProjectionUser = "LASF_Projection";
     private const string SpecUser = "LASF_Spec";
+    private const int CompressedBit = 1 << 7;
     private const int VariableHeaderBytes = 54;
     private const int ExtraDescriptorBytes = 192;
 
@@ -30,7 +32,7 @@ public sealed partial class LasWriter
         Put16(h, 94, h.Length);
         BinaryPrimitives.WriteUInt32LittleEndian(h.AsSpan(96), checked((uint)pointsAt));
         BinaryPrimitives.WriteUInt32LittleEndian(h.AsSpan(100), (uint)variableRecords);
-        h[104] = (byte)layout.PointFormat;
+        h[104] = (byte)(layout.PointFormat | (layout.Compressed ? CompressedBit : 0));
         Put16(h, 105, recordBytes);
         if (layout.Minor < 4)
         {
@@ -62,6 +64,7 @@ public sealed partial class LasWriter
         if (layout.Minor < 4 && layout.Epsg > 0) records.Add(Record(ProjectionUser, 34735, "GeoTIFF keys", Keys(layout.Epsg)));
         else if (layout.Wkt.Length > 0) records.Add(Record(ProjectionUser, 2112, "WKT of the coordinate system", [.. Encoding.UTF8.GetBytes(layout.Wkt), 0]));
         if (layout.Extras.Length > 0) records.Add(Record(SpecUser, 4, "Extra bytes", Descriptors(layout.Extras)));
+        if (layout.Compressed) records.Add(Record(LazLayout.User, LazLayout.Id, "Compressed points", LazLayout.For(layout.PointFormat, RecordBytes(layout)).Write()));
         return [.. records];
     }
 

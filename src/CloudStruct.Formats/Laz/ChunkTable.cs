@@ -31,7 +31,7 @@ internal static class ChunkTable
         // An entry takes a few bytes; the table ends the file or stands before its last records.
         byte[] stream = file.Take(at + 8, Math.Min(file.Length - at - 8, 64 + (16L * count)), "the table of chunks");
         var decoder = new ArithmeticDecoder(stream, 0, stream.Length);
-        var numbers = new IntegerDecoder(32, 2);
+        var numbers = new IntegerCoder(32, 2);
         var entries = new Entry[count];
         uint own = 0, bytes = 0;
         long start = pointsAt + 8, seen = 0;
@@ -48,5 +48,27 @@ internal static class ChunkTable
         }
 
         return seen == points ? entries : throw new LazDamageException(Invariant($"chunks hold {seen} points, the header says {points}"));
+    }
+
+    /// <summary>The table as it stands in a file, from its version on.</summary>
+    /// <param name="chunks">Points and bytes of each chunk.</param>
+    /// <param name="differing">Whether chunks have their own number of points each.</param>
+    public static byte[] Bytes(IReadOnlyList<(int Points, int Bytes)> chunks, bool differing)
+    {
+        byte[] head = new byte[8];
+        BinaryPrimitives.WriteInt32LittleEndian(head.AsSpan(4), chunks.Count);
+        if (chunks.Count == 0) return head;
+        var encoder = new ArithmeticEncoder();
+        var numbers = new IntegerCoder(32, 2);
+        (int Points, int Bytes) before = default;
+        foreach ((int Points, int Bytes) chunk in chunks)
+        {
+            if (differing) numbers.Encode(encoder, before.Points, chunk.Points, 0);
+            numbers.Encode(encoder, before.Bytes, chunk.Bytes, 1);
+            before = chunk;
+        }
+
+        encoder.Finish();
+        return [.. head, .. encoder.Bytes];
     }
 }

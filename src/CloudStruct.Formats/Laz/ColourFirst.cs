@@ -4,7 +4,7 @@ namespace CloudStruct.Formats.Laz;
 internal sealed class ColourFirst : PointwiseItem
 {
     private readonly SymbolModel used = new(64);
-    private readonly IntegerDecoder bytes = new(8, 6);
+    private readonly IntegerCoder bytes = new(8, 6);
 
     /// <inheritdoc/>
     public override void Start(ReadOnlySpan<byte> raw)

@@ -3,7 +3,7 @@ namespace CloudStruct.Formats.Laz;
 /// <summary>Bytes beyond the standard fields of point formats 0 to 5, version 1.</summary>
 internal sealed class ExtraBytesFirst(int count) : PointwiseItem
 {
-    private readonly IntegerDecoder bytes = new(8, count);
+    private readonly IntegerCoder bytes = new(8, count);
 
     /// <inheritdoc/>
     public override void Start(ReadOnlySpan<byte> raw)

@@ -6,7 +6,7 @@ namespace CloudStruct.Formats.Laz;
 internal sealed class GpsTimeFirst : PointwiseItem
 {
     private readonly SymbolModel zero = new(3), multi = new(512);
-    private readonly IntegerDecoder gps = new(32, 6);
+    private readonly IntegerCoder gps = new(32, 6);
     private long last;
     private int step, extreme;
 

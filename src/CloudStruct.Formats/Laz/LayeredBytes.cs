@@ -19,4 +19,19 @@ internal sealed class LayeredBytes(int count, bool version4) : Companion(count, 
             }
         }
     }
+
+    /// <inheritdoc/>
+    public override bool Needs(int layer, ReadOnlySpan<byte> records, int recordBytes, int at) => LayerNeed.Differs(records, recordBytes, at + layer, 1);
+
+    /// <inheritdoc/>
+    protected override void Encode(int channel, ReadOnlySpan<ArithmeticEncoder?> layers, ReadOnlySpan<byte> previous, ReadOnlySpan<byte> now)
+    {
+        unchecked
+        {
+            for (int i = 0; i < previous.Length; i++)
+            {
+                if (layers[i] is { } stream) stream.Symbol(models[(channel * previous.Length) + i] ??= new SymbolModel(256), (byte)(now[i] - previous[i]));
+            }
+        }
+    }
 }

@@ -110,7 +110,8 @@ internal sealed class LazChunk
         _ => new ExtraBytes(item.Bytes),
     };
 
-    private static Companion Layered(LazItem item) => item.Type switch
+    /// <summary>The piece of an item that goes with the point item.</summary>
+    public static Companion Layered(LazItem item) => item.Type switch
     {
         11 => new LayeredColour(false, item.Version >= 4),
         12 => new LayeredColour(true, item.Version >= 4),

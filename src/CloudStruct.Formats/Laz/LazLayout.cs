@@ -4,7 +4,7 @@ using static System.FormattableString;
 namespace CloudStruct.Formats.Laz;
 
 /// <summary>How the points of a file are compressed, as its compression record says.</summary>
-internal sealed record LazLayout
+internal sealed partial record LazLayout
 {
     /// <summary>User and number of the record.</summary>
     public const string User = "laszip encoded";

@@ -7,7 +7,7 @@ internal sealed class Point10First : PointwiseItem
 {
     private readonly SymbolModel changed = new(64);
     private readonly SymbolModel?[] flagByte = new SymbolModel?[256], classification = new SymbolModel?[256], user = new SymbolModel?[256];
-    private readonly IntegerDecoder dx = new(32, 1), dy = new(32, 20), z = new(32, 20), intensity = new(16, 1), angle = new(8, 2), source = new(16, 1);
+    private readonly IntegerCoder dx = new(32, 1), dy = new(32, 20), z = new(32, 20), intensity = new(16, 1), angle = new(8, 2), source = new(16, 1);
     private readonly int[] lastX = new int[3], lastY = new int[3];
     private int slot;
 

@@ -3,7 +3,7 @@ using System.Buffers.Binary;
 namespace CloudStruct.Formats.Laz;
 
 /// <summary>The 30 bytes common to point formats 6 to 10: nine layers, a state for each scanner channel.</summary>
-internal sealed class Point14
+internal sealed partial class Point14
 {
     /// <summary>Size of the piece.</summary>
     public const int Bytes = 30;

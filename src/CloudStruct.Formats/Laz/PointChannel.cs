@@ -34,17 +34,17 @@ internal sealed class PointChannel
 
     public SymbolModel?[] User { get; } = new SymbolModel?[64];
 
-    public IntegerDecoder X { get; } = new(32, 2);
+    public IntegerCoder X { get; } = new(32, 2);
 
-    public IntegerDecoder Y { get; } = new(32, 22);
+    public IntegerCoder Y { get; } = new(32, 22);
 
-    public IntegerDecoder Z { get; } = new(32, 20);
+    public IntegerCoder Z { get; } = new(32, 20);
 
-    public IntegerDecoder Intensity { get; } = new(16, 4);
+    public IntegerCoder Intensity { get; } = new(16, 4);
 
-    public IntegerDecoder Angle { get; } = new(16, 2);
+    public IntegerCoder Angle { get; } = new(16, 2);
 
-    public IntegerDecoder Source { get; } = new(16, 1);
+    public IntegerCoder Source { get; } = new(16, 1);
 
     public RunningMedian[] MedianX { get; } = new RunningMedian[12];
 

@@ -2,13 +2,13 @@ namespace CloudStruct.Formats.Laz;
 
 /// <summary>GPS times as up to four sequences of even steps, on the 64 bits of the number. Shared by the pointwise and the layered form.</summary>
 /// <param name="layered">The layered form tells elsewhere that a time is unchanged, so that its symbols move down by one.</param>
-internal sealed class TimeSequences(bool layered)
+internal sealed partial class TimeSequences(bool layered)
 {
     // A valid stream changes to another sequence at most once a point.
     private const int MostSwitches = 4;
 
     private readonly SymbolModel zero = new(layered ? 5 : 6), multi = new(layered ? 515 : 516);
-    private readonly IntegerDecoder gps = new(32, 9);
+    private readonly IntegerCoder gps = new(32, 9);
     private readonly long[] last = new long[4];
     private readonly int[] step = new int[4], extreme = new int[4];
     private int current, newest;

@@ -7,7 +7,7 @@ internal sealed class WaveModels
 {
     private readonly SymbolModel index = new(256);
     private readonly SymbolModel?[] kinds = new SymbolModel?[4];
-    private readonly IntegerDecoder difference = new(32, 1), size = new(32, 1), returnPoint = new(32, 1), xyz = new(32, 3);
+    private readonly IntegerCoder difference = new(32, 1), size = new(32, 1), returnPoint = new(32, 1), xyz = new(32, 3);
     private int lastKind, lastDifference;
 
     /// <summary>The next packet.</summary>
@@ -38,6 +38,6 @@ internal sealed class WaveModels
         }
     }
 
-    private static void Code(ArithmeticDecoder stream, IntegerDecoder with, Span<byte> at, int context) =>
+    private static void Code(ArithmeticDecoder stream, IntegerCoder with, Span<byte> at, int context) =>
         BinaryPrimitives.WriteInt32LittleEndian(at, with.Decode(stream, BinaryPrimitives.ReadInt32LittleEndian(at), context));
 }

@@ -7,14 +7,14 @@ using CloudStruct.Records.Stages;
 
 namespace CloudStruct.Products.Clouds;
 
-/// <summary>Writes classified.las: what was found, point by point, in map coordinates in metres.</summary>
+/// <summary>Writes classified.las or classified.laz: what was found, point by point, in map coordinates in metres.</summary>
 /// <remarks>Input points are streamed once more and each is given what its nearest working point has, so memory holds one
 /// block whatever the size of the survey. Map coordinates are local plus origin: in files that store millimetres they come
 /// back as they were, because the step of a float within a kilometre is 0.06 mm.</remarks>
 internal static class ClassifiedCloudWriter
 {
     /// <summary>Name below the folder of results.</summary>
-    public const string FileName = "clouds/classified.las";
+    public static string NameOf(ProductSettings settings) => settings.Clouds == "laz" ? "clouds/classified.laz" : "clouds/classified.las";
 
     private static readonly LasExtra[] Extras =
     [
@@ -29,9 +29,15 @@ internal static class ClassifiedCloudWriter
     private const double ReachSpacings = 1.75;
 
     /// <summary>Writes every input point that the intake kept.</summary>
-    public static void WriteAll(Stream stream, Findings findings, IPieces pieces, RunFacts facts, StageContext context)
+    /// <param name="stream">Allows seeking; left open.</param>
+    /// <param name="findings">What was found.</param>
+    /// <param name="pieces">The input points.</param>
+    /// <param name="facts">About the run.</param>
+    /// <param name="context">Progress, cancellation and the number of threads.</param>
+    /// <param name="compressed">As LAZ; points and columns are the same.</param>
+    public static void WriteAll(Stream stream, Findings findings, IPieces pieces, RunFacts facts, StageContext context, bool compressed = false)
     {
-        using var writer = new LasWriter(stream, Layout(findings, facts));
+        using var writer = new LasWriter(stream, Layout(findings, facts) with { Compressed = compressed }, context.Threads);
         var columns = new CloudColumns(SourceBlock.Capacity);
         long total = Math.Max(1, pieces.Record.Points), done = 0;
         foreach (PointBlock block in pieces.Read(context.Stop))

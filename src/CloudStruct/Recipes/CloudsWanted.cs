@@ -6,6 +6,9 @@ internal enum CloudsWanted
     /// <summary>Every input point.</summary>
     Las,
 
+    /// <summary>Every input point, compressed.</summary>
+    Laz,
+
     /// <summary>The working points only.</summary>
     Thinned,
 

@@ -24,7 +24,7 @@ internal sealed record Recipe
     /// <summary>Leave damaged cloud files out instead of refusing the survey (exit code 4 then, and the report says which).</summary>
     public bool SkipBadFiles { get; init; }
 
-    /// <summary>The classified cloud that is written: las (every input point), thinned (working points only), none.</summary>
+    /// <summary>The classified cloud that is written: las (every input point), laz (the same, compressed), thinned (working points only), none.</summary>
     public CloudsWanted Clouds { get; init; } = CloudsWanted.Las;
 
     /// <summary>Settings of the stage intake.</summary>

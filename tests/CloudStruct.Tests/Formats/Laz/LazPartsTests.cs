@@ -34,7 +34,7 @@ public class LazPartsTests
             (0, 0, 0), (0, 1, 0), (0, -1, 1), (0, 2, 1), (0, -2, 2), (0, 3, 2), (10, 265, 8), (0, -256, 9), (0, 257, 9), (0, 65536, 16), (7, -100000, 17),
             (5, int.MinValue, 31), (0, int.MaxValue, 31), (int.MaxValue, int.MinValue, 0), (0, int.MinValue, 32), (-1, 1073741824, 31),
         ];
-        var decoder = new IntegerDecoder(32, 2);
+        var decoder = new IntegerCoder(32, 2);
         for (int i = 0; i < pairs.Length; i++)
         {
             Assert.Equal(pairs[i].Real, decoder.Decode(stream, pairs[i].Predicted, i & 1));
@@ -46,7 +46,7 @@ public class LazPartsTests
     public void Integers_of_16_bits_wrap()
     {
         ArithmeticDecoder stream = Stream("0f 79 60 60 31 c8 0d 0b 6d f4 44 2a 6b 00 00 00");
-        var decoder = new IntegerDecoder(16, 1);
+        var decoder = new IntegerCoder(16, 1);
         (int, int)[] pairs = [(0, 65535), (65535, 0), (100, 40000), (0, 32768), (32768, 0), (1000, 1300), (1000, 700), (0, 1)];
         foreach ((int predicted, int real) in pairs) Assert.Equal(real, decoder.Decode(stream, predicted, 0));
     }

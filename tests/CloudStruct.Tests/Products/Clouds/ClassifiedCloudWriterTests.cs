@@ -1,5 +1,9 @@
 using System.Buffers.Binary;
 using System.Text;
+using CloudStruct.Formats;
+using CloudStruct.Formats.Bytes;
+using CloudStruct.Formats.Las;
+using CloudStruct.Formats.Laz;
 using CloudStruct.Products.Clouds;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Frame;
@@ -100,6 +104,27 @@ public class ClassifiedCloudWriterTests
             float x = points[i][0];
             if (Math.Abs(x - Math.Round(x)) > 1e-6) Assert.Equal(truth[(int)x], faces[i]);
         }
+    }
+
+    [Fact]
+    public void The_compressed_cloud_holds_the_same_points_and_columns()
+    {
+        byte[] las = WriteAll();
+        using var stream = new MemoryStream();
+        ClassifiedCloudWriter.WriteAll(stream, Samples.Dike(), SamplePieces.AboutTheDike(), Samples.Facts(), StageContext.Plain(), compressed: true);
+        using var scratch = new Scratch();
+        string path = scratch["classified.laz"];
+        File.WriteAllBytes(path, stream.ToArray());
+        using var file = new FileBytes(path);
+        LasHeader header = LasHeaderReader.Read(file);
+        Assert.Equal((4, 7, Record, 7L), (header.Minor, header.PointFormat, header.RecordBytes, header.Declared));
+        byte[] records = [.. new LazPoints(file, header.Laz!, header.PointsAt, header.Declared).Read(CancellationToken.None).SelectMany(run => run.Records[..(run.Count * Record)])];
+        Assert.Equal(las[(int)BinaryPrimitives.ReadUInt32LittleEndian(las.AsSpan(96))..], records);
+        CloudHeader told = CloudFiles.Open(path).Header;
+        Assert.Equal(7, told.Points);
+        Assert.Empty(told.Problems);
+        foreach (string name in new[] { "face_id", "roughness_m", "dike_probability", "source_class" })
+            Assert.Contains(told.Facts, f => f.Value.Contains(name, StringComparison.Ordinal));
     }
 
     [Fact]
