@@ -21,9 +21,9 @@ internal sealed class ColourEdges
     private const double StepM = 0.01, LargestM = 0.12;
     private const double Alike = 10;          // points that carry the news of one: blur, mottling, one picture for many
 
-    // A wall along the contact is all of one rock and at distance 0 give or take its noise. At full weight it draws the step to its
-    // far side; left out, nothing speaks in the gap between its foot and the rounded edge above, and both margins come out 0.6 cm
-    // too far. At a tenth the foot decides on one side and the wall on the other.
+    // A wall along the contact is all of one rock and at distance 0 give or take its noise: it says little of where colour changes.
+    // On stepped ground both margins come out about 0.5 cm too far at this weight, at full weight and without such points alike; why
+    // is not known (docs/methods-contacts.md).
     private const double LeastWeight = 0.1;
     private const double BlurM = 0.012;
     private const double LeastContrast = 1;   // difference of the flanks in standard deviations below which labels stand
