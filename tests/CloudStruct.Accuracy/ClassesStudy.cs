@@ -70,6 +70,7 @@ public sealed class ClassesStudy : IStudy
         ClassScore score = ClassScore.Of(outcrop, nearest, classes);
         Console.WriteLine(Invariant(
             $"{plan.Name} {seed}: {described.Cloud.Count} points at {described.Cloud.SpacingM * 100:0.0} cm; dikes {score.Found} of {score.True}; IoU {score.DikeIou:0.000} (recall {score.DikeRecall:0.000}, precision {score.DikePrecision:0.000}); cover recall {score.CoverRecall:0.000}, precision {score.CoverPrecision:0.000}; kappa {score.Kappa:0.000}; {seconds:0.0} s of processor"));
+        Console.WriteLine(Invariant($"    truly host, dike, cover, loose of what is called dike: {score.CalledDike[0]}, {score.CalledDike[1]}, {score.CalledDike[2]}, {score.CalledDike[3]}"));
         foreach (DikeBody dike in classes.Dikes)
         {
             Console.WriteLine(Invariant(

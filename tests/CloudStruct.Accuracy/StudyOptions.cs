@@ -11,6 +11,9 @@ public sealed record StudyOptions
     /// <summary>Seeds, each a fresh outcrop.</summary>
     public ulong[] Seeds { get; init; } = [101, 102, 103];
 
+    /// <summary>Whether the command line named seeds.</summary>
+    public bool SeedsGiven { get; init; }
+
     /// <summary>About how many points to make; null: as the plan says.</summary>
     public int? Points { get; init; }
 
@@ -30,7 +33,7 @@ public sealed record StudyOptions
             o = args[i] switch
             {
                 "--plan" => o with { Plans = value.Split(',') },
-                "--seeds" => o with { Seeds = SeedsOf(value) },
+                "--seeds" => o with { Seeds = SeedsOf(value), SeedsGiven = true },
                 "--workers" => o with { Workers = int.Parse(value, CultureInfo.InvariantCulture) },
                 "--out" => o with { Out = value },
                 "--points" => o with { Points = int.Parse(value, CultureInfo.InvariantCulture) },

@@ -6,7 +6,7 @@ namespace CloudStruct.Stages.Classify;
 /// <summary>Tells plants and soil from rock: kinds of surface by a mixture, each kind judged against the rest of the scene.</summary>
 /// <remarks>No limit is absolute: rock may be green-grey or brown. Plants are greener than the scene's rock or scatter like
 /// leaves. Soil lies where it stays lying: hardly any of it is steep, though the scene has steep rock; and it differs
-/// from rock in hue or is rougher at the size of a hand.</remarks>
+/// from rock in hue or is rougher at the size of a hand. Only what has a hue foreign to the rock, turf for one, may hang on walls.</remarks>
 internal sealed class CoverFinder
 {
     private const int MostItems = 4000;
@@ -18,6 +18,7 @@ internal sealed class CoverFinder
     private readonly Patches patches;
     private readonly Features features;
     private readonly StageContext context;
+    private bool[] hangs = [];
 
     public CoverFinder(Patches patches, Features features, StageContext context)
     {
@@ -48,10 +49,11 @@ internal sealed class CoverFinder
         GaussianMixture? kinds = GaussianMixture.Choose(
             System.Runtime.InteropServices.CollectionsMarshal.AsSpan(items), d, 7, CovarianceModel.Own, effective, context.Seed, starts: 1, rounds: 30);
         if (kinds == null) return null;
-        bool[] cover = Judge(kinds, items, index, d);
+        (bool[] cover, bool[] hanging) = Judge(kinds, items, index, d);
         if (!cover.Contains(true) || !cover.Contains(false)) return null;
         double limit = Math.Cos(SteepDeg * Math.PI / 180);
         var odds = new float[patches.Count];
+        hangs = new bool[patches.Count];
         Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
         {
             Span<double> own = stackalloc double[d], logs = stackalloc double[kinds.Components];
@@ -59,16 +61,18 @@ internal sealed class CoverFinder
             {
                 if (!Item(i, own)) continue;
                 kinds.LogDensities(own, logs);
-                double yes = double.NegativeInfinity, no = double.NegativeInfinity;
+                double yes = double.NegativeInfinity, no = double.NegativeInfinity, hang = double.NegativeInfinity;
                 for (int c = 0; c < logs.Length; c++)
                 {
+                    if (hanging[c]) hang = LogSum(hang, logs[c]);
                     if (cover[c]) yes = LogSum(yes, logs[c]);
                     else no = LogSum(no, logs[c]);
                 }
 
                 double o = Math.Clamp(yes - no, -3, 3);
+                hangs[i] = hang > LogSum(yes, no) - Math.Log(2);
                 // Soil does not stay on a wall.
-                if (features.Level06[i] < limit) o = Math.Min(o, 0) - 0.5;
+                if (features.Level06[i] < limit && !hangs[i]) o = Math.Min(o, 0) - 0.5;
                 odds[i] = (float)o;
             }
         });
@@ -100,7 +104,7 @@ internal sealed class CoverFinder
         for (int i = 0; i < odds.Length; i++)
         {
             float o = Sound(i, columns.Length) ? looks.LogOdds(features, i, 3) : 0;
-            odds[i] = features.Level06[i] < limit ? Math.Min(o, 0) - 0.5f : o;
+            odds[i] = features.Level06[i] < limit && !hangs[i] ? Math.Min(o, 0) - 0.5f : o;
         }
 
         return odds;
@@ -137,7 +141,7 @@ internal sealed class CoverFinder
         return sound;
     }
 
-    private bool[] Judge(GaussianMixture kinds, List<double> items, List<int> index, int d)
+    private (bool[] Cover, bool[] Hanging) Judge(GaussianMixture kinds, List<double> items, List<int> index, int d)
     {
         int k = kinds.Components, c = features.ColourColumns;
         double limit = Math.Cos(SteepDeg * Math.PI / 180);
@@ -163,7 +167,7 @@ internal sealed class CoverFinder
         // What the steep parts look like is rock: nothing else stays on them.
         double[] rock = RockMiddle(kinds, steep);
         double[] ratio = [.. Enumerable.Range(0, k).Select(j => weight[j] > 0 ? steep[j] / weight[j] / Math.Max(sceneSteep, 1e-6) : 1)];
-        var cover = new bool[k];
+        bool[] cover = new bool[k], hanging = new bool[k];
         for (int j = 0; j < k; j++)
         {
             double steepRatio = ratio[j];
@@ -184,10 +188,11 @@ internal sealed class CoverFinder
             bool asOnWalls = c > 0 && Enumerable.Range(0, k).Any(o => ratio[o] >= 0.5 && SameHue(kinds, j, o, d));
             // A hue far from all that the walls show need not lie quite as flat: turf hangs over edges.
             bool foreign = hue && mean[2] - rock[2] < -30 && !asOnWalls && sceneSteep > 0.08 && steepRatio < 0.6;
+            hanging[j] = green || foreign;
             cover[j] = green || foreign || (flatLying && (hue || (rougher > 0.7 && !asOnWalls))) || rougher > 1.6;
         }
 
-        return cover;
+        return (cover, hanging);
     }
 
     private static bool SameHue(GaussianMixture kinds, int a, int b, int d)

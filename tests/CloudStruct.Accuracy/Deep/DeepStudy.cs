@@ -5,7 +5,7 @@ using static System.FormattableString;
 namespace CloudStruct.Accuracy.Deep;
 
 /// <summary>Every figure of the accuracy page on families of fresh outcrops, with its interval and its floor.</summary>
-/// <remarks>deep --plan demo,long --seeds 5000-5019 --out docs/accuracy-tables.md. Without --plan: all families.</remarks>
+/// <remarks>deep --out docs/accuracy-tables.md makes the tables of the accuracy page anew. --plan, --seeds and --points choose less or other.</remarks>
 public sealed class DeepStudy : IStudy
 {
     /// <inheritdoc/>
@@ -14,8 +14,14 @@ public sealed class DeepStudy : IStudy
         string[] plans = options.Plans.Length > 0 ? options.Plans : [.. Family.All.Select(f => f.Plan)];
         foreach (string plan in plans)
         {
-            FamilyScore score = Score(plan, options);
-            string table = AccuracyTable.Of(score, options);
+            Family family = Family.Of(plan);
+            StudyOptions own = options with
+            {
+                Seeds = options.SeedsGiven ? options.Seeds : [.. Enumerable.Range(0, family.Outcrops).Select(i => Family.FirstSeed + (ulong)i)],
+                Points = options.Points ?? family.Points,
+            };
+            FamilyScore score = Score(plan, own);
+            string table = AccuracyTable.Of(score, own);
             Console.WriteLine(table);
             if (options.Out is { } file) File.AppendAllText(file, table + "\n");
         }

@@ -30,6 +30,9 @@ public sealed record ClassScore
     /// <summary>Share of what is called dike that is.</summary>
     public double DikePrecision => Agreement.Precision(Counts, Order.Length, 1);
 
+    /// <summary>Points called dike by their true class: host, dike, cover, loose.</summary>
+    public long[] CalledDike => [.. Enumerable.Range(0, 4).Select(row => Counts[(row * Order.Length) + 1])];
+
     /// <summary>Share of the cover found.</summary>
     public double CoverRecall => Agreement.Recall(Counts, Order.Length, 2);
 

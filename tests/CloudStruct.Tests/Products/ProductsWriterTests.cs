@@ -17,8 +17,8 @@ public class ProductsWriterTests
         Assert.Equal(
             ["clouds/classified.las", "plots/net-contacts.pdf", "plots/net-contacts.png", "plots/net-contacts.svg", "plots/net-host.pdf", "plots/net-host.png",
              "plots/net-host.svg", "plots/view-colour-plan.png", "plots/width-dike-1.pdf", "plots/width-dike-1.png", "plots/width-dike-1.svg", "report.html",
-             "tables/checkpoints.csv", "tables/classes.csv", "tables/contacts.csv", "tables/dikes.csv", "tables/faces.csv", "tables/sets.csv",
-             "tables/tables-metadata.json", "tables/width.csv"],
+             "tables/checkpoints.csv", "tables/classes.csv", "tables/common_means.csv", "tables/contacts.csv", "tables/dikes.csv", "tables/faces.csv", "tables/sets.csv",
+             "tables/tables-metadata.json", "tables/width.csv", "tables/width_trends.csv"],
             files.Order(StringComparer.Ordinal));
     }
 
@@ -38,7 +38,7 @@ public class ProductsWriterTests
         using var scratch = new Scratch();
         IReadOnlyList<string> files = Write(scratch.Folder, Samples.Nothing(), new DrawingsRecord());
         Assert.Contains("report.html", files);
-        foreach (string table in new[] { "faces", "contacts", "width", "dikes", "sets", "classes" })
+        foreach (string table in new[] { "faces", "contacts", "width", "width_trends", "dikes", "sets", "common_means", "classes" })
             Assert.Single(File.ReadAllLines(scratch[$"tables/{table}.csv"]));
         Assert.False(File.Exists(scratch["tables/checkpoints.csv"]));
     }
@@ -70,7 +70,7 @@ public class ProductsWriterTests
         using JsonDocument json = JsonDocument.Parse(File.ReadAllBytes(scratch["tables/tables-metadata.json"]));
         Assert.Equal("http://www.w3.org/ns/csvw", json.RootElement.GetProperty("@context")[0].GetString());
         JsonElement[] tables = [.. json.RootElement.GetProperty("tables").EnumerateArray()];
-        Assert.Equal(7, tables.Length);
+        Assert.Equal(9, tables.Length);
         foreach (JsonElement table in tables)
         {
             string header = File.ReadLines(scratch["tables/" + table.GetProperty("url").GetString()]).First();
