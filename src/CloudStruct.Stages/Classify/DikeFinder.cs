@@ -207,7 +207,7 @@ internal sealed partial class DikeFinder
 
     /// <summary>The decision by the drawn outline: margins that run true and change of rock within a spacing or two.</summary>
     /// <remarks>Measured on simulated outcrops (spacing 4 to 5 cm): true dikes show 0.42 to 0.99 of their step of colour
-    /// within two spacings of margins that scatter by 2 to 7 cm, stains and gullies 0.07 to 0.37 at 6 to 18 cm, once 0.56
+    /// within 9 cm of margins that scatter by 2 to 7 cm, stains and gullies 0.07 to 0.37 at 6 to 18 cm, once 0.56
     /// at 12 cm. Contrast, length and straightness of a sheet do not part the two: stains reach a separation of 0.98.</remarks>
     internal static bool IsDike(DikeJudgement j, Drawn drawn)
     {
