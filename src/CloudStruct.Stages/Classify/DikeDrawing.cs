@@ -40,7 +40,7 @@ internal sealed class DikeDrawing
         float[] pointOdds = PointCut.Run(described, patches, features, dike, margins, looks, inside, free, settings.SmoothingPerM, say, context);
         MarginFit fine = MarginFit.Of(dike.Sheet, Edges(say), 0.3 * described.Cloud.SpacingM);
         double sharpness = described.LStar.Length == n ? MarginProfile.Sharpness(described, patches, features, fine, say, free) : double.NaN;
-        return new Drawn(dike, inside, say, odds, pointOdds, fine.ScatterM, sharpness);
+        return new Drawn(dike, inside, say, odds, pointOdds, fine.ScatterM, sharpness, MarginProfile.Widening(described.Cloud.SpacingM));
     }
 
     /// <summary>Keeps a drawn dike: its rock is no other's.</summary>

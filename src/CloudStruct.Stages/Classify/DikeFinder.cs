@@ -214,7 +214,8 @@ internal sealed partial class DikeFinder
         // The rim of a stain fades over a share of its width: the narrower, the sharper it looks.
         double need = Math.Clamp(0.5 - (0.1 * (j.WidthM - 1)), 0.4, 0.5);
         if (!(drawn.Sharpness >= need) || !(drawn.ScatterM <= Math.Max(0.06, 0.03 * j.WidthM))) return false;
-        // Less contrast is enough where the margins show along most of a long sheet.
-        return j.ColourAuc >= 0.88 || (j.LengthM > 3 * j.WidthM && j.BothMargins >= 0.7);
+        // Less contrast is enough where the margins show along most of a long sheet; on a coarse cloud, whose wider strip beside the
+        // margins holds more of a soft edge, they must then be sharper by as much.
+        return j.ColourAuc >= 0.88 || (j.LengthM > 3 * j.WidthM && j.BothMargins >= 0.7 && drawn.Sharpness >= need * Math.Min(1.6, drawn.Widening));
     }
 }

@@ -13,6 +13,10 @@ internal static class MarginProfile
     // true contact looks soft on fine clouds (a clear dike was lost at 3 cm spacing that was found at 4.5 cm, with 5 cm here).
     private const double NearM = 0.09;
 
+    /// <summary>How many times wider than usual the strip beside the margins is on a coarse cloud: a soft edge shows that much more of its
+    /// step in it, a contact hardly more.</summary>
+    public static double Widening(double spacingM) => Math.Max(NearM, 2 * spacingM) / NearM;
+
     /// <summary>Share of the step that lies near the fitted margins, over both margins.</summary>
     /// <param name="described">The cloud.</param>
     /// <param name="patches">Patches.</param>
