@@ -55,11 +55,7 @@ public sealed class WidthStudy : IStudy
             $"width % med {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.5):0.00} p95 {100 * Quantile(s.WidthErrors.Select(Math.Abs), 0.95):0.00} bias {100 * s.WidthErrors.DefaultIfEmpty(double.NaN).Average():0.00} in95 {Inside(s.WidthRatios):0.000}; contact deg med {Quantile(s.ContactErrorsDeg, 0.5):0.00} p95 {Quantile(s.ContactErrorsDeg, 0.95):0.00} in95 {Inside(s.ContactRatios):0.000} (mean normal med {Quantile(s.NormalErrorsDeg, 0.5):0.00} p95 {Quantile(s.NormalErrorsDeg, 0.95):0.00} in95 {Inside(s.NormalRatios):0.000}; mean plane in95 {Inside(s.PlaneRatios):0.000}); plane {s.Rows.Plane}/{s.Rows.All}; length {s.MeasuredM / s.ShownM:0.00}; hidden {s.HiddenMeasured}; trace cm bias {100 * s.TraceOffsetsM.DefaultIfEmpty(double.NaN).Average():0.00} med {100 * Quantile(s.TraceOffsetsM.Select(Math.Abs), 0.5):0.00} p95 {100 * Quantile(s.TraceOffsetsM.Select(Math.Abs), 0.95):0.00}; apparent % med {100 * Quantile(s.ApparentErrors.Select(Math.Abs), 0.5):0.00}; {stations}");
     }
 
-    internal static double Quantile(IEnumerable<double> values, double share)
-    {
-        double[] sorted = [.. values.Order()];
-        return sorted.Length == 0 ? double.NaN : sorted[(int)Math.Min(sorted.Length - 1, Math.Floor(share * sorted.Length))];
-    }
+    internal static double Quantile(IEnumerable<double> values, double share) => Quantiles.Of(values, share);
 
     internal static double Inside(List<double> ratios) => ratios.Count == 0 ? double.NaN : (double)ratios.Count(r => Math.Abs(r) <= 1) / ratios.Count;
 

@@ -13,7 +13,7 @@ public static partial class Sheets
         Meaning = "One row for each exposed planar piece of rock surface, largest first.",
         From = FaceRow.Of,
     }
-    .Count("face_id", "Number of the face, from its place and attitude: it stays when settings change and the face does not. The same number stands in classified.las.", r => r.Face.FaceId)
+    .Count("face_id", "Number of the face, from its place and attitude: it stays when settings change and the face does not. The same number stands in the classified cloud.", r => r.Face.FaceId)
     .Word("domain", "The side of the rock the face is on; margin is an exposed contact surface. Empty where that was not decided.", r => r.Domain, FaceDomain.Unknown)
     .Text("set", "Name of the orientation set (see sets.csv); empty when the face belongs to none.", r => r.Set)
     .Metres("x_m", "Middle of the covered surface, map x (east).", r => r.Map.X)

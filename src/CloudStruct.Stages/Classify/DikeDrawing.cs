@@ -37,10 +37,10 @@ internal sealed class DikeDrawing
         (bool[] inside, float[] odds, Looks[] looks, MarginFit margins) = new DikeCut(patches, features, settings, context).Run(dike, free, labels);
         var say = new bool[n];
         for (int i = 0; i < n; i++) say[i] = inside[patches.OfPoint[i]];
-        float[] pointOdds = PointCut.Run(described, patches, features, dike, margins, looks, inside, free, settings.SmoothingPerM, say, context);
+        PointCut.Run(described, patches, features, dike, margins, looks, inside, free, settings.SmoothingPerM, say, context);
         MarginFit fine = MarginFit.Of(dike.Sheet, Edges(say), 0.3 * described.Cloud.SpacingM);
         double sharpness = described.LStar.Length == n ? MarginProfile.Sharpness(described, patches, features, fine, say, free) : double.NaN;
-        return new Drawn(dike, inside, say, odds, pointOdds, fine.ScatterM, sharpness, MarginProfile.Widening(described.Cloud.SpacingM));
+        return new Drawn(dike, inside, say, odds, fine.ScatterM, sharpness, MarginProfile.Widening(described.Cloud.SpacingM));
     }
 
     /// <summary>Keeps a drawn dike: its rock is no other's.</summary>

@@ -24,8 +24,7 @@ internal static class PointCut
     /// <param name="perM">Price of a metre of boundary.</param>
     /// <param name="say">[in, out] Whether each point is dike; given as its patch has it.</param>
     /// <param name="context">Context.</param>
-    /// <returns>Log odds of the points of the band, NaN elsewhere.</returns>
-    public static float[] Run(
+    public static void Run(
         DescribedCloud described, Patches patches, Features features, FoundDike dike, MarginFit margins, Looks[] looks, bool[] inside, bool[] free, double perM, bool[] say, StageContext context)
     {
         WorkingCloud cloud = described.Cloud;
@@ -33,9 +32,7 @@ internal static class PointCut
         var node = new int[cloud.Count];
         int n = 0;
         for (int i = 0; i < node.Length; i++) node[i] = band[patches.OfPoint[i]] ? n++ : -1;
-        var result = new float[cloud.Count];
-        Array.Fill(result, float.NaN);
-        if (n == 0) return result;
+        if (n == 0) return;
         Looks[] sharper = Sharper(described, patches, features, margins, looks, inside, free);
         var odds = new float[n];
         Maths.Blocks.BlockParallel.For(cloud.Count, context.Threads, context.Stop, (from, to) =>
@@ -84,12 +81,8 @@ internal static class PointCut
         flow.Solve();
         for (int i = 0; i < cloud.Count; i++)
         {
-            if (node[i] < 0) continue;
-            say[i] = flow.WithSource(node[i]);
-            result[i] = odds[node[i]];
+            if (node[i] >= 0) say[i] = flow.WithSource(node[i]);
         }
-
-        return result;
     }
 
     /// <summary>The looks with colour learnt anew from the points themselves, well inside and well outside the margins.</summary>

@@ -131,12 +131,7 @@ public sealed partial class FaceScore
 
     private static double Angle(Vec3 a, Vec3 b) => Math.Atan2(a.Cross(b).Length, Math.Abs(a.Dot(b))) * 180 / Math.PI;
 
-    private static double Quantile(List<double> values, double q)
-    {
-        if (values.Count == 0) return double.NaN;
-        double[] sorted = [.. values.Order()];
-        return sorted[(int)Math.Min(sorted.Length - 1, q * sorted.Length)];
-    }
+    private static double Quantile(List<double> values, double q) => Quantiles.Of(values, q);
 
     private void Judge(Face f, SimulatedOutcrop outcrop, (int True, int Votes, int Second) m, int[] covered, Face?[] largest, int[] count)
     {
