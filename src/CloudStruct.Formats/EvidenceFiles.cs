@@ -3,6 +3,7 @@ using CloudStruct.Formats.GeoPackage;
 using CloudStruct.Formats.Tables;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -55,6 +56,10 @@ public static class EvidenceFiles
     /// <summary>The zones of a zones/*.geojson: polygons, named by their property name or zone, else by the file.</summary>
     /// <exception cref="InputException">The file is not understood, or a feature is no polygon.</exception>
     public static Zone[] ReadZones(string path) => GeoJsonZones.Read(path);
+
+    /// <summary>What a geologist decided by hand: decisions.csv.</summary>
+    /// <exception cref="InputException">The table is not understood.</exception>
+    public static Decision[] ReadDecisions(string path) => DecisionTable.Read(path);
 
     private static LabelPoint[] LabelledPoints(string path)
     {

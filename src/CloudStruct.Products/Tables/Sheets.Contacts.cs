@@ -42,5 +42,6 @@ public static partial class Sheets
     .Angle("line_plunge_deg", "Plunge of the trace.", r => r.C.LinePlungeDeg)
     .Word("evidence", "What the attitude rests on: the contact surface itself, the trace of one margin over relief, both margins with one normal, or also a prior from field readings.", r => r.C.Evidence)
     .Text("margin_facing", "Compass point that this side of the dike faces: N, NE, ...", r => r.C.MarginFacing)
-    .Metres("window_m", "Length of the window along strike in which the evidence was gathered.", r => r.C.WindowM);
+    .Metres("window_m", "Length of the window along strike in which the evidence was gathered.", r => r.C.WindowM)
+    .Text("decided", "What a geologist decided by hand: confirmed, note; empty when nothing.", r => r.C.Decided);
 }

@@ -39,5 +39,5 @@ public static partial class Sheets
     .Metres("waviness_m", "Long-range part of the scatter: the shape of the rock, not an error.", r => r.Face.WavinessM)
     .Word("in_place", "Whether the rock is part of the outcrop (yes) or of a loose block (no).", r => r.InPlace)
     .Count("ends_hidden", "How many of the two ends along strike run out of sight: 0, 1 or 2.", r => r.Face.EndsHidden)
-    .Text("decided", "What a geologist decided by hand about this face; empty when nothing.", _ => "");
+    .Text("decided", "What a geologist decided by hand about this face; empty when nothing; domain, set, note, several with a space between.", r => r.Decided);
 }

@@ -38,5 +38,6 @@ public static partial class Sheets
     .Angle("cone95_total_deg", "The cone with the common errors of the whole model added.", s => s.Cone95TotalDeg)
     .Number("stability", "Share of redrawn outcrops (places drawn with replacement) in which the set came back; empty in zones.", s => s.Stability)
     .Word("spacing_class", "ISRM 1978 word for the mean spacing; a value on a boundary belongs to the upper class.", ["extremely_close", "very_close", "close", "moderate", "wide", "very_wide", "extremely_wide"], s => s.SpacingClass)
-    .Word("persistence_class", "ISRM 1978 word for the persistence; a value on a boundary belongs to the upper class.", ["very_low", "low", "medium", "high", "very_high"], s => s.PersistenceClass);
+    .Word("persistence_class", "ISRM 1978 word for the persistence; a value on a boundary belongs to the upper class.", ["very_low", "low", "medium", "high", "very_high"], s => s.PersistenceClass)
+    .Text("decided", "What a geologist decided by hand: joined, split, note; empty when nothing.", s => s.Decided);
 }

@@ -4,5 +4,5 @@ namespace CloudStruct.Products.Tables;
 public static partial class Sheets
 {
     /// <summary>In the order of docs/tables.md and tables-metadata.json.</summary>
-    public static IReadOnlyList<ITableSheet> All { get; } = [Faces(), Contacts(), Width(), Dikes(), Sets(), CommonMeans(), Classes(), Checkpoints(), WidthTrends()];
+    public static IReadOnlyList<ITableSheet> All { get; } = [Faces(), Contacts(), Width(), Dikes(), Sets(), CommonMeans(), Classes(), Checkpoints(), WidthTrends(), Decisions()];
 }

@@ -71,4 +71,7 @@ public sealed record Contact
 
     /// <summary>Length of the window along strike [m].</summary>
     public double WindowM { get; init; }
+
+    /// <summary>"confirmed" and "note" where a geologist said so; empty otherwise.</summary>
+    public string Decided { get; init; } = "";
 }

@@ -1,5 +1,6 @@
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Sets;
@@ -34,6 +35,9 @@ public sealed record Findings
 
     /// <summary>Of the stage sets.</summary>
     public SetsRecord Sets { get; init; } = new();
+
+    /// <summary>What a geologist decided by hand.</summary>
+    public DecisionsRecord Decisions { get; init; } = new();
 
     /// <summary>All remarks so far, in order of stages.</summary>
     public Remark[] Remarks { get; init; } = [];

@@ -79,4 +79,7 @@ public sealed record OrientationSet
 
     /// <summary>ISRM 1978 word for the persistence; empty when it is not known.</summary>
     public string PersistenceClass { get; init; } = "";
+
+    /// <summary>"joined" or "split" where a geologist made it so, "note" where one was written; empty otherwise.</summary>
+    public string Decided { get; init; } = "";
 }

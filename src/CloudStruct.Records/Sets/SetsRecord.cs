@@ -1,3 +1,5 @@
+using CloudStruct.Records.Decisions;
+
 namespace CloudStruct.Records.Sets;
 
 /// <summary>What the stage sets gives.</summary>
@@ -11,4 +13,7 @@ public sealed record SetsRecord
 
     /// <summary>Which means may be one.</summary>
     public CommonMean[] CommonMeans { get; init; } = [];
+
+    /// <summary>What became of decisions about sets, in their order.</summary>
+    public DecisionOutcome[] Decided { get; init; } = [];
 }

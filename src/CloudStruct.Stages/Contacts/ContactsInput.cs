@@ -1,4 +1,5 @@
 using CloudStruct.Records.Classes;
+using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
@@ -15,4 +16,7 @@ public sealed record ContactsInput(DescribedCloud Described, ClassifiedCloud Cla
 {
     /// <summary>Compass readings, places local [m]; those for use as prior add what the traces do not show.</summary>
     public FieldReading[] Readings { get; init; } = [];
+
+    /// <summary>Domain decided by hand per face, null where nothing was; empty when nothing was at all.</summary>
+    public FaceDomain?[] Domains { get; init; } = [];
 }

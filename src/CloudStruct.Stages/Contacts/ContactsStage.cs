@@ -20,7 +20,7 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
     public ContactsRecord Run(ContactsInput input, ContactSettings settings, StageContext context)
     {
         WorkingCloud cloud = input.Described.Cloud;
-        var sides = new FaceSides(cloud, input.Classes, input.Faces);
+        var sides = new FaceSides(cloud, input.Classes, input.Faces, input.Domains);
         var dikes = new List<DikeFrame>();
         var rows = new List<Contact>();
         var traces = new List<MarginTrace>();

@@ -14,10 +14,16 @@ internal sealed class FaceSides
     private readonly WorkingCloud cloud;
     private readonly FaceSet faces;
     private readonly int[] starts, members;
+    private readonly FaceDomain?[] decided;
 
     /// <summary>Sorts points by face.</summary>
-    public FaceSides(WorkingCloud cloud, ClassifiedCloud classes, FaceSet faces)
+    /// <param name="cloud">The cloud.</param>
+    /// <param name="classes">Class of every point.</param>
+    /// <param name="faces">The faces.</param>
+    /// <param name="decided">Domain decided by hand per face, null where nothing was; empty when nothing was at all.</param>
+    public FaceSides(WorkingCloud cloud, ClassifiedCloud classes, FaceSet faces, FaceDomain?[] decided)
     {
+        this.decided = decided;
         this.cloud = cloud;
         this.faces = faces;
         int n = faces.Faces.Length;
@@ -29,7 +35,11 @@ internal sealed class FaceSides
         for (int i = 0; i < members.Length; i++) members[next[faces.FaceOfPoint[i]]++] = i;
         Domain = new FaceDomain[n];
         InPlace = new InPlace[n];
-        for (int f = 0; f < n; f++) Vote(f, classes);
+        for (int f = 0; f < n; f++)
+        {
+            Vote(f, classes);
+            Domain[f] = Decided(f) ?? Domain[f];
+        }
     }
 
     /// <summary>Domain of every face.</summary>
@@ -37,6 +47,8 @@ internal sealed class FaceSides
 
     /// <summary>Whether the rock of every face is in place.</summary>
     public InPlace[] InPlace { get; }
+
+    private FaceDomain? Decided(int face) => face < decided.Length ? decided[face] : null;
 
     private ReadOnlySpan<int> Members(int face) => members.AsSpan(starts[face + 1]..starts[face + 2]);
 
@@ -75,13 +87,14 @@ internal sealed class FaceSides
         double least = Math.Cos(angleDeg * Math.PI / 180);
         for (int f = 0; f < faces.Faces.Length; f++)
         {
-            if (InPlace[f] != Records.Faces.InPlace.Yes) continue;
+            FaceDomain? byHand = Decided(f);   // a face that a geologist put on the margin need not pass; one put elsewhere may not
+            if (byHand is not (null or FaceDomain.Margin) || (byHand is null && InPlace[f] != Records.Faces.InPlace.Yes)) continue;
             Face face = faces.Faces[f];
             SheetPoint at = tracker.Sheet.Of(face.Middle);
-            if (Math.Abs(face.Normal.Dot(normalAt(at.S))) < least) continue;
+            if (byHand is null && Math.Abs(face.Normal.Dot(normalAt(at.S))) < least) continue;
             double away = Math.Min(Math.Abs(tracker.Guess.Distance(Margin.A, at)), Math.Abs(tracker.Guess.Distance(Margin.B, at)));
             if (away > 0.5) continue;
-            if (!TouchesTrace(f, at, cells, toleranceM)) continue;
+            if (byHand is null && !TouchesTrace(f, at, cells, toleranceM)) continue;
             Domain[f] = FaceDomain.Margin;
             surface.AddRange(CellsOf(f, tracker, toleranceM));
         }

@@ -1,6 +1,7 @@
 using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Sets;
@@ -13,7 +14,8 @@ namespace CloudStruct.Stages.Sets;
 /// <param name="Sets">Of the whole survey.</param>
 /// <param name="Zoned">The same sets where a zone has enough planes of them.</param>
 /// <param name="Means">Their means for the tests of common means.</param>
-internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned, MeanToCompare[] Means)
+/// <param name="Decided">What became of decisions about them.</param>
+internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned, MeanToCompare[] Means, IReadOnlyList<DecisionOutcome> Decided)
 {
     // In a zone a set may lie off its mean in the whole survey; farther than this it is another one.
     private const double FarthestInZoneDeg = 20;
@@ -35,7 +37,9 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
         var rules = new ClusterRules(settings.MostSets, settings.FewestPlanes, settings.ValleyDepth, settings.WidestDeg);
         AxisClusters clusters = AxisClusters.Find(planes.Poles, planes.Weights, rules, context.Seed, context.Stop);
         SetRemarks.Say(context, word, clusters, joined.Length, members.Length, settings, domain);
-        if (clusters.Count == 0) return new DomainSets([], [], []);
+        var decisions = new SetDecisions(planes, clusters, context.Stop);
+        clusters = decisions.Apply(input.Decisions, input.Frame);
+        if (clusters.Count == 0) return new DomainSets([], [], [], decisions.Outcomes);
 
         // Numbered in order of exposed area.
         int[] byArea = [.. Enumerable.Range(0, clusters.Count)
@@ -58,7 +62,7 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
             context.Seed,
             context.Threads,
             context.Stop);
-        OrientationSet[] sets = [.. found.Select((f, s) => f!.Value.Set with { Stability = stability[s] })];
+        OrientationSet[] sets = [.. found.Select((f, s) => f!.Value.Set with { Stability = stability[s], Decided = decisions.Decided[byArea[s]] })];
         List<MeanToCompare> means = [.. found.Select(f => ToCompare(f!.Value, word, ""))];
         List<OrientationSet> zoned = [];
         foreach (Zone zone in input.Zones)
@@ -72,7 +76,7 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
             }
         }
 
-        return new DomainSets(sets, [.. zoned], [.. means]);
+        return new DomainSets(sets, [.. zoned], [.. means], decisions.Outcomes);
     }
 
     private static MeanToCompare ToCompare((OrientationSet Set, SetMean Mean) f, string kind, string zone)

@@ -1,4 +1,5 @@
 using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -15,4 +16,7 @@ public sealed record SetsInput(SurveyFrame Frame, FaceSet Faces, ContactsRecord 
 {
     /// <summary>Zones that the user drew; survey coordinates.</summary>
     public IReadOnlyList<Zone> Zones { get; init; } = [];
+
+    /// <summary>Sets that a geologist joined or split; other decisions are passed over.</summary>
+    public IReadOnlyList<Decision> Decisions { get; init; } = [];
 }

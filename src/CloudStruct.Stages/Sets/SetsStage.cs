@@ -1,4 +1,5 @@
 using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Sets;
 using CloudStruct.Records.Stages;
@@ -23,6 +24,12 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         string[] setOfFace = new string[faces.Length];
         Array.Fill(setOfFace, "");
         List<OrientationSet> sets = [], zoned = [];
+        var decided = new Dictionary<int, DecisionOutcome>();
+        foreach (Decision d in input.Decisions.Where(d => d.Target == DecisionTarget.Set))
+        {
+            decided[d.Line] = new DecisionOutcome(d, false, 0, "no set of this domain was found");
+        }
+
         List<MeanToCompare> means = ContactMeans.Of(input.Contacts);
         FaceDomain[] order = [FaceDomain.Host, FaceDomain.Dike, FaceDomain.Margin];
         for (int d = 0; d < order.Length; d++)
@@ -35,6 +42,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
                 sets.AddRange(found.Sets);
                 zoned.AddRange(found.Zoned);
                 means.AddRange(found.Means);
+                foreach (DecisionOutcome o in found.Decided) decided[o.Decision.Line] = o;
             }
 
             context.Progress((d + 1.0) / order.Length);
@@ -52,6 +60,7 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
             Sets = [.. sets, .. zoned.OrderBy(s => Array.IndexOf(zones, s.Zone))],
             SetOfFace = setOfFace,
             CommonMeans = CommonMeans.Of(means, zones),
+            Decided = [.. decided.OrderBy(d => d.Key).Select(d => d.Value)],
         };
     }
 

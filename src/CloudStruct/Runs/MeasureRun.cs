@@ -6,6 +6,7 @@ using CloudStruct.Recipes;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Contacts;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Field;
@@ -18,6 +19,7 @@ using CloudStruct.Runs.Board;
 using CloudStruct.Runs.Store;
 using CloudStruct.Stages.Classify;
 using CloudStruct.Stages.Contacts;
+using CloudStruct.Stages.Decisions;
 using CloudStruct.Stages.Describe;
 using CloudStruct.Stages.Drawings;
 using CloudStruct.Stages.Faces;
@@ -87,7 +89,9 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
     private static (Findings Findings, DrawingsRecord Drawings, IPieces Pieces) Stages(
         SurveyFolder survey, Recipe recipe, SurveyEvidence evidence, InputFile[] inputs, StageRunner runner)
     {
-        string key = Fingerprint.OfText([.. inputs.Select(i => i.Name + i.Sha256), recipe.North.ToString(), .. evidence.LeftOut]);
+        // What was decided by hand comes in after the faces: the heavy stages before need not run again for it.
+        InputFile? decided = inputs.FirstOrDefault(i => i.Name == SurveyFolder.DecisionsName);
+        string key = Fingerprint.OfText([.. inputs.Where(i => i != decided).Select(i => i.Name + i.Sha256), recipe.North.ToString(), .. evidence.LeftOut]);
         long points = evidence.Input.Sources.Sum(s => s.Header.Points);
         IPieces pieces = runner.RunIntake(evidence.Input, recipe.Intake, ref key, points);
         WorkingCloud cloud = runner.Run(new ThinStage(), pieces, recipe.Thin, ref key, points);
@@ -97,15 +101,19 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
         HandLabels labels = evidence.Labels;
         ClassifiedCloud classes = runner.Run(new ClassifyStage(), new ClassifyInput(described, labels), recipe.Classify, ref classKey, cloud.Count);
         FaceSet faces = runner.Run(new FacesStage(), described, recipe.Faces, ref faceKey, cloud.Count);
-        string contactKey = Fingerprint.OfText(classKey, faceKey);
+        DecidedFaces byHand = DecidedFaces.Of(faces, evidence.Decisions, cloud.Frame);
+        faces = byHand.Faces;
+        string contactKey = decided is null ? Fingerprint.OfText(classKey, faceKey) : Fingerprint.OfText(classKey, faceKey, decided.Sha256);
         Vec3[] baseline = [.. evidence.Baseline.Select(p => p - described.Cloud.Frame.Origin)];
         FieldReading[] readings = [.. evidence.Readings.Select(r => r with { Place = r.Place - described.Cloud.Frame.Origin })];
-        ContactsRecord contacts = runner.Run(new ContactsStage(), new ContactsInput(described, classes, faces, baseline) { Readings = readings }, recipe.Contacts, ref contactKey, cloud.Count);
+        ContactsRecord contacts = runner.Run(new ContactsStage(), new ContactsInput(described, classes, faces, baseline) { Readings = readings, Domains = byHand.Domains }, recipe.Contacts, ref contactKey, cloud.Count);
         (faces, contacts) = CoverFaces.Drop(faces, contacts, classes, out int onCover);
         if (onCover > 0) runner.Say(new Remark("faces", FormattableString.Invariant($"{onCover} flat pieces lie on cover and were left out."), false));
+        contacts = DecidedContacts.Of(contacts, evidence.Decisions, cloud.Frame, out DecisionOutcome[] confirmed);
         string widthKey = contactKey, setKey = contactKey;
         WidthRecord width = runner.Run(new WidthStage(), new WidthInput(described, classes, contacts), recipe.Width, ref widthKey, cloud.Count);
-        SetsRecord sets = runner.Run(new SetsStage(), new SetsInput(cloud.Frame, faces, contacts, described) { Zones = evidence.Zones }, recipe.Sets, ref setKey);
+        SetsRecord sets = runner.Run(new SetsStage(), new SetsInput(cloud.Frame, faces, contacts, described) { Zones = evidence.Zones, Decisions = evidence.Decisions }, recipe.Sets, ref setKey);
+        DecisionsRecord decisions = DecisionLedger.Of(evidence.Decisions, byHand.Outcomes, confirmed, faces, sets, runner.Say);
         var findings = new Findings
         {
             SurveyName = survey.Name,
@@ -116,6 +124,7 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
             Contacts = contacts,
             Width = width,
             Sets = sets,
+            Decisions = decisions,
             Remarks = runner.Remarks,
         };
         string drawKey = Fingerprint.OfText(widthKey, setKey, survey.Name);

@@ -5,6 +5,7 @@ using System.Text.Json.Nodes;
 using CloudStruct.Products;
 using CloudStruct.Recipes;
 using CloudStruct.Records.Classes;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -69,6 +70,7 @@ internal static class RunRecord
             ["inputs"] = new JsonArray([.. inputs.Select(i => new JsonObject { ["name"] = i.Name, ["bytes"] = i.Bytes, ["sha256"] = i.Sha256 })]),
             ["tiles"] = new JsonArray([.. findings.Intake.Tiles.Select(Of)]),
             ["counts"] = Counts(findings),
+            ["decisions"] = Decided(findings.Decisions),
             ["scales"] = Scales(findings),
             ["classes"] = Judged(findings.Classes),
             ["recipe"] = RecipeJson.Of(recipe),
@@ -122,6 +124,15 @@ internal static class RunRecord
         ["stations"] = f.Width.Stations.Length,
         ["stations_measured"] = f.Width.Stations.Count(s => s.Status == StationStatus.Measured),
         ["sets"] = f.Sets.Sets.Length,
+    };
+
+    private static JsonObject? Decided(DecisionsRecord decisions) => decisions.Outcomes.Length == 0 ? null : new JsonObject
+    {
+        ["read"] = decisions.Outcomes.Length,
+        ["applied"] = decisions.Outcomes.Count(o => o.Applied),
+        ["not_applied"] = decisions.Outcomes.Count(o => !o.Applied),
+        ["by_action"] = new JsonObject([.. decisions.Outcomes.Where(o => o.Applied).GroupBy(o => o.Decision.Action).OrderBy(g => g.Key)
+            .Select(g => KeyValuePair.Create<string, JsonNode?>(Words.Snake(g.Key.ToString()), g.Count()))]),
     };
 
     private static JsonObject Scales(Findings f) => new()

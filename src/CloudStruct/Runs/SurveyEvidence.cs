@@ -5,6 +5,7 @@ using CloudStruct.Products;
 using CloudStruct.Recipes;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Complaints;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -30,6 +31,9 @@ internal sealed record SurveyEvidence
 
     /// <summary>Zones that the user drew, map coordinates, in order of files and features.</summary>
     public Zone[] Zones { get; init; } = [];
+
+    /// <summary>What a geologist decided by hand; empty without decisions.csv.</summary>
+    public Decision[] Decisions { get; init; } = [];
 
     /// <summary>Damaged files that the recipe allowed to leave out, with the reason.</summary>
     public required string[] LeftOut { get; init; }
@@ -87,6 +91,7 @@ internal sealed record SurveyEvidence
             Readings = survey.Readings is { } r ? EvidenceFiles.ReadReadings(r, new Declination(survey.Notes.Declination, crs, flown), survey.Notes.Notation) : [],
             Baseline = survey.Baseline is { } b ? EvidenceFiles.ReadBaseline(b) : [],
             Zones = [.. survey.Zones.SelectMany(EvidenceFiles.ReadZones)],
+            Decisions = survey.Decisions is { } d ? EvidenceFiles.ReadDecisions(d) : [],
             LeftOut = [.. leftOut],
             LeftOutFiles = [.. leftFiles],
             Remarks = [.. survey.PassedOver.Concat(sources.SelectMany(s => s.Header.Problems.Select(p => $"{s.Header.Name}: {p}"))).Select(p => new Remark("files", p, false)), .. leftOut.Select(l => new Remark("files", "Left out: " + l, true))],

@@ -8,6 +8,9 @@ namespace CloudStruct.Runs;
 /// run.json are passed over.</remarks>
 internal sealed record SurveyFolder
 {
+    /// <summary>Name of the table of decisions.</summary>
+    public const string DecisionsName = "decisions.csv";
+
     private static readonly string[] CloudEndings = [".las", ".laz", ".ply", ".glb", ".gltf", ".xyz"];
     private static readonly string[] LabelEndings = [".csv", ".geojson", ".gpkg", ".las", ".laz"];
 
@@ -38,6 +41,9 @@ internal sealed record SurveyFolder
     /// <summary>Files of zones that the user drew.</summary>
     public string[] Zones { get; init; } = [];
 
+    /// <summary>decisions.csv when there is one.</summary>
+    public string? Decisions { get; init; }
+
     /// <summary>survey.yaml when there is one.</summary>
     public required string? NotesFile { get; init; }
 
@@ -49,7 +55,7 @@ internal sealed record SurveyFolder
 
     /// <summary>All files that a run reads, in order.</summary>
     public IEnumerable<string> Files =>
-        new[] { NotesFile, Checkpoints, Readings, Baseline }.OfType<string>().Concat(Zones).Concat(Labels).Concat(Clouds);
+        new[] { NotesFile, Decisions, Checkpoints, Readings, Baseline }.OfType<string>().Concat(Zones).Concat(Labels).Concat(Clouds);
 
     /// <summary>Name without the user's folders, with forward slashes.</summary>
     public string Relative(string file) => Path.GetRelativePath(Root, file).Replace('\\', '/');
@@ -97,6 +103,7 @@ internal sealed record SurveyFolder
             Baseline = Child(full, "baseline") is { } b ? FilesIn(full, b, [".geojson"], passed, other: null).FirstOrDefault() : null,
             Zones = Child(full, "zones") is { } z ? FilesIn(full, z, [".geojson"], passed, other: "holds no zones that we read") : [],
             NotesFile = notesFile,
+            Decisions = Present(full, Path.Combine(full, DecisionsName), passed),
             UsualOut = Path.Combine(full, "results"),
             PassedOver = [.. passed],
         };

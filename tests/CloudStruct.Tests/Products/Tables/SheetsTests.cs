@@ -1,6 +1,7 @@
 using System.Globalization;
 using CloudStruct.Formats.Tables;
 using CloudStruct.Products.Tables;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Drawings;
 using CloudStruct.Tests.Kit;
 
@@ -116,12 +117,14 @@ public class SheetsTests
     }
 
     [Fact]
-    public void Checkpoints_are_written_only_where_there_is_control()
+    public void Checkpoints_and_decisions_are_written_only_where_there_are_any()
     {
-        ITableSheet table = Sheets.All.Single(t => t.File == "checkpoints.csv");
-        Assert.True(table.Applies(Samples.Dike()));
-        Assert.False(table.Applies(Samples.Nothing()));
-        Assert.All(Sheets.All.Where(t => t != table), t => Assert.True(t.Applies(Samples.Nothing())));
+        ITableSheet control = Sheets.All.Single(t => t.File == "checkpoints.csv"), decisions = Sheets.All.Single(t => t.File == "decisions.csv");
+        Assert.True(control.Applies(Samples.Dike()));
+        Assert.False(control.Applies(Samples.Nothing()));
+        Assert.False(decisions.Applies(Samples.Dike()));
+        Assert.True(decisions.Applies(Samples.Dike() with { Decisions = new DecisionsRecord { Outcomes = [new DecisionOutcome(new Decision(), true, 0, "noted")] } }));
+        Assert.All(Sheets.All.Where(t => t != control && t != decisions), t => Assert.True(t.Applies(Samples.Nothing())));
     }
 
     private static string TextOf(Findings findings) => string.Join("\n", Sheets.All.Where(t => t.Applies(findings))
