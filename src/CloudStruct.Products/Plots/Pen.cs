@@ -57,8 +57,13 @@ internal sealed partial class Pen(SKCanvas canvas, bool outlines)
     }
 
     /// <summary>A picture.</summary>
-    public void Picture(SKImage image, SKRect at) =>
-        canvas.DrawImage(image, at, new SKSamplingOptions(SKFilterMode.Linear, SKMipmapMode.Linear), null);
+    /// <remarks>Averaged from smaller copies only where it shrinks to less than half: making those copies took longer than
+    /// drawing, and at the size of the picture itself nothing of them shows.</remarks>
+    public void Picture(SKImage image, SKRect at)
+    {
+        float scale = at.Width * canvas.TotalMatrix.ScaleX / image.Width;
+        canvas.DrawImage(image, at, new SKSamplingOptions(SKFilterMode.Linear, scale < 0.5f ? SKMipmapMode.Linear : SKMipmapMode.None), null);
+    }
 
     private static SKPaint Stroke(SKColor colour, float width) => new()
     {

@@ -23,26 +23,52 @@ internal static class PlotsWriter
     public static Figure View(Findings findings, ViewImage view, RunFacts facts) =>
         ViewFigure.Make(view, findings.Intake.Frame.North != North.Model, facts.RunId);
 
-    /// <summary>Writes all below plots/, and hands them to the report.</summary>
+    /// <summary>Makes all sheets at once, writes them below plots/ in their order, and hands them to the report.</summary>
     public static List<DrawnPlot> Write(ResultFolder files, Findings findings, DrawingsRecord drawings, RunFacts facts, StageContext context)
     {
-        var drawn = new List<DrawnPlot>();
-        foreach (Figure figure in Figures(findings, drawings, facts))
-        {
-            context.Stop.ThrowIfCancellationRequested();
-            var plot = new DrawnPlot(figure.Name, figure.Title, figure.Words, FigureFiles.Svg(figure, facts.RunId), FigureFiles.Png(figure, facts.RunId));
-            files.Write($"plots/{plot.Name}.svg", plot.Svg);
-            files.Write($"plots/{plot.Name}.pdf", FigureFiles.Pdf(figure, facts));
-            files.Write($"plots/{plot.Name}.png", plot.Png);
-            drawn.Add(plot);
-        }
+        Figure[] figures = [.. Figures(findings, drawings, facts)];
+        var work = new List<Func<byte[]>>();
         foreach (ViewImage view in drawings.Views)
         {
-            context.Stop.ThrowIfCancellationRequested();
             Figure figure = View(findings, view, facts);
-            files.Write($"plots/{view.Name}.png", FigureFiles.Png(figure, facts.RunId, ViewFigure.PerPoint(view)));
-            drawn.Add(new(view.Name, view.Title, view.Sentence, [], FigureFiles.Png(figure, facts.RunId, ScreenPerPoint)));
+            work.Add(() => FigureFiles.Png(figure, facts.RunId, ViewFigure.PerPoint(view)));
+            work.Add(() => FigureFiles.Png(figure, facts.RunId, ScreenPerPoint));
         }
+
+        foreach (Figure figure in figures)
+        {
+            work.Add(() => FigureFiles.Svg(figure, facts.RunId));
+            work.Add(() => FigureFiles.Pdf(figure, facts));
+            work.Add(() => FigureFiles.Png(figure, facts.RunId));
+        }
+
+        // Each sheet is made from records alone, so who makes which changes no byte.
+        byte[][] made = new byte[work.Count][];
+        Parallel.For(
+            0,
+            made.Length,
+            new ParallelOptions { MaxDegreeOfParallelism = Math.Max(1, context.Threads), CancellationToken = context.Stop },
+            i => made[i] = work[i]());
+
+        var drawn = new List<DrawnPlot>();
+        int at = 2 * drawings.Views.Length;
+        foreach (Figure figure in figures)
+        {
+            (byte[] svg, byte[] pdf, byte[] png) = (made[at], made[at + 1], made[at + 2]);
+            at += 3;
+            files.Write($"plots/{figure.Name}.svg", svg);
+            files.Write($"plots/{figure.Name}.pdf", pdf);
+            files.Write($"plots/{figure.Name}.png", png);
+            drawn.Add(new DrawnPlot(figure.Name, figure.Title, figure.Words, svg, png));
+        }
+
+        for (int v = 0; v < drawings.Views.Length; v++)
+        {
+            ViewImage view = drawings.Views[v];
+            files.Write($"plots/{view.Name}.png", made[2 * v]);
+            drawn.Add(new DrawnPlot(view.Name, view.Title, view.Sentence, [], made[(2 * v) + 1]));
+        }
+
         return drawn;
     }
 }

@@ -11,4 +11,22 @@ public sealed record DrawingsRecord
 
     /// <summary>Pictures of the cloud: natural colour and classes, plan and front.</summary>
     public ViewImage[] Views { get; init; } = [];
+
+    /// <summary>The surface from above on a regular raster; null without points or when pictures are off.</summary>
+    public SurfaceRaster? Surface { get; init; }
+
+    /// <summary>The structural map; null without anything to show.</summary>
+    public MapDrawing? Map { get; init; }
+
+    /// <summary>Outlines and triangles of the faces, in their order.</summary>
+    public FaceShapes Faces { get; init; } = new();
+
+    /// <summary>Contacts as strips, in the order of contacts.</summary>
+    public ContactStrip[] Strips { get; init; } = [];
+
+    /// <summary>The cloud thinned for views in three dimensions.</summary>
+    public ThinnedCloud Cloud { get; init; } = new();
+
+    /// <summary>Cross-sections at stations, dike after dike in order of chainage.</summary>
+    public CrossSection[] Sections { get; init; } = [];
 }

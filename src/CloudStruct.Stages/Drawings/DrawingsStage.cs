@@ -16,8 +16,20 @@ public sealed class DrawingsStage : IStage<Findings, DrawingSettings, DrawingsRe
         NetDrawing[] nets = [.. FaceNets.Of(input, settings, context), .. ContactNet.Of(input)];
         context.Progress(0.2);
         WidthDrawing[] widths = WidthDrawings.Of(input);
-        ViewImage[] views = settings.Pictures && input.Described.Cloud.Count > 0 ? Pictures.Of(input, settings, context) : [];
+        bool points = input.Described.Cloud.Count > 0;
+        (ViewImage[] views, SurfaceRaster? surface) = settings.Pictures && points ? Pictures.Of(input, settings, context) : ([], null);
         context.Progress(1);
-        return new DrawingsRecord { Nets = nets, Widths = widths, Views = views };
+        return new DrawingsRecord
+        {
+            Nets = nets,
+            Widths = widths,
+            Views = views,
+            Surface = surface,
+            Map = points ? MapLayout.Of(input) : null,
+            Faces = Outlines.Of(input.Faces.Faces, context),
+            Strips = Strips.Of(input),
+            Cloud = Thinning.Of(input, settings.ViewPoints),
+            Sections = Sections.Of(input, context),
+        };
     }
 }

@@ -61,6 +61,27 @@ internal sealed record PictureFrame
         };
     }
 
+    /// <summary>Straight from above with grid north up, on a raster whose edges lie at whole pixels of the map grid: rasters of
+    /// neighbouring surveys of one pixel size then fit together.</summary>
+    /// <param name="cloud">At least one point.</param>
+    /// <param name="sizePx">Longer side, about.</param>
+    public static PictureFrame OnGrid(WorkingCloud cloud, int sizePx)
+    {
+        PictureFrame free = Around(cloud, new Vec3(1, 0, 0), new Vec3(0, 1, 0), sizePx);
+        double power = Math.Pow(10, Math.Floor(Math.Log10(free.PixelM)) - 1), pixel = Math.Ceiling((free.PixelM / power) - 1e-9) * power;
+        Vec3 origin = cloud.Frame.Origin;
+        double left = (Math.Floor((free.Left + origin.X) / pixel) * pixel) - origin.X;
+        double top = (Math.Ceiling((free.Top + origin.Y) / pixel) * pixel) - origin.Y;
+        return free with
+        {
+            Left = left,
+            Top = top,
+            PixelM = pixel,
+            Width = (int)Math.Ceiling((free.Left + (free.Width * free.PixelM) - left) / pixel),
+            Height = (int)Math.Ceiling((top - free.Top + (free.Height * free.PixelM)) / pixel),
+        };
+    }
+
     private static (double Low, double High) Extent(WorkingCloud cloud, Vec3 axis)
     {
         // A sample in equal steps of the grid's order: a hundred thousand points place the tails well enough.

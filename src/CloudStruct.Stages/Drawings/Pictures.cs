@@ -20,23 +20,22 @@ internal static class Pictures
     private const double FlatRelief = 0.12;
     private const double ObliqueDeg = 40;
 
-    /// <summary>All pictures.</summary>
-    public static ViewImage[] Of(Findings input, DrawingSettings settings, StageContext context)
+    /// <summary>All pictures, and the raster of the surface that the plan shows.</summary>
+    public static (ViewImage[] Views, SurfaceRaster Surface) Of(Findings input, DrawingSettings settings, StageContext context)
     {
         WorkingCloud cloud = input.Described.Cloud;
         var views = new List<ViewImage>();
 
-        // Plan: the stated north is up.
-        double turn = cloud.Frame.TurnDeg * Degree;
-        var north = new Vec3(-Math.Sin(turn), Math.Cos(turn), 0);
-        var east = new Vec3(Math.Cos(turn), Math.Sin(turn), 0);
+        // Plan: grid north is up, as on the map and in the rasters, so that one pass over the points serves all three.
         string upward = cloud.Frame.North switch
         {
-            North.True => "true north is up",
+            North.True => "grid north is up, the arrow points to true north",
             North.Model => "the y axis of the model is up",
             _ => "grid north is up",
         };
-        Look("plan", "from above", $"Seen from above, {upward}", east, north, 0);
+        (PictureFrame frame, int[] seen, float[] shade) = Look(
+            "plan", "from above", $"Seen from above, {upward}", PictureFrame.OnGrid(cloud, settings.PictureSizePx), cloud.Frame.TurnDeg);
+        SurfaceRaster surface = Surfaces.Of(input.Described, frame, seen, shade, context);
         context.Progress(0.6);
 
         (Vec3 into, double down) = Facing(input);
@@ -44,12 +43,11 @@ internal static class Pictures
         Vec3 look = (into * Math.Cos(down * Degree)) - (Vec3.Up * Math.Sin(down * Degree));
         string how = Invariant($"Seen looking toward {Words.Azimuth(Azimuth.Of(into, cloud.Frame.TurnDeg))}")
             + (down > 0 ? Invariant($" and {down:0} deg down") : ", level");
-        Look("front", "from the front", how, level, level.Cross(look), null);
-        return [.. views];
+        Look("front", "from the front", how, PictureFrame.Around(cloud, level, level.Cross(look), settings.PictureSizePx), null);
+        return ([.. views], surface);
 
-        void Look(string name, string title, string how, Vec3 right, Vec3 up, double? upAzimuth)
+        (PictureFrame Frame, int[] Seen, float[] Shade) Look(string name, string title, string how, PictureFrame frame, double? upAzimuth)
         {
-            PictureFrame frame = PictureFrame.Around(cloud, right, up, settings.PictureSizePx);
             int[] seen = PicturePoints.Seen(cloud, frame, context.Threads, context.Stop);
             float[] shade = Shade(input.Described, seen, frame, context);
             foreach (Paint paint in Paints(input))
@@ -59,6 +57,8 @@ internal static class Pictures
                     $"view-{paint.Name}-{name}", $"{paint.Title} {title}", frame.Width, frame.Height, frame.PixelM, rgba, $"{how}. {paint.Sentence}", upAzimuth)
                 { Key = paint.Key });
             }
+
+            return (frame, seen, shade);
         }
     }
 
