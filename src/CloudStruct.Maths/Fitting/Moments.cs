@@ -45,6 +45,69 @@ public struct Moments
         zz += weight * dz * dz;
     }
 
+    /// <summary>Adds places by Tukey's bisquare of their distance from a plane over a limit. The sums are those of <see cref="Add(double, double, double, double)"/>
+    /// place by place, held in registers meanwhile.</summary>
+    /// <param name="places">The places.</param>
+    /// <param name="plane">Distances are taken from it.</param>
+    /// <param name="limit">Distance at which the weight ends [m].</param>
+    public void AddNear(ReadOnlySpan<Vec3> places, in PlaneFit plane, double limit)
+    {
+        double cx = plane.Centroid.X, cy = plane.Centroid.Y, cz = plane.Centroid.Z, nx = plane.Normal.X, ny = plane.Normal.Y, nz = plane.Normal.Z;
+        double ox = shift.X, oy = shift.Y, oz = shift.Z;
+        double sw = w, sx = x, sy = y, sz = z, sxx = xx, sxy = xy, sxz = xz, syy = yy, syz = yz, szz = zz;
+        foreach (Vec3 p in places)
+        {
+            double q = ((nx * (p.X - cx)) + (ny * (p.Y - cy)) + (nz * (p.Z - cz))) / limit, k = 1 - (q * q);
+            if (!(k > 0)) continue;
+            double weight = k * k, dx = p.X - ox, dy = p.Y - oy, dz = p.Z - oz, wx = weight * dx, wy = weight * dy, wz = weight * dz;
+            sw += weight;
+            sx += wx;
+            sy += wy;
+            sz += wz;
+            sxx += wx * dx;
+            sxy += wx * dy;
+            sxz += wx * dz;
+            syy += wy * dy;
+            syz += wy * dz;
+            szz += wz * dz;
+        }
+
+        (w, x, y, z, xx, xy, xz, yy, yz, zz) = (sw, sx, sy, sz, sxx, sxy, sxz, syy, syz, szz);
+    }
+
+    /// <summary>The same for some points of a cloud.</summary>
+    /// <param name="east">East of all points [m].</param>
+    /// <param name="north">North [m].</param>
+    /// <param name="up">Up [m].</param>
+    /// <param name="points">Numbers of the points to add.</param>
+    /// <param name="plane">Distances are taken from it.</param>
+    /// <param name="limit">Distance at which the weight ends [m].</param>
+    public void AddNear(float[] east, float[] north, float[] up, ReadOnlySpan<int> points, in PlaneFit plane, double limit)
+    {
+        double cx = plane.Centroid.X, cy = plane.Centroid.Y, cz = plane.Centroid.Z, nx = plane.Normal.X, ny = plane.Normal.Y, nz = plane.Normal.Z;
+        double ox = shift.X, oy = shift.Y, oz = shift.Z;
+        double sw = w, sx = x, sy = y, sz = z, sxx = xx, sxy = xy, sxz = xz, syy = yy, syz = yz, szz = zz;
+        foreach (int i in points)
+        {
+            double px = east[i], py = north[i], pz = up[i];
+            double q = ((nx * (px - cx)) + (ny * (py - cy)) + (nz * (pz - cz))) / limit, k = 1 - (q * q);
+            if (!(k > 0)) continue;
+            double weight = k * k, dx = px - ox, dy = py - oy, dz = pz - oz, wx = weight * dx, wy = weight * dy, wz = weight * dz;
+            sw += weight;
+            sx += wx;
+            sy += wy;
+            sz += wz;
+            sxx += wx * dx;
+            sxy += wx * dy;
+            sxz += wx * dz;
+            syy += wy * dy;
+            syz += wy * dz;
+            szz += wz * dz;
+        }
+
+        (w, x, y, z, xx, xy, xz, yy, yz, zz) = (sw, sx, sy, sz, sxx, sxy, sxz, syy, syz, szz);
+    }
+
     /// <summary>Adds sums that were taken about the same shift.</summary>
     public void Add(in Moments other)
     {

@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
@@ -36,26 +37,38 @@ public sealed partial class PatchModes
         return sums;
     }
 
+    // Six vectors of sums stay in registers; cells without points hold zeros there and are passed over by runs.
     private double SumOffset(int dx, int dy, Span<double> at)
     {
-        Span<Vector256<double>> sum = stackalloc Vector256<double>[PatchRecord.Lanes / 4];
-        sum.Clear();
+        Vector256<double> s0 = default, s1 = default, s2 = default, s3 = default, s4 = default, s5 = default;
         double cross = 0;
-        ReadOnlySpan<Vector256<double>> all = MemoryMarshal.Cast<double, Vector256<double>>(wave.AsSpan(0, nx * ny * PatchRecord.Lanes));
+        ref double all = ref MemoryMarshal.GetArrayDataReference(wave);
         int fromX = Math.Max(0, -dx), toX = Math.Min(nx, nx - dx);
         for (int y = 0; y + dy < ny; y++)
         {
-            for (int x = fromX; x < toX; x++)
+            int row = y * nx, other = ((y + dy) * nx) + dx;
+            ReadOnlySpan<double> own = weight.AsSpan(row + fromX, toX - fromX), near = weight.AsSpan(other + fromX, toX - fromX);
+            for (int x = 0; x < own.Length; x++)
             {
-                int c = (y * nx) + x, o = ((y + dy) * nx) + x + dx;
-                if (weight[c] == 0 || weight[o] == 0) continue;
-                ReadOnlySpan<Vector256<double>> a = all.Slice(c * (PatchRecord.Lanes / 4), PatchRecord.Lanes / 4), b = all.Slice(o * (PatchRecord.Lanes / 4), PatchRecord.Lanes / 4);
-                for (int k = 0; k < PatchRecord.Lanes / 4; k++) sum[k] += a[k] * b[k];
-                cross += ((wave[(c * PatchRecord.Lanes) + 1] * wave[(o * PatchRecord.Lanes) + 2]) + (wave[(c * PatchRecord.Lanes) + 2] * wave[(o * PatchRecord.Lanes) + 1])) / 2;
+                if (own[x] == 0 || near[x] == 0) continue;
+                ref double a = ref Unsafe.Add(ref all, (nint)(row + fromX + x) * PatchRecord.Lanes);
+                ref double b = ref Unsafe.Add(ref all, (nint)(other + fromX + x) * PatchRecord.Lanes);
+                s0 += Vector256.LoadUnsafe(ref a) * Vector256.LoadUnsafe(ref b);
+                s1 += Vector256.LoadUnsafe(ref a, 4) * Vector256.LoadUnsafe(ref b, 4);
+                s2 += Vector256.LoadUnsafe(ref a, 8) * Vector256.LoadUnsafe(ref b, 8);
+                s3 += Vector256.LoadUnsafe(ref a, 12) * Vector256.LoadUnsafe(ref b, 12);
+                s4 += Vector256.LoadUnsafe(ref a, 16) * Vector256.LoadUnsafe(ref b, 16);
+                s5 += Vector256.LoadUnsafe(ref a, 20) * Vector256.LoadUnsafe(ref b, 20);
+                cross += ((Unsafe.Add(ref a, 1) * Unsafe.Add(ref b, 2)) + (Unsafe.Add(ref a, 2) * Unsafe.Add(ref b, 1))) / 2;
             }
         }
 
-        for (int k = 0; k < PatchRecord.Lanes; k++) at[k] = sum[k / 4][k % 4];
+        s0.CopyTo(at);
+        s1.CopyTo(at[4..]);
+        s2.CopyTo(at[8..]);
+        s3.CopyTo(at[12..]);
+        s4.CopyTo(at[16..]);
+        s5.CopyTo(at[20..]);
         return cross;
     }
 

@@ -1,3 +1,5 @@
+using System.Runtime.Intrinsics;
+
 namespace CloudStruct.Maths.Fitting;
 
 /// <summary>Decomposes the residuals of a planar patch into waves and sums its pairs by distance, on a raster.</summary>
@@ -14,7 +16,7 @@ public sealed partial class PatchModes
 
     private readonly LagBins bins;
     private readonly double finestM;
-    private double[] weight = [], square = [], residual = [], wave = [];
+    private double[] weight = [], square = [], residual = [], wave = [], byWave = [];
     private int nx, ny;
     private double cellM;
 
@@ -126,6 +128,7 @@ public sealed partial class PatchModes
             square = new double[cells];
             residual = new double[cells];
             wave = new double[cells * PatchRecord.Lanes];
+            byWave = new double[cells * MostWaves];
         }
 
         Array.Clear(weight, 0, cells);
@@ -151,6 +154,7 @@ public sealed partial class PatchModes
     }
 
     // Fills the polynomials up to degree 5 in order of degree, made orthonormal over the weighted cells; gives how many there are.
+    // Made wave by wave, each with its cells side by side, and turned over to cell by cell at the end, as the pairs want them.
     private int Waves(double total)
     {
         int cells = nx * ny, occupied = 0;
@@ -166,18 +170,29 @@ public sealed partial class PatchModes
         {
             for (int j = 0; j <= degree && k < most; j++)
             {
-                for (int c = 0; c < cells; c++)
+                Span<double> own = byWave.AsSpan(k * cells, cells);
+                for (int y = 0, c = 0; y < ny; y++)
                 {
-                    if (weight[c] > 0)
-                        wave[(c * PatchRecord.Lanes) + k] = alongX[(c % nx * (MostDegree + 1)) + degree - j] * alongY[(c / nx * (MostDegree + 1)) + j];
+                    double factor = alongY[(y * (MostDegree + 1)) + j];
+                    for (int x = 0; x < nx; x++, c++) own[c] = weight[c] > 0 ? alongX[(x * (MostDegree + 1)) + degree - j] * factor : 0;
                 }
 
                 if (Orthonormal(k, total)) k++;
-                else if (k < 3) return k;
+                else if (k < 3) return Turned(k, cells);
             }
         }
 
-        return k;
+        return Turned(k, cells);
+    }
+
+    private int Turned(int waves, int cells)
+    {
+        for (int c = 0; c < cells; c++)
+        {
+            for (int k = 0; k < waves; k++) wave[(c * PatchRecord.Lanes) + k] = byWave[(k * cells) + c];
+        }
+
+        return waves;
     }
 
     // Legendre polynomials of the cells' middles on -1 to 1: nearly orthogonal already on a full rectangle.
@@ -198,18 +213,25 @@ public sealed partial class PatchModes
 
     private bool Orthonormal(int k, double total)
     {
-        double before = Norm2(k, total), start = before;
+        int cells = nx * ny;
+        Span<double> own = byWave.AsSpan(k * cells, cells);
+        ReadOnlySpan<double> share = weight.AsSpan(0, cells);
+        double before = Norm2(share, own, total), start = before;
         for (int pass = 0; pass < 2; pass++)
         {
             for (int j = 0; j < k; j++)
             {
+                ReadOnlySpan<double> earlier = byWave.AsSpan(j * cells, cells);
                 double dot = 0;
-                for (int c = 0; c < nx * ny; c++) dot += weight[c] * wave[(c * PatchRecord.Lanes) + j] * wave[(c * PatchRecord.Lanes) + k];
+                for (int c = 0; c < share.Length && c < earlier.Length && c < own.Length; c++) dot += share[c] * earlier[c] * own[c];
                 dot /= total;
-                for (int c = 0; c < nx * ny; c++) wave[(c * PatchRecord.Lanes) + k] -= dot * wave[(c * PatchRecord.Lanes) + j];
+                int done = 0;
+                for (; done <= own.Length - 4; done += 4)
+                    (Vector256.Create<double>(own[done..]) - (Vector256.Create(dot) * Vector256.Create(earlier[done..]))).CopyTo(own[done..]);
+                for (; done < own.Length; done++) own[done] -= dot * earlier[done];
             }
 
-            double after = Norm2(k, total);
+            double after = Norm2(share, own, total);
             if (!(after > 1e-6 * start)) return false;
             bool steady = after > 0.01 * before;   // little was lost: rounding cannot have spoilt it
             before = after;
@@ -217,14 +239,14 @@ public sealed partial class PatchModes
         }
 
         double scale = 1 / Math.Sqrt(before);
-        for (int c = 0; c < nx * ny; c++) wave[(c * PatchRecord.Lanes) + k] *= scale;
+        for (int c = 0; c < own.Length; c++) own[c] *= scale;
         return true;
     }
 
-    private double Norm2(int k, double total)
+    private static double Norm2(ReadOnlySpan<double> share, ReadOnlySpan<double> own, double total)
     {
         double sum = 0;
-        for (int c = 0; c < nx * ny; c++) sum += weight[c] * wave[(c * PatchRecord.Lanes) + k] * wave[(c * PatchRecord.Lanes) + k];
+        for (int c = 0; c < share.Length && c < own.Length; c++) sum += share[c] * own[c] * own[c];
         return sum / total;
     }
 

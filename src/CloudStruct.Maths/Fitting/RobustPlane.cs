@@ -60,7 +60,7 @@ public static class RobustPlane
         for (int round = 0; round < rounds; round++)
         {
             var sums = new Moments(plane.Centroid);
-            foreach (Vec3 p in places) sums.Add(p.X, p.Y, p.Z, Weight(plane.Distance(p) / limit));
+            sums.AddNear(places, plane, limit);
             if (!(sums.Weight > 3)) return plane;
             PlaneFit next = PlaneFit.From(sums);
             double turn = next.Normal.Cross(plane.Normal).Length, shift = Math.Abs(next.Distance(plane.Centroid));

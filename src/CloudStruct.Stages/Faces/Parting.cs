@@ -1,3 +1,4 @@
+using System.Numerics;
 using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Fitting;
 
@@ -37,7 +38,8 @@ internal sealed class Parting
     private bool[] Worn(Pieces pieces, double usualSpread)
     {
         int n = surface.Count;
-        float[] turn = new float[n], power = new float[n];
+        ushort[] same = Same(pieces.Label);
+        Signs[] signs = new Signs[n], other = new Signs[n];
         double perTurn = 1 / (usualSpread * usualSpread), perPower = 1 / (scatterM * scatterM);
         BlockParallel.For(n, surface.Threads, surface.Stop, (from, to) =>
         {
@@ -46,45 +48,81 @@ internal sealed class Parting
                 if (pieces.Label[i] == 0) continue;
                 PlaneFit plane = pieces.Planes[pieces.Label[i]];
                 double c = surface.Agreement(i, plane.Normal), d = surface.Distance(i, plane);
-                (turn[i], power[i]) = ((float)((1 - (c * c)) * perTurn), (float)(d * d * perPower));
+                signs[i] = new Signs((float)((1 - (c * c)) * perTurn), (float)(d * d * perPower));
             }
         });
         for (int pass = 0; pass < Smoothings; pass++)
         {
-            turn = Smooth(turn, pieces.Label);
-            power = Smooth(power, pieces.Label);
+            Smooth(signs, other, same, pieces.Label);
+            (signs, other) = (other, signs);
         }
 
-        var mark = new float[n];
-        for (int i = 0; i < n; i++) mark[i] = pieces.Label[i] != 0 && Refusing.IsWorn(turn[i], power[i], Limit) ? 1 : 0;
-        for (int pass = 0; pass < 2; pass++) mark = Array.ConvertAll(Smooth(mark, pieces.Label), m => m > 0.5f ? 1f : 0f);
-        return Array.ConvertAll(mark, m => m > 0.5f);
+        bool[] mark = new bool[n], next = new bool[n];
+        BlockParallel.For(n, surface.Threads, surface.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++) mark[i] = pieces.Label[i] != 0 && Refusing.IsWorn(signs[i].Turn, signs[i].Power, Limit);
+        });
+        for (int pass = 0; pass < 2; pass++)
+        {
+            Majority(mark, next, same, pieces.Label);
+            (mark, next) = (next, mark);
+        }
+
+        return mark;
+    }
+
+    // Which of the neighbours carry the label of the point, one bit each: read once, used in every pass.
+    private ushort[] Same(int[] label)
+    {
+        var same = new ushort[label.Length];
+        BlockParallel.For(label.Length, surface.Threads, surface.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                int own = label[i], bits = 0;
+                if (own == 0) continue;
+                ReadOnlySpan<int> row = surface.NeighboursOf(i);
+                for (int k = 0; k < row.Length && row[k] >= 0; k++) bits |= label[row[k]] == own ? 1 << k : 0;
+                same[i] = (ushort)bits;
+            }
+        });
+        return same;
     }
 
     // Mean over a point and its neighbours of the same label.
-    private float[] Smooth(float[] values, int[] label)
-    {
-        var smooth = new float[values.Length];
+    private void Smooth(Signs[] values, Signs[] smooth, ushort[] same, int[] label) =>
         BlockParallel.For(values.Length, surface.Threads, surface.Stop, (from, to) =>
         {
             for (int i = from; i < to; i++)
             {
                 if (label[i] == 0) continue;
-                float sum = values[i];
-                int count = 1;
-                foreach (int j in surface.NeighboursOf(i))
+                float turn = values[i].Turn, power = values[i].Power;
+                ReadOnlySpan<int> row = surface.NeighboursOf(i);
+                int count = 1 + BitOperations.PopCount(same[i]);
+                for (uint bits = same[i]; bits != 0; bits &= bits - 1)
                 {
-                    if (j < 0) break;
-                    if (label[j] != label[i]) continue;
-                    sum += values[j];
-                    count++;
+                    ref readonly Signs near = ref values[row[BitOperations.TrailingZeroCount(bits)]];
+                    turn += near.Turn;
+                    power += near.Power;
                 }
 
-                smooth[i] = sum / count;
+                smooth[i] = new Signs(turn / count, power / count);
             }
         });
-        return smooth;
-    }
+
+    // Whether more than half of a point and its neighbours of the same label are marked.
+    private void Majority(bool[] mark, bool[] next, ushort[] same, int[] label) =>
+        BlockParallel.For(mark.Length, surface.Threads, surface.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
+            {
+                if (label[i] == 0) continue;
+                ReadOnlySpan<int> row = surface.NeighboursOf(i);
+                int marked = mark[i] ? 1 : 0, count = 1 + BitOperations.PopCount(same[i]);
+                for (uint bits = same[i]; bits != 0; bits &= bits - 1) marked += mark[row[BitOperations.TrailingZeroCount(bits)]] ? 1 : 0;
+                next[i] = 2 * marked > count;
+            }
+        });
 
     // Worn parts smaller than the smallest face stay with what is around them.
     private void Parts(Pieces pieces, bool[] worn)
@@ -132,4 +170,7 @@ internal sealed class Parting
             }
         }
     }
+
+    // Squared turn of the normal and squared distance from the plane, over the usual; side by side, as they are read together.
+    private readonly record struct Signs(float Turn, float Power);
 }

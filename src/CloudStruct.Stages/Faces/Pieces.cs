@@ -92,8 +92,7 @@ internal sealed class Pieces
         for (int round = 0; round < rounds; round++)
         {
             var sums = new Moments(plane.Centroid);
-            foreach (int i in points)
-                sums.Add(surface.X[i], surface.Y[i], surface.Z[i], RobustPlane.Weight(surface.Distance(i, plane) / limit));
+            sums.AddNear(surface.X, surface.Y, surface.Z, points, plane, limit);
             if (!(sums.Weight > 5)) return plane;
             plane = PlaneFit.From(sums);
         }

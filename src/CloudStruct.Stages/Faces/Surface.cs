@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -7,6 +8,8 @@ namespace CloudStruct.Stages.Faces;
 /// <summary>The described cloud as the steps of this stage see it: columns, graph, spacing and limits.</summary>
 internal sealed class Surface
 {
+    private readonly ConcurrentBag<Marks> spare = [];
+
     public Surface(DescribedCloud described, FaceSettings settings, int threads, CancellationToken stop)
     {
         WorkingCloud cloud = described.Cloud;
@@ -82,6 +85,17 @@ internal sealed class Surface
         Vec3 n = plane.Normal, c = plane.Centroid;
         return (n.X * (X[i] - c.X)) + (n.Y * (Y[i] - c.Y)) + (n.Z * (Z[i] - c.Z));
     }
+
+    /// <summary>Empty marks of all points, for one worker at a time; give them back with <see cref="Return"/>.</summary>
+    public Marks RentMarks()
+    {
+        Marks marks = spare.TryTake(out Marks? used) ? used : new Marks(Count);
+        marks.Clear();
+        return marks;
+    }
+
+    /// <summary>Takes marks back for the next worker.</summary>
+    public void Return(Marks marks) => spare.Add(marks);
 
     private static double Middle(float[] areas, double otherwise)
     {

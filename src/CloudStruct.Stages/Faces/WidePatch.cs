@@ -1,3 +1,4 @@
+using System.Runtime.InteropServices;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Frame;
 
@@ -101,32 +102,38 @@ internal sealed class WidePatch
     private static int[] Gather(
         Surface surface, Pieces pieces, ReadOnlySpan<int> own, in PlaneFit plane, Coverage coverage, Vec3 along, Vec3 up, double bandM)
     {
+        int[] label = pieces.Label;
         double beyondCosine = own.Length * surface.PointAreaM2 >= RimlessM2 ? Math.Cos(BeyondBendDeg * Math.PI / 180) : 2;
-        var added = new HashSet<int>();
+        Marks seen = surface.RentMarks();
         var front = new List<int>();
         foreach (int i in own) Look(i, plane);
         for (int at = 0; at < front.Count; at++) Look(front[at], plane);
-
-        int[] all = new int[own.Length + added.Count];
-        own.CopyTo(all);
-        front.CopyTo(all, own.Length);
-        Array.Sort(all);
-        return all;
+        surface.Return(seen);
+        front.Sort();
+        return Merge(own, CollectionsMarshal.AsSpan(front));
 
         void Look(int i, in PlaneFit plane)
         {
             foreach (int j in surface.NeighboursOf(i))
             {
                 if (j < 0) break;
-                if (pieces.Label[j] != 0) continue;
+                if (label[j] != 0 || seen.Has(j)) continue;
                 Vec3 d = surface.Place(j) - plane.Centroid;
                 double off = Math.Abs(d.Dot(plane.Normal));
                 if (off > bandM) continue;
                 bool under = coverage.Holds(d.Dot(along), d.Dot(up));
                 if (!under && (off > BeyondOverBand * bandM || surface.Agreement(j, plane.Normal) < beyondCosine)) continue;
-                if (added.Add(j)) front.Add(j);
+                seen.Set(j);
+                front.Add(j);
             }
         }
+    }
+
+    private static int[] Merge(ReadOnlySpan<int> a, ReadOnlySpan<int> b)
+    {
+        int[] all = new int[a.Length + b.Length];
+        for (int k = 0, i = 0, j = 0; k < all.Length; k++) all[k] = j == b.Length || (i < a.Length && a[i] < b[j]) ? a[i++] : b[j++];
+        return all;
     }
 
     private static (PlaneFit Plane, double ScaleM) Fit(Surface surface, int[] points, PlaneFit start, double scatterM)
@@ -139,10 +146,10 @@ internal sealed class WidePatch
         for (int round = 0; round < 3; round++)
         {
             for (int i = 0; i < points.Length; i++) distance[i] = Math.Abs(plane.Distance(places[i]));
-            Array.Sort(distance);
+            double middle = OrderStatistic.Nth<double>(distance, distance.Length / 2);
 
             // Its own scatter, but within a factor of two of the scene's: a face of few points cannot tell more.
-            scale = Math.Clamp(1.4826 * distance[distance.Length / 2], scatterM / 2, 2 * scatterM);
+            scale = Math.Clamp(1.4826 * middle, scatterM / 2, 2 * scatterM);
             plane = RobustPlane.Refit(places, plane, scale, 8);
         }
 
