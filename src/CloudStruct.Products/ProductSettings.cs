@@ -9,6 +9,9 @@ public sealed record ProductSettings : IStageSettings
     /// evenly spaced working points only, a much smaller file) or none.</summary>
     public string Clouds { get; init; } = "las";
 
+    /// <summary>Whether the layers of the map are also written as GeoJSON.</summary>
+    public bool Geojson { get; init; }
+
     /// <inheritdoc/>
     public IEnumerable<SettingComplaint> Check()
     {

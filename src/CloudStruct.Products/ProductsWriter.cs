@@ -1,5 +1,7 @@
 using CloudStruct.Formats.Tables;
 using CloudStruct.Products.Clouds;
+using CloudStruct.Products.Map;
+using CloudStruct.Products.Model;
 using CloudStruct.Products.Plots;
 using CloudStruct.Products.Report;
 using CloudStruct.Products.Tables;
@@ -37,6 +39,9 @@ public sealed class ProductsWriter
         try
         {
             plots = PlotsWriter.Write(files, findings, drawings, facts, context);
+            MapWriter.Write(files, findings, drawings, facts, settings, context.Threads);
+            using Stream model = files.Create("model/faces.glb");
+            ModelWriter.Write(model, findings, drawings, facts);
         }
         finally
         {

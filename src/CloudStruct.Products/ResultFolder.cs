@@ -10,12 +10,15 @@ internal sealed class ResultFolder(string folder)
 
     /// <summary>Creates a file for writing and reading, and notes it.</summary>
     /// <param name="name">Relative name with forward slashes: "tables/faces.csv".</param>
-    public FileStream Create(string name)
+    public FileStream Create(string name) => new(Reserve(name), FileMode.Create, FileAccess.ReadWrite, FileShare.None);
+
+    /// <summary>Notes a file that another writer makes, and gives its path.</summary>
+    public string Reserve(string name)
     {
         string path = Path.Combine(folder, name);
         Directory.CreateDirectory(Path.GetDirectoryName(path)!);
         written.Add(name);
-        return new FileStream(path, FileMode.Create, FileAccess.ReadWrite, FileShare.None);
+        return path;
     }
 
     /// <summary>Writes a whole file.</summary>

@@ -32,6 +32,20 @@ internal sealed partial class Pen
         canvas.Restore();
     }
 
+    /// <summary>One line of text on a picture: white around the letters, as they are drawn over light and dark.</summary>
+    public void TextOnPicture(string text, float x, float baseline, Letters letters, SKColor colour, Align align = Align.Left)
+    {
+        using SKFont font = letters.Font();
+        float width = font.MeasureText(text), from = x + (align switch { Align.Middle => -width / 2, Align.Right => -width, _ => 0 });
+        using (SKPath path = font.GetTextPath(text, new SKPoint(from, baseline)))
+        using (SKPaint halo = Stroke(new SKColor(0xFF, 0xFF, 0xFF, 0xE6), 1.8f))
+        {
+            canvas.DrawPath(path, halo);
+        }
+
+        Text(text, x, baseline, letters, colour, align);
+    }
+
     /// <summary>Lines of text one below the other.</summary>
     /// <returns>Base line of the line after the last.</returns>
     public float Lines(IEnumerable<string> lines, float x, float baseline, Letters letters, SKColor colour)

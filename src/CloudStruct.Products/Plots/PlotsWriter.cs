@@ -15,6 +15,7 @@ internal static class PlotsWriter
     public static IEnumerable<Figure> Figures(Findings findings, DrawingsRecord drawings, RunFacts facts)
     {
         foreach (NetDrawing net in drawings.Nets) yield return NetFigure.Make(net, facts.RunId);
+        if (drawings.Map is { } map) yield return Map.MapFigure.Make(map, drawings.Surface, findings.Intake.Frame, facts.RunId);
         foreach (WidthDrawing width in drawings.Widths)
             yield return WidthFigure.Make(width, FrameWords.Toward(findings, width.Dike), facts.RunId, Invariant($"width-dike-{width.Dike}"));
     }

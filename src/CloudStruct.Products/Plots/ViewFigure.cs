@@ -41,7 +41,7 @@ internal static class ViewFigure
         });
     }
 
-    private static void Bar(Pen pen, float left, float top, float length, double lengthM)
+    internal static void Bar(Pen pen, float left, float top, float length, double lengthM)
     {
         pen.Box(left, top, left + (length / 2), top + BarHeight, Palette.Ink);
         pen.Line([new(left, top), new(left + length, top), new(left + length, top + BarHeight), new(left, top + BarHeight), new(left, top)], Palette.Ink, 0.6f);
@@ -66,7 +66,7 @@ internal static class ViewFigure
         }
     }
 
-    private static void Arrow(Pen pen, float x, float y, double upAzimuthDeg)
+    internal static void Arrow(Pen pen, float x, float y, double upAzimuthDeg)
     {
         (float sin, float cos) = MathF.SinCos(-(float)upAzimuthDeg * MathF.PI / 180);
         SKPoint Turned(float right, float forward) => new(x + (right * cos) + (forward * sin), y + (right * sin) - (forward * cos));

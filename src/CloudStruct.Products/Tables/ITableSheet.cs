@@ -26,4 +26,7 @@ public interface ITableSheet
 
     /// <summary>The table with a row for all that was found; a header alone when nothing was.</summary>
     CsvSheet Fill(Findings findings);
+
+    /// <summary>The same rows with all digits of their numbers: text, long, double, or null where not determined.</summary>
+    IEnumerable<object?[]> Values(Findings findings);
 }

@@ -37,6 +37,8 @@ internal sealed class TableSheet<TRow> : ITableSheet
         return sheet;
     }
 
+    public IEnumerable<object?[]> Values(Findings findings) => From(findings).Select(row => cells.Select(cell => cell(row)).ToArray());
+
     public TableSheet<TRow> Text(string name, string meaning, Func<TRow, string> cell) => Add(name, CsvKind.Text, meaning, cell);
 
     /// <summary>A column of words: those of an enumeration in snake case, except those that mean "not determined".</summary>

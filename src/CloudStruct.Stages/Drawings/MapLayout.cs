@@ -20,7 +20,7 @@ internal static class MapLayout
         WorkingCloud cloud = input.Described.Cloud;
         PictureFrame frame = PictureFrame.OnGrid(cloud, 1000);
         double width = frame.Width * frame.PixelM, height = frame.Height * frame.PixelM;
-        double scale = Round(Math.Max(width / PaperWidthM, height / PaperHeightM), [1, 2, 2.5, 5, 10]);
+        double scale = Round(Math.Max(width / PaperWidthM, height / PaperHeightM), [1, 2, 2.5, 3, 4, 5, 7.5, 10]);
         var room = new MapRoom(frame.Left, frame.Top - height, frame.Left + width, frame.Top, scale);
         MapStation[] stations = MapMarks.Stations(input, room);
         MapSymbol[] symbols = MapMarks.Symbols(input, room, out int leftOut);

@@ -84,12 +84,12 @@ internal sealed record PictureFrame
 
     private static (double Low, double High) Extent(WorkingCloud cloud, Vec3 axis)
     {
-        // A sample in equal steps of the grid's order: a hundred thousand points place the tails well enough.
-        int step = Math.Max(1, cloud.Count / 100_000);
-        var along = new List<double>();
-        for (int i = 0; i < cloud.Count; i += step) along.Add(cloud.Place(i).Dot(axis));
-        along.Sort();
-        int tail = (int)(Tail * along.Count);
+        // A sample in equal steps of the grid's order: forty thousand points place the tails well enough.
+        int step = Math.Max(1, cloud.Count / 40_000);
+        double[] along = new double[(cloud.Count + step - 1) / step];
+        for (int k = 0; k < along.Length; k++) along[k] = cloud.Place(k * step).Dot(axis);
+        Array.Sort(along);
+        int tail = (int)(Tail * along.Length);
         return (along[tail], along[^(tail + 1)]);
     }
 }

@@ -27,6 +27,9 @@ internal sealed record Recipe
     /// <summary>The classified cloud that is written: las (every input point), laz (the same, compressed), thinned (working points only), none.</summary>
     public CloudsWanted Clouds { get; init; } = CloudsWanted.Las;
 
+    /// <summary>Whether the layers of the map are also written as GeoJSON, in the coordinates of the survey.</summary>
+    public bool Geojson { get; init; }
+
     /// <summary>Settings of the stage intake.</summary>
     public IntakeSettings Intake { get; init; } = new();
 

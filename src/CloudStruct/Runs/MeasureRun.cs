@@ -67,7 +67,7 @@ internal sealed class MeasureRun(MeasureRequest request, IBoard board, Cancellat
 
             RunFacts facts = Facts(survey, recipe, evidence, inputs, runId, findings);
             IReadOnlyList<string> written = runner.Timed("products", 0, report =>
-                (new ProductsWriter().Write(results.Building, findings, drawings, pieces, facts, new ProductSettings { Clouds = Words.Snake(recipe.Clouds.ToString()) }, runner.Context(report)), false));
+                (new ProductsWriter().Write(results.Building, findings, drawings, pieces, facts, new ProductSettings { Clouds = Words.Snake(recipe.Clouds.ToString()), Geojson = recipe.Geojson }, runner.Context(report)), false));
             string[] files = [.. written, RunRecord.FileName, LogName];
             findings = findings with { Remarks = runner.Remarks };
             RunRecord.Write(results.Building, findings, recipe, runId, request.Seed, request.Threads, inputs, evidence.LeftOut, files, runner.Times, budgetGib, estimateGib);

@@ -15,7 +15,7 @@ public class ProductsWriterTests
         string[] found = [.. Directory.GetFiles(scratch.Folder, "*", SearchOption.AllDirectories).Select(f => Path.GetRelativePath(scratch.Folder, f).Replace('\\', '/'))];
         Assert.Equal(found.Order(StringComparer.Ordinal), files.Order(StringComparer.Ordinal));
         Assert.Equal(
-            ["clouds/classified.las", "plots/net-contacts.pdf", "plots/net-contacts.png", "plots/net-contacts.svg", "plots/net-host.pdf", "plots/net-host.png",
+            ["clouds/classified.las", "map/structures.gpkg", "model/faces.glb", "plots/net-contacts.pdf", "plots/net-contacts.png", "plots/net-contacts.svg", "plots/net-host.pdf", "plots/net-host.png",
              "plots/net-host.svg", "plots/view-colour-plan.png", "plots/width-dike-1.pdf", "plots/width-dike-1.png", "plots/width-dike-1.svg", "report.html",
              "tables/checkpoints.csv", "tables/classes.csv", "tables/common_means.csv", "tables/contacts.csv", "tables/dikes.csv", "tables/faces.csv", "tables/sets.csv",
              "tables/tables-metadata.json", "tables/width.csv", "tables/width_trends.csv"],
@@ -82,6 +82,21 @@ public class ProductsWriterTests
             Assert.Contains("true north", notes.GetProperty("north").GetString(), StringComparison.Ordinal);
             Assert.Contains("metres", notes.GetProperty("frame").GetString(), StringComparison.Ordinal);
         }
+    }
+
+    [Fact]
+    public void Rasters_layers_and_the_map_are_written_where_there_is_a_surface()
+    {
+        using var scratch = new Scratch();
+        Findings f = DrawnSamples.Findings();
+        IReadOnlyList<string> files = new ProductsWriter().Write(
+            scratch.Folder, f, DrawnSamples.Drawn(f), SamplePieces.AboutTheDike(), Samples.Facts(), new() { Clouds = "none", Geojson = true }, StageContext.Plain(threads: 3));
+        foreach (string name in new[] { "map/ortho.tif", "map/surface.tif", "map/structures.gpkg", "map/faces.geojson", "map/outline.geojson", "model/faces.glb", "plots/map-structures.svg" })
+            Assert.Contains(name, files);
+
+        using var again = new Scratch();
+        new ProductsWriter().Write(again.Folder, f, DrawnSamples.Drawn(f), SamplePieces.AboutTheDike(), Samples.Facts(), new() { Clouds = "none", Geojson = true }, StageContext.Plain());
+        Assert.All(files, name => Assert.Equal(File.ReadAllBytes(scratch[name]), File.ReadAllBytes(again[name])));
     }
 
     private static IReadOnlyList<string> Write(string folder, Findings findings, DrawingsRecord drawings, int threads = 2) =>
