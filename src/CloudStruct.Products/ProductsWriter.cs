@@ -48,7 +48,7 @@ public sealed class ProductsWriter
             cloud.GetAwaiter().GetResult();
         }
 
-        files.Write("report.html", new ReportPage(findings, facts, plots).Bytes());
+        files.Write("report.html", new ReportPage(findings, drawings, facts, plots, PageAssets.Built).Bytes());
         context.Progress(1);
         return files.Written;
     }

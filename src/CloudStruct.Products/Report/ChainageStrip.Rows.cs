@@ -118,6 +118,25 @@ internal sealed partial class ChainageStrip
         }
     }
 
+    private IEnumerable<XElement> ShareRows(NiceScale along)
+    {
+        for (int r = 0; r < shares.Length; r++)
+        {
+            ShareRow row = shares[r];
+            double top = ShareTop + (r * ShareStep);
+            yield return Text(8, top + 12, "start", row.Name);
+            yield return Text(8, top + 28, "start", row.Unit);
+            yield return Text(Left - 8, top + 11, "end", row.Top);
+            yield return Line(Left, top, Right, top, "#d8d3c9", 1);
+            yield return Line(Left, top + ShareHeight, Right, top + ShareHeight, "#8a857c", 1);
+            foreach ((double from, double to, double share, string tip) in row.Bars)
+            {
+                double x = X(along, from), height = ShareHeight * Math.Clamp(share, 0, 1);
+                if (height > 0.3) yield return Rect(x, top + ShareHeight - height, X(along, to) - x + 0.4, height, A("fill", row.Colour), A("shape-rendering", "crispEdges"), Tip(tip));
+            }
+        }
+    }
+
     // Filled where strike and dip are fixed, open where only a direction is.
     private IEnumerable<XElement> EvidenceLanes(NiceScale along)
     {

@@ -11,12 +11,13 @@ namespace CloudStruct.Products.Report;
 /// <param name="dike">Number of the dike.</param>
 /// <param name="stations">Its stations in order of chainage.</param>
 /// <param name="contacts">Its contact windows.</param>
+/// <param name="cells">Cover, inclusions and density along it.</param>
 /// <param name="rowOf">Where the bar of a window leads.</param>
-internal sealed partial class ChainageStrip(int dike, Station[] stations, Contact[] contacts, Func<Contact, string> rowOf)
+internal sealed partial class ChainageStrip(int dike, Station[] stations, Contact[] contacts, ChainageCell[] cells, Func<Contact, string> rowOf)
 {
     // User units; the page scales the whole to its width.
     private const double Width = 1080, Left = 132, Right = 1068, WidthTop = 16, WidthHeight = 150, LeanTop = 190, LeanHeight = 84,
-        LaneTop = 292, LaneHeight = 13, LaneStep = 19, EvidenceTop = LaneTop + (2 * LaneStep) + 8;
+        LaneTop = 292, LaneHeight = 13, LaneStep = 19, ShareHeight = 30, ShareStep = 40, ShareTop = LaneTop + (2 * LaneStep) + 8;
 
     private static readonly XNamespace Svg0 = "http://www.w3.org/2000/svg";
 
@@ -25,6 +26,11 @@ internal sealed partial class ChainageStrip(int dike, Station[] stations, Contac
 
     // Windows may overlap: then neighbours take turns on two lines, or their bars would hide each other.
     private readonly int linesA = LinesFor(contacts, Margin.A), linesB = LinesFor(contacts, Margin.B);
+
+    // One row each: inclusions where there are any, cover, density. Rows that know nothing are left out.
+    private readonly ShareRow[] shares = ShareRow.Of(cells);
+
+    private double EvidenceTop => ShareTop + (shares.Length * ShareStep) + (shares.Length > 0 ? 4 : 0);
 
     private double AxisTop => EvidenceTop + ((linesA + linesB) * LaneStep) + 10;
 
@@ -36,8 +42,10 @@ internal sealed partial class ChainageStrip(int dike, Station[] stations, Contac
     {
         NiceScale along = Along(), across = Across(), lean = Lean();
         var svg = new XElement(Svg0 + "svg", A("viewBox", Invariant($"0 0 {Width} {AxisTop + 40}")), A("role", "group"), A("font-size", "13"),
+            A("data-dike", Invariant($"{dike}")), A("data-left", N(Left)), A("data-right", N(Right)), A("data-bottom", N(AxisTop - 8)),
+            A("data-from", Invariant($"{along.From:0.####}")), A("data-to", Invariant($"{along.To:0.####}")),
             new XElement(Svg0 + "title", Invariant($"Width, lean, visibility and evidence along dike {dike}")), Hatching());
-        svg.Add(HiddenBoxes(along), WidthRow(along, across), LeanRow(along, lean), Lanes(along), EvidenceLanes(along), Axis(along));
+        svg.Add(HiddenBoxes(along), WidthRow(along, across), LeanRow(along, lean), Lanes(along), ShareRows(along), EvidenceLanes(along), Axis(along));
         return svg;
     }
 

@@ -23,6 +23,7 @@ internal sealed partial class ReportPage
             dike,
             [.. findings.Width.Stations.Where(s => s.Dike == dike)],
             [.. findings.Contacts.Contacts.Where(c => c.Dike == dike)],
+            [.. drawings.Chainage.Where(c => c.Dike == dike)],
             c => "#" + RowId(c.Dike, c.Margin.ToString(), c.Segment));
         string toward = FrameWords.Toward(findings, dike), id = Invariant($"strip-{dike}");
         bool lower = findings.Contacts.Dikes.FirstOrDefault(d => d.Dike == dike)?.AIsLower == true;

@@ -2,7 +2,6 @@ namespace CloudStruct.Products.Report;
 
 internal sealed partial class ReportPage
 {
-    // No ">" and no "&": they would be escaped, and a style sheet is not unescaped by readers of HTML.
     private const string Style = """
         :root { --ink: #1a1a1a; --quiet: #525252; --rule: #c9c4ba; --paper: #fffefb; --tint: #f3efe6; --blue: #00548a; --warn: #8a3b00; color-scheme: light; }
         * { box-sizing: border-box; }

@@ -5,10 +5,16 @@ using static CloudStruct.Products.Report.Html;
 
 namespace CloudStruct.Products.Report;
 
-/// <summary>report.html: one page that opens without a network, a script or an installed program.</summary>
+/// <summary>report.html: one page that opens without a network or an installed program.</summary>
 /// <remarks>First screen: what was measured, the numbers that matter with their limits, what is doubtful. Then the strip
-/// along chainage of each dike, from which the rest hangs.</remarks>
-internal sealed partial class ReportPage(Findings findings, RunFacts facts, IReadOnlyList<DrawnPlot> plots)
+/// along chainage of each dike, from which the rest hangs. A script links the views; what it shows stands in the page without
+/// it too, for paper, for readers of text, and where the program was built without Node.js.</remarks>
+/// <param name="findings">Every stage's record.</param>
+/// <param name="drawings">What the sheets need computed.</param>
+/// <param name="facts">About the run.</param>
+/// <param name="plots">Pictures.</param>
+/// <param name="assets">Script and style of the linked page; null where the program was built without them.</param>
+internal sealed partial class ReportPage(Findings findings, DrawingsRecord drawings, RunFacts facts, IReadOnlyList<DrawnPlot> plots, PageAssets? assets)
 {
     /// <summary>The page as UTF-8.</summary>
     public byte[] Bytes() => Page(El("html", At("lang", "en"), Head(), Body()));
@@ -17,9 +23,10 @@ internal sealed partial class ReportPage(Findings findings, RunFacts facts, IRea
         El("meta", At("charset", "utf-8")),
         El("meta", At("name", "viewport"), At("content", "width=device-width, initial-scale=1")),
         // Nothing may be fetched, whatever a later change puts on the page.
-        El("meta", At("http-equiv", "Content-Security-Policy"), At("content", "default-src 'none'; img-src data:; style-src 'unsafe-inline'")),
+        El("meta", At("http-equiv", "Content-Security-Policy"), At("content",
+            "default-src 'none'; img-src data:; style-src 'unsafe-inline'" + (assets == null ? "" : $"; script-src '{assets.ScriptHash}'"))),
         El("title", Clean($"{Name()}: dike and fractures")),
-        El("style", Style));
+        El("style", RawText.Style(Style)), assets == null ? null : El("style", RawText.Style(assets.Style)));
 
     private string Name() => Clean(findings.SurveyName.Length > 0 ? findings.SurveyName : "Survey");
 
@@ -33,6 +40,7 @@ internal sealed partial class ReportPage(Findings findings, RunFacts facts, IRea
             Numbers(),
             Doubts(),
             Strips(),
+            Bench(),
             Contents(),
             Dikes(),
             Faces(),
@@ -41,7 +49,8 @@ internal sealed partial class ReportPage(Findings findings, RunFacts facts, IRea
             Surface(),
             Evidence(),
             Run(),
-            Cautions()));
+            Cautions()),
+        Carried());
 
     private XElement Contents() => El("nav", At("aria-label", "Sections"), El("ul",
         El("li", Link("#dikes", "Dikes")), El("li", Link("#faces", "Faces")), El("li", Link("#sets", "Sets and nets")),
@@ -55,10 +64,10 @@ internal sealed partial class ReportPage(Findings findings, RunFacts facts, IRea
     {
         // Whichever is smaller: with thousands of marks the pixels are.
         bool asSvg = plot.Svg.Length > 0 && plot.Svg.Length <= plot.Png.Length * 2;
-        string data = asSvg ? "data:image/svg+xml;base64," + Convert.ToBase64String(plot.Svg) : "data:image/png;base64," + Convert.ToBase64String(plot.Png);
+        string data = asSvg ? "data:image/svg+xml;base64," + Convert.ToBase64String(plot.Svg) : plot.Svg.Length > 0 ? "data:image/png;base64," + Convert.ToBase64String(plot.Png) : PagePicture.Address(plot.Png);
         string[] kinds = plot.Svg.Length > 0 ? ["svg", "pdf", "png"] : ["png"];
         return El("figure", At("class", plot.Svg.Length > 0 ? "column" : "wide"),
-            El("img", At("src", data), At("alt", Clean($"{plot.Title}. {plot.Words}"))),
+            El("img", At("src", data), At("loading", "lazy"), At("decoding", "async"), At("alt", Clean($"{plot.Title}. {plot.Words}"))),
             El("figcaption", "Files: ", kinds.Select((k, i) => new object[] { i > 0 ? ", " : "", Link($"plots/{plot.Name}.{k}", k.ToUpperInvariant()) })));
     }
 }

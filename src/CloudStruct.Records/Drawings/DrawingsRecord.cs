@@ -29,4 +29,7 @@ public sealed record DrawingsRecord
 
     /// <summary>Cross-sections at stations, dike after dike in order of chainage.</summary>
     public CrossSection[] Sections { get; init; } = [];
+
+    /// <summary>Cover, inclusions and density along each dike, dike after dike in order of chainage.</summary>
+    public ChainageCell[] Chainage { get; init; } = [];
 }

@@ -30,6 +30,7 @@ public sealed class DrawingsStage : IStage<Findings, DrawingSettings, DrawingsRe
             Strips = Strips.Of(input),
             Cloud = Thinning.Of(input, settings.ViewPoints),
             Sections = Sections.Of(input, context),
+            Chainage = ChainageCells.Of(input),
         };
     }
 }
