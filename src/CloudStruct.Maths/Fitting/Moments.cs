@@ -45,6 +45,33 @@ public struct Moments
         zz += weight * dz * dz;
     }
 
+    /// <summary>Adds some points of a cloud with weight 1.</summary>
+    /// <param name="east">East of all points [m].</param>
+    /// <param name="north">North [m].</param>
+    /// <param name="up">Up [m].</param>
+    /// <param name="points">Numbers of the points to add.</param>
+    public void Add(float[] east, float[] north, float[] up, ReadOnlySpan<int> points)
+    {
+        double ox = shift.X, oy = shift.Y, oz = shift.Z;
+        double sw = w, sx = x, sy = y, sz = z, sxx = xx, sxy = xy, sxz = xz, syy = yy, syz = yz, szz = zz;
+        foreach (int i in points)
+        {
+            double dx = east[i] - ox, dy = north[i] - oy, dz = up[i] - oz;
+            sw += 1;
+            sx += dx;
+            sy += dy;
+            sz += dz;
+            sxx += dx * dx;
+            sxy += dx * dy;
+            sxz += dx * dz;
+            syy += dy * dy;
+            syz += dy * dz;
+            szz += dz * dz;
+        }
+
+        (w, x, y, z, xx, xy, xz, yy, yz, zz) = (sw, sx, sy, sz, sxx, sxy, sxz, syy, syz, szz);
+    }
+
     /// <summary>Adds places by Tukey's bisquare of their distance from a plane over a limit. The sums are those of <see cref="Add(double, double, double, double)"/>
     /// place by place, held in registers meanwhile.</summary>
     /// <param name="places">The places.</param>

@@ -1,3 +1,4 @@
+using System.Runtime.Intrinsics;
 using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Maths.Neighbours;
@@ -10,7 +11,7 @@ namespace CloudStruct.Maths.Kernels;
 /// <remarks>Count, centroid and central second moments, in double precision: cells are joined without loss of digits.</remarks>
 public sealed class CellSums
 {
-    private const int Fields = 10;   // n, centroid x y z, central sums xx xy xz yy yz zz
+    private const int Fields = 12;   // n, centroid x y z, central sums xx xy xz yy yz zz, and two zeros up to whole vectors
 
     private readonly SortedGrid grid;
     private readonly double[] sums;
@@ -106,7 +107,7 @@ public sealed class CellSums
             for (int o = from; o < to; o++)
             {
                 ReadOnlySpan<double> s = Of(order[o]);
-                for (int k = 4; k < Fields; k++) total[k] += s[k];
+                for (int k = 4; k < 10; k++) total[k] += s[k];
                 AddCentral(total, s[0], s[1] - total[1], s[2] - total[2], s[3] - total[3]);
             }
 
@@ -138,55 +139,56 @@ public sealed class CellSums
             }
         }
 
+        (int Dy, int Dz)[] all = [.. rows];
         BlockParallel.For(
             Count,
             threads,
             stop,
-            () => new int[rows.Count],
+            () => new int[all.Length],
             (from, to, cursor) =>
             {
                 // A cursor per row of cells: cells are visited in ascending order, so it only moves forward.
                 Array.Fill(cursor, -1);
-                for (int c = from; c < to; c++) Around(c, radiusM, ring, rows, cursor, result);
+                for (int c = from; c < to; c++) Around(c, radiusM, ring, all, cursor, result);
             },
             512);
     }
 
     private void Around(
-        int c, double radiusM, int ring, List<(int Dy, int Dz)> rows, int[] cursor, Action<int, double, Vec3, Symmetric3> result)
+        int c, double radiusM, int ring, (int Dy, int Dz)[] rows, int[] cursor, Action<int, double, Vec3, Symmetric3> result)
     {
         long[] keys = grid.Keys;
         (long ix, long iy, long iz) = Place(grid, keys[c]);
         long x0 = Math.Max(0, ix - ring), x1 = Math.Min(grid.NX - 1, ix + ring);
-        double hx = sums[(Fields * c) + 1], hy = sums[(Fields * c) + 2], hz = sums[(Fields * c) + 3];
-        double n = 0, x = 0, y = 0, z = 0, xx = 0, xy = 0, xz = 0, yy = 0, yz = 0, zz = 0;
+        double hx = sums[(Fields * c) + 1], hy = sums[(Fields * c) + 2], hz = sums[(Fields * c) + 3], reach2 = radiusM * radiusM;
+
+        // Count and first moments, second moments, and the last two of those: a lane each, so that no sum changes its order.
+        Vector256<double> first = default, second = default;
+        Vector128<double> third = default;
         for (int r = 0; r < cursor.Length; r++)
         {
-            long ry = iy + rows[r].Dy, rz = iz + rows[r].Dz;
+            (int stepY, int stepZ) = rows[r];
+            long ry = iy + stepY, rz = iz + stepZ;
             if (ry < 0 || ry >= grid.NY || rz < 0 || rz >= grid.NZ) continue;
-            long row = ((rz * grid.NY) + ry) * grid.NX;
-            int k = cursor[r] < 0 ? SortedGridLookup.LowerBound(keys, row + x0) : cursor[r];
-            while (k < keys.Length && keys[k] < row + x0) k++;
+            long row = ((rz * grid.NY) + ry) * grid.NX, low = row + x0, high = row + x1;
+            int k = cursor[r] < 0 ? SortedGridLookup.LowerBound(keys, low) : cursor[r];
+            while (k < keys.Length && keys[k] < low) k++;
             cursor[r] = k;
-            for (; k < keys.Length && keys[k] <= row + x1; k++)
+            for (; k < keys.Length && keys[k] <= high; k++)
             {
-                ReadOnlySpan<double> s = Of(k);
+                ReadOnlySpan<double> s = sums.AsSpan(Fields * k, Fields);
                 double dx = s[1] - hx, dy = s[2] - hy, dz = s[3] - hz;
-                if ((dx * dx) + (dy * dy) + (dz * dz) > radiusM * radiusM) continue;
+                if ((dx * dx) + (dy * dy) + (dz * dz) > reach2) continue;
                 double w = s[0];
-                n += w;
-                x += w * dx;
-                y += w * dy;
-                z += w * dz;
-                xx += s[4] + (w * dx * dx);
-                xy += s[5] + (w * dx * dy);
-                xz += s[6] + (w * dx * dz);
-                yy += s[7] + (w * dy * dy);
-                yz += s[8] + (w * dy * dz);
-                zz += s[9] + (w * dz * dz);
+                Vector256<double> weight = Vector256.Create(w);
+                first += weight * Vector256.Create(1, dx, dy, dz);
+                second += Vector256.Create(s[4..]) + (weight * Vector256.Create(dx, dx, dx, dy) * Vector256.Create(dx, dy, dz, dy));
+                third += Vector128.Create(s[8..]) + (Vector128.Create(w * dy, w * dz) * Vector128.Create(dz));
             }
         }
 
+        double n = first[0], x = first[1], y = first[2], z = first[3];
+        double xx = second[0], xy = second[1], xz = second[2], yy = second[3], yz = third[0], zz = third[1];
         double mx = x / n, my = y / n, mz = z / n;
         result(
             c,

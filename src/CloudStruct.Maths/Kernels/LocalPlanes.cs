@@ -148,7 +148,7 @@ public sealed class LocalPlanes
         if (radiusM > 2 * grid.CellM)
         {
             // Wider than the shared cells serve: cells of their own.
-            (grid, order) = GridBuilder.Build(x, y, z, (float)(0.5001 * radiusM));
+            (grid, order) = GridBuilder.Build(x, y, z, (float)(0.5001 * radiusM), threads);
             x = Array.ConvertAll(order, i => cloud.X[i]);
             y = Array.ConvertAll(order, i => cloud.Y[i]);
             z = Array.ConvertAll(order, i => cloud.Z[i]);

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Points;
 
 namespace CloudStruct.Maths.Neighbours;
@@ -13,9 +14,9 @@ public static class GridBuilder
     /// <param name="y">North [m].</param>
     /// <param name="z">Up [m].</param>
     /// <param name="cellM">Edge of a cell, above 0. Extents over the edge must stay below two million cells an axis.</param>
+    /// <param name="threads">Workers; the result is the same with any number.</param>
     /// <returns>Order[k] is the old index of the point to be stored at k. Points of one cell keep their old order.</returns>
-    public static (SortedGrid Grid, int[] Order) Build(
-        ReadOnlySpan<float> x, ReadOnlySpan<float> y, ReadOnlySpan<float> z, float cellM)
+    public static (SortedGrid Grid, int[] Order) Build(float[] x, float[] y, float[] z, float cellM, int threads = 1)
     {
         if (x.Length == 0) return (new SortedGrid { CellM = cellM, Starts = [0] }, []);
         (float minX, int nx) = Axis(x, cellM);
@@ -23,39 +24,32 @@ public static class GridBuilder
         (float minZ, int nz) = Axis(z, cellM);
         var shape = new SortedGrid { MinX = minX, MinY = minY, MinZ = minZ, CellM = cellM, NX = nx, NY = ny, NZ = nz };
         var keys = new long[x.Length];
-        for (int i = 0; i < keys.Length; i++)
+        BlockParallel.For(keys.Length, threads, CancellationToken.None, (from, to) =>
         {
-            long ix = SortedGridLookup.CellOf(shape, x[i], minX);
-            long iy = SortedGridLookup.CellOf(shape, y[i], minY);
-            long iz = SortedGridLookup.CellOf(shape, z[i], minZ);
-            keys[i] = (((iz * ny) + iy) * nx) + ix;
-        }
+            for (int i = from; i < to; i++)
+            {
+                long ix = SortedGridLookup.CellOf(shape, x[i], minX);
+                long iy = SortedGridLookup.CellOf(shape, y[i], minY);
+                long iz = SortedGridLookup.CellOf(shape, z[i], minZ);
+                keys[i] = (((iz * ny) + iy) * nx) + ix;
+            }
+        });
 
-        int[] order = RadixOrder.Of(keys);
-        int cells = 0;
+        int[] order = RadixOrder.Of(keys, threads);
+        var cellKeys = new List<long>(order.Length / 4);
+        var starts = new List<int>(order.Length / 4);
         long before = -1;
-        foreach (int i in order)
-        {
-            if (keys[i] == before) continue;
-            before = keys[i];
-            cells++;
-        }
-
-        var cellKeys = new long[cells];
-        var starts = new int[cells + 1];
-        cells = 0;
-        before = -1;
         for (int k = 0; k < order.Length; k++)
         {
             long key = keys[order[k]];
             if (key == before) continue;
             before = key;
-            cellKeys[cells] = key;
-            starts[cells++] = k;
+            cellKeys.Add(key);
+            starts.Add(k);
         }
 
-        starts[cells] = order.Length;
-        return (shape with { Keys = cellKeys, Starts = starts }, order);
+        starts.Add(order.Length);
+        return (shape with { Keys = [.. cellKeys], Starts = [.. starts] }, order);
     }
 
     private static (float Min, int Cells) Axis(ReadOnlySpan<float> values, float cellM)

@@ -1,4 +1,5 @@
 using CloudStruct.Maths.Blocks;
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Maths.Kernels;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
@@ -56,7 +57,10 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
 
         var wide = new WideScatter(input, context);
         float[] planarity = new float[3 * input.Count], roughness = new float[input.Count];
-        for (int i = 0; i < input.Count; i++) planarity[3 * i] = found.Planarity[i];
+        BlockParallel.For(input.Count, context.Threads, context.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++) planarity[3 * i] = found.Planarity[i];
+        });
         wide.ToPoints(wide.Within(roughnessRadius, out _).RmsM, roughness, 1, 0);
         (_, float[] flat) = wide.Within(radii[1], out _);
         wide.ToPoints(flat, planarity, 3, 1);
@@ -130,8 +134,13 @@ public sealed class DescribeStage : IStage<WorkingCloud, DescribeSettings, Descr
 
     private static double Quantile(float[] values, double share)
     {
-        float[] sorted = [.. values.Where(float.IsFinite)];
-        Array.Sort(sorted);
-        return sorted.Length == 0 ? 0 : sorted[(int)(share * (sorted.Length - 1))];
+        var finite = new float[values.Length];
+        int n = 0;
+        foreach (float v in values)
+        {
+            if (float.IsFinite(v)) finite[n++] = v;
+        }
+
+        return n == 0 ? 0 : OrderStatistic.Nth(finite.AsSpan(0, n), (int)(share * (n - 1)));
     }
 }

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Maths.Kernels;
 using CloudStruct.Records.Points;
@@ -49,13 +50,16 @@ internal sealed class WideScatter
     }
 
     /// <summary>Spreads values of the shared cells to their points.</summary>
-    public void ToPoints(float[] ofCell, Span<float> points, int stride, int at)
+    public void ToPoints(float[] ofCell, float[] points, int stride, int at)
     {
         SortedGrid grid = cloud.Grid;
-        for (int c = 0; c < ofCell.Length; c++)
+        BlockParallel.For(ofCell.Length, context.Threads, context.Stop, (from, to) =>
         {
-            for (int i = grid.Starts[c]; i < grid.Starts[c + 1]; i++) points[(i * stride) + at] = ofCell[c];
-        }
+            for (int c = from; c < to; c++)
+            {
+                for (int i = grid.Starts[c]; i < grid.Starts[c + 1]; i++) points[(i * stride) + at] = ofCell[c];
+            }
+        });
     }
 
     // The widest cells that are not wider than wanted.

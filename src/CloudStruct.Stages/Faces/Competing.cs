@@ -57,18 +57,32 @@ internal sealed class Competing
 
     private int Best(int i, int[] label, PlaneFit[] planes)
     {
+        ReadOnlySpan<int> row = surface.NeighboursOf(i);
+        int own = label[i], alike = 0;
+        while (alike < row.Length && row[alike] >= 0 && label[row[alike]] == own) alike++;
+        if (alike == row.Length || row[alike] < 0)
+        {
+            // Within a face or within none: four points of five, and nothing to count.
+            return own != 0 && PointCost(i, planes[own]) <= OutlierCost + (PottsCost * alike) ? own : 0;
+        }
+
+        return Among(i, own, row, label, planes);
+    }
+
+    private int Among(int i, int own, ReadOnlySpan<int> row, int[] label, PlaneFit[] planes)
+    {
         Span<int> seen = stackalloc int[WorkingCloud.K + 2];
         Span<int> votes = stackalloc int[WorkingCloud.K + 2];
         seen[0] = 0;
         votes[0] = 0;
-        int kinds = 1, neighbours = 0, own = label[i];
+        int kinds = 1, neighbours = 0;
         if (own != 0)
         {
             seen[kinds] = own;
             votes[kinds++] = 0;
         }
 
-        foreach (int j in surface.NeighboursOf(i))
+        foreach (int j in row)
         {
             if (j < 0) break;
             neighbours++;

@@ -78,7 +78,7 @@ public sealed class FacesStage : IStage<DescribedCloud, FaceSettings, FaceSet>
                     measured[k] = face;
                 }
             },
-            length: 4);
+            length: 1);
         double refusedM2 = Enumerable.Range(0, pieces.Count).Where(k => refused[k]).Sum(k => measured[k]!.AreaM2);
         FaceSet found = Number(surface, pieces, measured, refused, noise, input.Cloud.Frame.Origin);
         Say(context, found, refused.Count(r => r), refusedM2);

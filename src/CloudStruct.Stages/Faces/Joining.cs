@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Frame;
 
@@ -45,8 +46,12 @@ internal sealed class Joining
             near.Sort();
         }
 
-        for (int i = 0; i < pieces.Label.Length; i++) pieces.Label[i] = into[pieces.Label[i]];
-        pieces.Compact(surface.SmallestPoints);
+        int[] joined = pieces.Label;
+        BlockParallel.For(joined.Length, surface.Threads, surface.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++) joined[i] = into[joined[i]];
+        });
+        pieces.Compact(surface.SmallestPoints, surface.Threads);
         pieces.Refit(surface, scatterM, 3);
     }
 
@@ -54,30 +59,42 @@ internal sealed class Joining
     private int[] Cut(Pieces pieces)
     {
         int[] label = pieces.Label;
-        var fragment = new int[label.Length];
+        pieces.Sort(surface.Threads);
+
+        // Label by label, each fragment named by its first point plus 1; then numbered in the order of those points.
+        var first = new int[label.Length];
+        BlockParallel.For(
+            pieces.Count,
+            surface.Threads,
+            surface.Stop,
+            () => new Stack<int>(),
+            (from, to, stack) =>
+            {
+                for (int k = Math.Max(1, from); k < to; k++)
+                {
+                    foreach (int s in pieces.Of(k))
+                    {
+                        if (first[s] == 0) Flood(s, label, first, stack);
+                    }
+                }
+            },
+            length: 8);
         var planes = new List<PlaneFit> { default };
         var parent = new List<int> { 0 };
-        var stack = new Stack<int>();
+        var number = new int[label.Length];
         for (int s = 0; s < label.Length; s++)
         {
-            if (label[s] == 0 || fragment[s] != 0) continue;
-            int own = planes.Count;
+            if (first[s] != s + 1) continue;
+            number[s] = planes.Count;
             planes.Add(pieces.Planes[label[s]]);
             parent.Add(label[s]);
-            fragment[s] = own;
-            stack.Push(s);
-            while (stack.Count > 0)
-            {
-                int i = stack.Pop();
-                foreach (int j in surface.NeighboursOf(i))
-                {
-                    if (j < 0) break;
-                    if (fragment[j] != 0 || label[j] != label[s]) continue;
-                    fragment[j] = own;
-                    stack.Push(j);
-                }
-            }
         }
+
+        var fragment = new int[label.Length];
+        BlockParallel.For(label.Length, surface.Threads, surface.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++) fragment[i] = first[i] == 0 ? 0 : number[first[i] - 1];
+        });
 
         pieces.Label = fragment;
         pieces.Planes.Clear();
@@ -85,17 +102,41 @@ internal sealed class Joining
         return [.. parent];
     }
 
+    private void Flood(int start, int[] label, int[] first, Stack<int> stack)
+    {
+        int own = label[start];
+        first[start] = start + 1;
+        stack.Push(start);
+        while (stack.Count > 0)
+        {
+            foreach (int j in surface.NeighboursOf(stack.Pop()))
+            {
+                if (j < 0) break;
+                if (label[j] != own || first[j] != 0) continue;
+                first[j] = start + 1;
+                stack.Push(j);
+            }
+        }
+    }
+
     private Moments[] Sums(Pieces pieces)
     {
-        pieces.Sort();
+        pieces.Sort(surface.Threads);
         var sums = new Moments[pieces.Count];
         Vec3 shift = pieces.Label.Length > 0 ? surface.Place(0) : default;   // one shift for all, so that sums can be added
-        for (int k = 0; k < sums.Length; k++)
-        {
-            sums[k] = new Moments(shift);
-            if (k == 0) continue;
-            foreach (int i in pieces.Of(k)) sums[k].Add(surface.X[i], surface.Y[i], surface.Z[i]);
-        }
+        BlockParallel.For(
+            sums.Length,
+            surface.Threads,
+            surface.Stop,
+            (from, to) =>
+            {
+                for (int k = from; k < to; k++)
+                {
+                    sums[k] = new Moments(shift);
+                    if (k > 0) sums[k].Add(surface.X, surface.Y, surface.Z, pieces.Of(k));
+                }
+            },
+            length: 8);
 
         return sums;
     }

@@ -31,7 +31,7 @@ internal sealed class Parting
         if (!(usualSpread > 0)) return;
         bool[] worn = Worn(pieces, usualSpread);
         Parts(pieces, worn);
-        pieces.Compact(surface.SmallestPoints);
+        pieces.Compact(surface.SmallestPoints, surface.Threads);
         pieces.Refit(surface, scatterM, 3);
     }
 

@@ -7,6 +7,8 @@ namespace CloudStruct.Stages.Faces;
 /// <summary>A labelling of the points and the plane of every label. Label 0 is no face; label k has Planes[k].</summary>
 internal sealed class Pieces
 {
+    private const int LeastPerPart = 1 << 15;
+
     public Pieces(int points)
     {
         Label = new int[points];
@@ -34,14 +36,44 @@ internal sealed class Pieces
     public ReadOnlySpan<int> Of(int label) => Members.AsSpan(Starts[label], Starts[label + 1] - Starts[label]);
 
     /// <summary>Sorts the points by label.</summary>
-    public void Sort()
+    /// <param name="threads">Workers, each with a run of the points; the order is the same with any number.</param>
+    public void Sort(int threads)
     {
-        Starts = new int[Planes.Count + 1];
-        foreach (int l in Label) Starts[l + 1]++;
-        for (int k = 0; k < Planes.Count; k++) Starts[k + 1] += Starts[k];
-        if (Members.Length != Label.Length) Members = new int[Label.Length];
-        int[] next = Starts.AsSpan(0, Planes.Count).ToArray();
-        for (int i = 0; i < Label.Length; i++) Members[next[Label[i]]++] = i;
+        int[] label = Label;
+        int labels = Planes.Count, parts = Math.Clamp(label.Length / LeastPerPart, 1, Math.Max(1, threads));
+        int Edge(int part) => (int)((long)label.Length * part / parts);
+        var next = new int[parts * labels];
+        BlockParallel.For(parts, parts, CancellationToken.None, (from, to) =>
+        {
+            for (int part = from; part < to; part++)
+            {
+                Span<int> count = next.AsSpan(part * labels, labels);
+                for (int i = Edge(part), end = Edge(part + 1); i < end; i++) count[label[i]]++;
+            }
+        }, 1);
+        Starts = new int[labels + 1];
+        int sum = 0;
+        for (int k = 0; k < labels; k++)
+        {
+            Starts[k] = sum;
+            for (int part = 0; part < parts; part++)
+            {
+                ref int at = ref next[(part * labels) + k];
+                (at, sum) = (sum, sum + at);
+            }
+        }
+
+        Starts[labels] = sum;
+        if (Members.Length != label.Length) Members = new int[label.Length];
+        int[] members = Members;
+        BlockParallel.For(parts, parts, CancellationToken.None, (from, to) =>
+        {
+            for (int part = from; part < to; part++)
+            {
+                Span<int> place = next.AsSpan(part * labels, labels);
+                for (int i = Edge(part), end = Edge(part + 1); i < end; i++) members[place[label[i]]++] = i;
+            }
+        }, 1);
     }
 
     /// <summary>Refits every plane to its points by bisquare from where it is; sorts first.</summary>
@@ -50,7 +82,7 @@ internal sealed class Pieces
     /// <param name="rounds">Rounds of reweighting.</param>
     public void Refit(Surface surface, double scaleM, int rounds)
     {
-        Sort();
+        Sort(surface.Threads);
         var fitted = new PlaneFit[Planes.Count];
         BlockParallel.For(
             Planes.Count,
@@ -60,15 +92,16 @@ internal sealed class Pieces
             {
                 for (int k = Math.Max(1, from); k < to; k++) fitted[k] = RefitOne(surface, k, scaleM, rounds);
             },
-            length: 16);
+            length: 4);
         for (int k = 1; k < Planes.Count; k++) Planes[k] = fitted[k];
     }
 
     /// <summary>Drops empty and undersized labels and closes the numbering; order is kept.</summary>
     /// <param name="smallest">Fewest points.</param>
-    public void Compact(int smallest)
+    /// <param name="threads">Workers.</param>
+    public void Compact(int smallest, int threads)
     {
-        Sort();
+        Sort(threads);
         var number = new int[Planes.Count];
         int next = 1;
         for (int k = 1; k < Planes.Count; k++)
@@ -79,8 +112,12 @@ internal sealed class Pieces
         }
 
         Planes.RemoveRange(next, Planes.Count - next);
-        for (int i = 0; i < Label.Length; i++) Label[i] = number[Label[i]];
-        Sort();
+        int[] label = Label;
+        BlockParallel.For(label.Length, threads, CancellationToken.None, (from, to) =>
+        {
+            for (int i = from; i < to; i++) label[i] = number[label[i]];
+        });
+        Sort(threads);
     }
 
     private PlaneFit RefitOne(Surface surface, int label, double scaleM, int rounds)

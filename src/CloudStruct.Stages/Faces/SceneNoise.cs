@@ -70,7 +70,7 @@ internal sealed class SceneNoise
                         own[c] = (patch.ScaleM, patch.Points.Length);
                     }
                 },
-                length: 4);
+                length: 1);
             s = Math.Max(surface.LeastScatterM, Middle(own));
             if (Math.Abs(s - now) < 0.02 * now) break;
         }
@@ -104,7 +104,7 @@ internal sealed class SceneNoise
                     records[c] = modes.Record(u, v, pseudo, w);
                 }
             },
-            length: 4);
+            length: 1);
 
         // Residuals scatter less than errors: the plane takes the long waves. The variance that patches are held to starts at that
         // of the residuals and is moved to that of the errors that the laws make of them.
@@ -122,7 +122,7 @@ internal sealed class SceneNoise
                 {
                     for (int c = from; c < to; c++) told[c] = records[c] is { } record ? laws.Weigh(record, variance, Freedom) : null;
                 },
-                length: 4);
+                length: 1);
             NoiseLikelihood[] all = [.. told.OfType<NoiseLikelihood>()];
             if (all.Length == 0) break;
             prior = laws.Learn(all, laws.Flat(variance, Freedom));

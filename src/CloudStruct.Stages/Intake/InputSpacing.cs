@@ -1,3 +1,5 @@
+using System.Runtime.InteropServices;
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Maths.Neighbours;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -13,7 +15,7 @@ internal static class InputSpacing
 
     /// <summary>Median spacing of places that may lie anywhere [m]; 0 when there are too few. The scale is found by trying:
     /// from fine to coarse until most points have neighbours.</summary>
-    public static double OfAny(Vec3[] places, CancellationToken stop)
+    public static double OfAny(Vec3[] places, int threads, CancellationToken stop)
     {
         if (places.Length < Rank + 1) return 0;
         double reach = places.Max(p => (p - places[0]).Length);
@@ -21,7 +23,7 @@ internal static class InputSpacing
         double guess = reach / Math.Sqrt(places.Length) / 8;
         for (int trial = 0; trial < 12; trial++, guess *= 2)
         {
-            List<double> spacing = All(places, guess, _ => true, stop);
+            List<double> spacing = All(places, guess, _ => true, threads, stop);
             if (spacing.Count > places.Length / 2) return Median(spacing);
         }
 
@@ -32,21 +34,22 @@ internal static class InputSpacing
     /// <param name="places">Places within some kilometres of each other; parts of a cloud.</param>
     /// <param name="guessM">Rough spacing, above 0.</param>
     /// <param name="counts">Which places count; the others are neighbours only.</param>
+    /// <param name="threads">Workers.</param>
     /// <param name="stop">Checked now and then.</param>
-    public static double Of(Vec3[] places, double guessM, Func<Vec3, bool> counts, CancellationToken stop) =>
-        places.Length < Rank + 1 ? 0 : Median(All(places, guessM, counts, stop));
+    public static double Of(Vec3[] places, double guessM, Func<Vec3, bool> counts, int threads, CancellationToken stop) =>
+        places.Length < Rank + 1 ? 0 : Median(All(places, guessM, counts, threads, stop));
 
-    private static List<double> All(Vec3[] places, double guessM, Func<Vec3, bool> counts, CancellationToken stop)
+    private static List<double> All(Vec3[] places, double guessM, Func<Vec3, bool> counts, int threads, CancellationToken stop)
     {
         float[] x = Array.ConvertAll(places, p => (float)(p.X - places[0].X));
         float[] y = Array.ConvertAll(places, p => (float)(p.Y - places[0].Y));
         float[] z = Array.ConvertAll(places, p => (float)(p.Z - places[0].Z));
-        (SortedGrid grid, int[] order) = GridBuilder.Build(x, y, z, (float)(3 * guessM));
+        (SortedGrid grid, int[] order) = GridBuilder.Build(x, y, z, (float)(3 * guessM), threads);
         x = Array.ConvertAll(order, i => x[i]);
         y = Array.ConvertAll(order, i => y[i]);
         z = Array.ConvertAll(order, i => z[i]);
         var neighbours = new int[places.Length * Rank];
-        NearestNeighbours.Fill(grid, x, y, z, Rank, neighbours, null, 1, stop);
+        NearestNeighbours.Fill(grid, x, y, z, Rank, neighbours, null, threads, stop);
         var spacing = new List<double>(places.Length);
         for (int i = 0; i < places.Length; i++)
         {
@@ -62,7 +65,6 @@ internal static class InputSpacing
     private static double Median(List<double> values)
     {
         if (values.Count == 0) return 0;
-        values.Sort();
-        return values[values.Count / 2];
+        return OrderStatistic.Nth(CollectionsMarshal.AsSpan(values), values.Count / 2);
     }
 }

@@ -1,3 +1,5 @@
+using CloudStruct.Maths.Blocks;
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
@@ -83,7 +85,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         {
             tiles[i] = new TileFacts(input.Sources[i], capacity);
             int before = seen?.Again.Count ?? 0;
-            tiles[i].Look(map, seen, n => context.Progress(Math.Min(0.5, 0.5 * (done += n) / announced)), context.Stop);
+            tiles[i].Look(map, seen, n => context.Progress(Math.Min(0.5, 0.5 * (done += n) / announced)), context.Threads, context.Stop);
             CheckSteps(tiles[i], map, input.OffsetM);
 
             // All points of a copy have been seen before; the copy is left out as a whole, and its list would be long.
@@ -163,9 +165,9 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         Vec3[] places = tile.Sample.Places;
         (double Low, double High) Range(Func<Vec3, double> of)
         {
-            double[] sorted = [.. places.Select(of)];
-            Array.Sort(sorted);
-            return (sorted[sorted.Length / 50], sorted[sorted.Length - 1 - (sorted.Length / 50)]);
+            double[] values = [.. places.Select(of)];
+            int tail = values.Length / 50;
+            return (OrderStatistic.Nth<double>(values, tail), OrderStatistic.Nth<double>(values, values.Length - 1 - tail));
         }
 
         var (x, y, z) = (Range(p => p.X), Range(p => p.Y), Range(p => p.Z));
@@ -188,7 +190,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
     private static IntakeRecord SecondLook(
         SurveyInput input, IntakeRecord record, TileFacts[] tiles, List<ulong> again, bool join, StageContext context)
     {
-        (Vec3[] seeds, double guess, bool whole) = Guess(record, tiles, context.Stop);
+        (Vec3[] seeds, double guess, bool whole) = Guess(record, tiles, context.Threads, context.Stop);
         var cubes = whole || guess <= 0 ? null : new LocalCubes(seeds, guess);
         var counts = new TileCounts[tiles.Length];
         var dropped = new List<ulong>();
@@ -196,7 +198,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
         long total = Math.Max(1, tiles.Sum(t => t.Read)), done = 0;
         bool several = record.Tiles.Count(t => !t.IsCopy && t.PointsRead > 0) > 1;
         SharedGround? ground = join && several ? new SharedGround(ColumnEdge(guess, seeds)) : null;
-        foreach (PointBlock block in new Pieces(input, record).Read(counts, new DoubledPlaces(again), dropped, context.Stop))
+        foreach (PointBlock block in ReadAhead.Of(new Pieces(input, record).Read(counts, new DoubledPlaces(again), dropped, context.Stop), context.Threads))
         {
             using (block)
             {
@@ -215,7 +217,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
 
         Vec3 size = box.Max - box.Min;
         if (Math.Max(size.X, Math.Max(size.Y, size.Z)) > MostExtentM) throw TooWide(size, tiles[0].Header.Name, tiles[^1].Header.Name);
-        double spacing = cubes?.SpacingM(context.Stop) ?? guess;
+        double spacing = cubes?.SpacingM(context.Threads, context.Stop) ?? guess;
         record = WithCounts(record, counts) with
         {
             DoubledKeys = [.. dropped.Distinct().Select(p => unchecked((long)p)).Order()],
@@ -277,7 +279,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
     };
 
     /// <summary>Sampled places (local) and the spacing they suggest at full density.</summary>
-    private static (Vec3[] Seeds, double GuessM, bool Whole) Guess(IntakeRecord record, TileFacts[] tiles, CancellationToken stop)
+    private static (Vec3[] Seeds, double GuessM, bool Whole) Guess(IntakeRecord record, TileFacts[] tiles, int threads, CancellationToken stop)
     {
         var seeds = new List<Vec3>();
         var guesses = new List<(double GuessM, long Points)>();
@@ -287,7 +289,7 @@ public sealed class IntakeStage : IStage<SurveyInput, IntakeSettings, IPieces>
             if (record.Tiles[i].IsCopy) continue;
             Vec3[] local = [.. tiles[i].Sample.Places.Select(p => p - record.Frame.Origin).Where(p => RobustBox.Inside(p, record.BoxMin, record.BoxMax))];
             seeds.AddRange(local);
-            double spacing = InputSpacing.OfAny([.. local.Distinct()], stop);
+            double spacing = InputSpacing.OfAny([.. local.Distinct()], threads, stop);
             if (spacing > 0) guesses.Add((spacing * Math.Sqrt(tiles[i].Sample.Share), tiles[i].Read));
             whole &= tiles[i].Sample.Share >= 1;
         }

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Frame;
 
 namespace CloudStruct.Stages.Intake;
@@ -51,9 +52,9 @@ internal static class RobustBox
 
     private static (double Low, double High) Range(Vec3[] sample, Func<Vec3, double> of)
     {
-        double[] sorted = Array.ConvertAll(sample, p => of(p));
-        Array.Sort(sorted);
-        return (sorted[(int)(Tail * (sorted.Length - 1))], sorted[(int)Math.Ceiling((1 - Tail) * (sorted.Length - 1))]);
+        double[] values = Array.ConvertAll(sample, p => of(p));
+        int last = values.Length - 1;
+        return (OrderStatistic.Nth<double>(values, (int)(Tail * last)), OrderStatistic.Nth<double>(values, (int)Math.Ceiling((1 - Tail) * last)));
     }
 
     // Median distance to the nearest other of a few thousand points: brute force.

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Points;
 
@@ -38,45 +39,44 @@ internal sealed class TileFacts(IPointSource source, int sampleCapacity)
     /// <param name="map">To map coordinates.</param>
     /// <param name="seen">Takes the fingerprint of every finite point; null when nobody asks.</param>
     /// <param name="progress">Takes the number of points of each block.</param>
+    /// <param name="threads">Workers.</param>
     /// <param name="stop">Checked per block.</param>
-    public void Look(PointMap map, MaybeSeen? seen, Action<int> progress, CancellationToken stop)
+    public void Look(PointMap map, MaybeSeen? seen, Action<int> progress, int threads, CancellationToken stop)
     {
-        foreach (SourceBlock block in source.Read(stop))
+        // Three steps at once: a block is read while the one before is mapped and the one before that is counted.
+        foreach (MappedBlock block in ReadAhead.Of(Mapped(map, threads, stop), threads))
         {
             using (block)
             {
                 stop.ThrowIfCancellationRequested();
                 for (int i = 0; i < block.Count; i++)
                 {
-                    double x = block.X[i], y = block.Y[i], z = block.Z[i];
-                    if (!(double.IsFinite(x) && double.IsFinite(y) && double.IsFinite(z)))
+                    Vec3 place = block.Places[i];
+                    if (double.IsNaN(place.X))
                     {
                         NotANumber++;
                         continue;
                     }
 
-                    Vec3 place = map[x, y, z];
-                    ulong print = Fingerprint.Of(place);
+                    ulong print = block.Prints[i];
                     Content = unchecked(Content + print);
                     seen?.Add(print);
                     Sample.Offer(Read + i, place);
                 }
 
-                if (block.HasColour)
-                {
-                    int largest = LargestColour;
-                    for (int i = 0; i < block.Count; i++)
-                    {
-                        largest = Math.Max(largest, Math.Max(block.Red[i], Math.Max(block.Green[i], block.Blue[i])));
-                    }
-
-                    LargestColour = largest;
-                }
-
+                LargestColour = Math.Max(LargestColour, block.LargestColour);
                 Read += block.Count;
                 Withheld += block.Withheld;
                 progress(block.Count);
             }
+        }
+    }
+
+    private IEnumerable<MappedBlock> Mapped(PointMap map, int threads, CancellationToken stop)
+    {
+        foreach (SourceBlock block in ReadAhead.Of(source.Read(stop), threads))
+        {
+            using (block) yield return new MappedBlock(block, map, threads, stop);
         }
     }
 }

@@ -30,7 +30,7 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         double spacing = settings.SpacingM ?? Spacing(record, settings);
         spacing = Math.Max(spacing, VoxelTable.SmallestEdgeM(Reach(record)));
         VoxelTable voxels = Collect(input, spacing, context);
-        WorkingCloud cloud = Sort(voxels, record, spacing);
+        WorkingCloud cloud = Sort(voxels, record, spacing, context);
         cloud = WithNeighbours(cloud, context);
         if (settings.DropStray) cloud = DropStray(cloud, settings, context);
         context.Progress(1);
@@ -69,11 +69,11 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
     {
         var voxels = new VoxelTable(spacing);
         long done = 0;
-        foreach (PointBlock block in input.Read(context.Stop))
+        foreach (PointBlock block in ReadAhead.Of(input.Read(context.Stop), context.Threads))
         {
             using (block)
             {
-                voxels.Add(block);
+                voxels.Add(block, context.Threads);
                 done += block.Count;
                 context.Progress(0.6 * done / Math.Max(1, input.Record.Points));
             }
@@ -82,32 +82,39 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         return voxels;
     }
 
-    private static WorkingCloud Sort(VoxelTable voxels, IntakeRecord record, double spacing)
+    private static WorkingCloud Sort(VoxelTable voxels, IntakeRecord record, double spacing, StageContext context)
     {
-        int n = voxels.Count;
+        int[] handles = voxels.InOrder(context.Threads);
+        int n = handles.Length;
         float[] x = new float[n], y = new float[n], z = new float[n];
-        for (int i = 0; i < n; i++)
+        BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
         {
-            ref VoxelTable.Voxel v = ref voxels[i];
-            (x[i], y[i], z[i]) = (v.X, v.Y, v.Z);
-        }
+            for (int i = from; i < to; i++)
+            {
+                ref Voxel v = ref voxels[handles[i]];
+                (x[i], y[i], z[i]) = (v.X, v.Y, v.Z);
+            }
+        });
 
-        (SortedGrid grid, int[] order) = GridBuilder.Build(x, y, z, (float)(CellSpacings * spacing));
+        (SortedGrid grid, int[] order) = GridBuilder.Build(x, y, z, (float)(CellSpacings * spacing), context.Threads);
         int coloured = record.HasColour ? n : 0;
         byte[] red = new byte[coloured], green = new byte[coloured], blue = new byte[coloured], cls = new byte[n];
         var support = new int[n];
-        for (int k = 0; k < n; k++)
+        BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
         {
-            ref VoxelTable.Voxel v = ref voxels[order[k]];
-            (x[k], y[k], z[k]) = (v.X, v.Y, v.Z);
-            support[k] = v.Count;
-            cls[k] = v.Class;
-            if (coloured == 0) continue;
-            uint half = (uint)v.Count / 2;
-            red[k] = (byte)((v.Red + half) / v.Count);
-            green[k] = (byte)((v.Green + half) / v.Count);
-            blue[k] = (byte)((v.Blue + half) / v.Count);
-        }
+            for (int k = from; k < to; k++)
+            {
+                ref Voxel v = ref voxels[handles[order[k]]];
+                (x[k], y[k], z[k]) = (v.X, v.Y, v.Z);
+                support[k] = v.Count;
+                cls[k] = v.Class;
+                if (coloured == 0) continue;
+                uint half = (uint)v.Count / 2;
+                red[k] = (byte)((v.Red + half) / v.Count);
+                green[k] = (byte)((v.Green + half) / v.Count);
+                blue[k] = (byte)((v.Blue + half) / v.Count);
+            }
+        });
 
         return new WorkingCloud
         {
@@ -127,7 +134,7 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
 
     private static WorkingCloud WithNeighbours(WorkingCloud cloud, StageContext context)
     {
-        var neighbours = new int[(long)cloud.Count * WorkingCloud.K];
+        int[] neighbours = GC.AllocateUninitializedArray<int>(checked(cloud.Count * WorkingCloud.K));
         NearestNeighbours.Fill(
             cloud.Grid, cloud.X, cloud.Y, cloud.Z, WorkingCloud.K, neighbours, null, context.Threads, context.Stop);
         return cloud with { Neighbours = neighbours, NeighbourRadiusM = 2 * (double)cloud.Grid.CellM };
@@ -170,16 +177,20 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         var place = new int[cloud.Count];
         int n = 0;
         for (int i = 0; i < place.Length; i++) place[i] = dropped[i] ? -1 : n++;
+        var source = new int[n];
+        for (int i = 0; i < place.Length; i++)
+        {
+            if (place[i] >= 0) source[place[i]] = i;
+        }
 
         T[] Kept<T>(T[] column)
         {
             if (column.Length == 0) return column;
-            var kept = new T[n];
-            for (int i = 0; i < place.Length; i++)
+            T[] kept = GC.AllocateUninitializedArray<T>(n);
+            BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
             {
-                if (place[i] >= 0) kept[place[i]] = column[i];
-            }
-
+                for (int k = from; k < to; k++) kept[k] = column[source[k]];
+            });
             return kept;
         }
 
@@ -210,24 +221,26 @@ public sealed class ThinStage : IStage<IPieces, ThinSettings, WorkingCloud>
         };
 
         const int K = WorkingCloud.K;
-        var neighbours = new int[(long)n * K];
+        int[] neighbours = GC.AllocateUninitializedArray<int>(checked(n * K));
         var again = new bool[n];
         BlockParallel.For(
-            place.Length,
+            n,
             context.Threads,
             context.Stop,
             (from, to) =>
             {
-                for (int i = from; i < to; i++)
+                for (int k = from; k < to; k++)
                 {
-                    if (place[i] < 0) continue;
-                    for (int k = 0; k < K; k++)
+                    ReadOnlySpan<int> before = cloud.Neighbours.AsSpan(source[k] * K, K);
+                    Span<int> now = neighbours.AsSpan(k * K, K);
+                    bool lost = false;
+                    for (int m = 0; m < K; m++)
                     {
-                        int j = cloud.Neighbours[((long)i * K) + k];
-                        int moved = j < 0 ? -1 : place[j];
-                        again[place[i]] |= j >= 0 && moved < 0;
-                        neighbours[((long)place[i] * K) + k] = moved;
+                        now[m] = before[m] < 0 ? -1 : place[before[m]];
+                        lost |= now[m] < 0 && before[m] >= 0;
                     }
+
+                    again[k] = lost;
                 }
             });
         NearestNeighbours.Fill(kept.Grid, kept.X, kept.Y, kept.Z, K, neighbours, again, context.Threads, context.Stop);
