@@ -3,6 +3,7 @@ using CloudStruct.Formats.Tables;
 using CloudStruct.Products.Plots;
 using CloudStruct.Products.Tables;
 using CloudStruct.Records.Classes;
+using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Frame;
 using static System.FormattableString;
 using static CloudStruct.Products.Report.Html;
@@ -11,7 +12,7 @@ namespace CloudStruct.Products.Report;
 
 internal sealed partial class ReportPage
 {
-    private const int ShortRows = 12;
+    private const int ShortRows = 12, MostDecisions = 200;
 
     private XElement Dikes() => Section("dikes", "Dikes, contacts and width",
         findings.Width.Dikes.Length == 0 && findings.Contacts.Contacts.Length == 0
@@ -38,10 +39,21 @@ internal sealed partial class ReportPage
         findings.Sets.Sets.Length == 0 ? El("p", "No set was found.") : null,
         ShortTable("sets.csv", "set", "domain", "count", "strike_deg", "dip_deg", "kappa", "cone95_deg", "shape", "strength", "spacing_mean_m", "spacing_low95_m", "spacing_high95_m", "zone"));
 
+    private XElement? Decided()
+    {
+        DecisionOutcome[] all = findings.Decisions.Outcomes;
+        if (all.Length == 0) return null;
+        int applied = all.Count(o => o.Applied);
+        return Section("decided", "Decided by hand",
+            El("p", $"This run read {Say.Count(all.Length, "decision", "decisions")} from decisions.csv and applied {Say.Count(applied)}. What they changed is marked in the column decided of the tables."
+                + (applied < all.Length ? " What could not be applied is among the doubts above, with its reason." : "")),
+            TableOf("decisions.csv", MostDecisions, null, ["line", "action", "applied", "found", "matched_face_id", "domain", "set", "other_set", "dike", "margin", "note", "decided_by", "decided_on"]));
+    }
+
     private XElement Views()
     {
-        DrawnPlot[] views = [.. plots.Where(p => p.Svg.Length == 0)];
-        return Section("views", "Views", views.Length == 0 ? El("p", "No view was drawn.") : null, views.Select(Plot));
+        DrawnPlot[] views = [.. plots.Where(IsMap), .. plots.Where(p => p.Svg.Length == 0 && !IsMap(p))];
+        return Section("views", "Map and views", views.Length == 0 ? El("p", "No view was drawn.") : null, views.Select(Plot));
     }
 
     private XElement Surface() => Section("classes", "Classes of the surface",
@@ -79,11 +91,34 @@ internal sealed partial class ReportPage
             El("li", Clean($"The model is tied to the ground by {kind}. ") + (m.Source == "not stated"
                 ? "Its common errors (tilt, azimuth, scale) are not known; columns with \"total\" hold internal errors only, like the others."
                 : Clean(Invariant($"Common errors, one sigma: tilt {m.TiltSigmaDeg:0.###}°, azimuth {m.AzimuthSigmaDeg:0.###}°, scale {m.ScaleSigma * 100:0.####} % (from {m.Source}). They do not shrink by averaging. Columns with \"total\" in their name add them; the others hold internal errors.")))),
+            findings.Intake.InputSpacingM > 0 ? El("li", Invariant($"Density: points lie {findings.Intake.InputSpacingM * 1000:0.#} mm apart in the files; {d.Cloud.StrayPoints:N0} stray points were dropped.")) : null,
+            Hidden(),
+            Reliability(),
             d.Cloud.Count == 0 ? null : El("li", Invariant($"Noise of the cloud about smooth rock: {d.NoiseM * 1000:0.#} mm. Normals within {d.NormalRadiusM:0.###} m, roughness within {d.RoughnessRadiusM:0.###} m.")),
             findings.Faces.Faces.Length == 0 ? null : El("li", Invariant($"Faces are planes within {findings.Faces.ToleranceM * 1000:0.#} mm; their noise is {findings.Faces.NoiseM * 1000:0.#} mm, correlated over {findings.Faces.NoiseLengthM:0.###} m.")),
             findings.Classes.Dikes.Select(b => El("li", Invariant($"Dike {b.Dike}: inside and outside differ by {(b.ByColour ? "colour" : "texture alone")} with a separation of {b.Separation:F2} (0.5 none, 1 perfect); its margins scatter by {b.MarginWanderM:0.###} m about the slab."))),
             findings.Classes.ThinnestDikeM > 0 ? El("li", Invariant($"A dike thinner than {findings.Classes.ThinnestDikeM:F2} m may have been missed.")) : null),
             findings.Intake.Control.Length == 0 ? null : ShortTable("checkpoints.csv", "id", "role", "dx_m", "dy_m", "dz_m", "along_normal_m"));
+    }
+
+    private XElement? Hidden()
+    {
+        double seen = findings.Width.Dikes.Sum(k => k.SeenLengthM), hidden = findings.Width.Dikes.Sum(k => k.HiddenLengthM);
+        return seen + hidden > 0
+            ? El("li", Invariant($"Hidden: a margin cannot be seen on {hidden:0.#} of {seen + hidden:0.#} m of dike ({100 * hidden / (seen + hidden):0} %); no width is given there."))
+            : null;
+    }
+
+    // Against labels where there are any, else how sure the classes are of themselves.
+    private XElement? Reliability()
+    {
+        ClassSummary[] judged = [.. findings.Classes.Summary.Where(c => c.Iou is { } iou && double.IsFinite(iou))];
+        if (judged.Length > 0)
+            return El("li", "Classes against the check labels (overlap over union): " + string.Join(", ", judged.Select(c => Invariant($"{c.Class.ToString().ToLowerInvariant()} {c.Iou:F2}"))) + ".");
+        byte[] odds = findings.Classes.DikeProbability;
+        if (findings.Classes.Dikes.Length == 0 || odds.Length == 0) return null;
+        double unsure = odds.Count(p => p is > 51 and < 204) / (double)odds.Length;
+        return El("li", Invariant($"Classes: no check labels tell how good they are. On {100 * unsure:0.#} % of the points host and dike are both at least one in five likely."));
     }
 
     private XElement Run() => Section("run", "This run",
@@ -119,7 +154,7 @@ internal sealed partial class ReportPage
         at = [.. at.Where(k => sheet.Rows.Any(r => r[k].Length > 0))];
         bool cut = sheet.Count > most;
         // The linked page shows these with all rows and columns.
-        string plain = file is "faces.csv" or "width.csv" or "contacts.csv" or "sets.csv" ? " plain" : "";
+        string plain = file is "faces.csv" or "width.csv" or "contacts.csv" or "sets.csv" or "decisions.csv" ? " plain" : "";
         return El("div", At("class", "scroll" + plain), At("tabindex", "0"), At("role", "region"), At("aria-label", table.Title), El("table",
             El("caption", table.Title + (cut ? Invariant($", the first {most} of {Say.Count(sheet.Count)} rows") : "") + ": ", Link("tables/" + file, file)),
             El("thead", El("tr", at.Select(k => El("th", At("scope", "col"), sheet.Columns[k].Kind == CsvKind.Text ? At("class", "word") : null, At("title", sheet.Columns[k].Description), Breakable(sheet.Columns[k].Name))))),

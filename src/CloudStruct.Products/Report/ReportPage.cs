@@ -45,6 +45,7 @@ internal sealed partial class ReportPage(Findings findings, DrawingsRecord drawi
             Dikes(),
             Faces(),
             SetsAndNets(),
+            Decided(),
             Views(),
             Surface(),
             Evidence(),
@@ -54,7 +55,7 @@ internal sealed partial class ReportPage(Findings findings, DrawingsRecord drawi
 
     private XElement Contents() => El("nav", At("aria-label", "Sections"), El("ul",
         El("li", Link("#dikes", "Dikes")), El("li", Link("#faces", "Faces")), El("li", Link("#sets", "Sets and nets")),
-        El("li", Link("#views", "Views")), El("li", Link("#classes", "Classes")), El("li", Link("#evidence", "Evidence")),
+        El("li", Link("#views", "Map and views")), El("li", Link("#classes", "Classes")), El("li", Link("#evidence", "Evidence")),
         El("li", Link("#run", "This run")), El("li", Link("#cautions", "Cautions"))));
 
     private XElement Section(string id, string title, params object?[] content) =>
@@ -62,12 +63,15 @@ internal sealed partial class ReportPage(Findings findings, DrawingsRecord drawi
 
     private XElement Plot(DrawnPlot plot)
     {
-        // Whichever is smaller: with thousands of marks the pixels are.
-        bool asSvg = plot.Svg.Length > 0 && plot.Svg.Length <= plot.Png.Length * 2;
-        string data = asSvg ? "data:image/svg+xml;base64," + Convert.ToBase64String(plot.Svg) : plot.Svg.Length > 0 ? "data:image/png;base64," + Convert.ToBase64String(plot.Png) : PagePicture.Address(plot.Png);
+        // Whichever is smaller: with thousands of marks the pixels are. What holds a photograph is best as one.
+        bool photograph = plot.Svg.Length == 0 || IsMap(plot), asSvg = !photograph && plot.Svg.Length <= plot.Png.Length * 2;
+        string data = asSvg ? "data:image/svg+xml;base64," + Convert.ToBase64String(plot.Svg)
+            : photograph ? PagePicture.Address(plot.Png) : "data:image/png;base64," + Convert.ToBase64String(plot.Png);
         string[] kinds = plot.Svg.Length > 0 ? ["svg", "pdf", "png"] : ["png"];
-        return El("figure", At("class", plot.Svg.Length > 0 ? "column" : "wide"),
+        return El("figure", At("class", photograph ? "wide" : "column"),
             El("img", At("src", data), At("loading", "lazy"), At("decoding", "async"), At("alt", Clean($"{plot.Title}. {plot.Words}"))),
             El("figcaption", "Files: ", kinds.Select((k, i) => new object[] { i > 0 ? ", " : "", Link($"plots/{plot.Name}.{k}", k.ToUpperInvariant()) })));
     }
+
+    private static bool IsMap(DrawnPlot plot) => plot.Name.StartsWith("map", StringComparison.Ordinal);
 }

@@ -93,17 +93,18 @@ export function mapView(store: Store): HTMLElement {
   }
 
   function symbols(pen: CanvasRenderingContext2D): void {
-    const chosen = store.face;
+    const chosen = store.face, only = chosen ? '' : store.choice.set;
     // As many as have room: larger faces first (they come by falling area), others as dots once the scale allows.
     const taken = new Set<string>();
-    for (const f of faces) {
+    for (const f of only ? [...faces].sort((a, b) => Number(b.set === only) - Number(a.set === only)) : faces) {
       if (!store.shown[f.index] || f === chosen) continue;
       const x = X(f.at[0]), y = Y(f.at[1]);
       if (x < 0 || y < 0 || x > w || y > h) continue;
       const cell = `${Math.floor(x / 17)},${Math.floor(y / 17)}`;
       if (taken.has(cell)) continue;
       taken.add(cell);
-      symbol(pen, x, y, f.strike - report.turn, f.dip, css(ofSet(f.set)), 7, 1.8);
+      const back = only && f.set !== only;
+      symbol(pen, x, y, f.strike - report.turn, f.dip, back ? '#a8a39a' : css(ofSet(f.set)), back ? 5 : 7, back ? 1 : 1.8);
     }
     if (!chosen) return;
     pen.beginPath();

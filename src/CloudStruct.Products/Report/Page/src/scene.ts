@@ -1,7 +1,7 @@
 // The outcrop in three dimensions: points, outlines of faces, contacts, the chosen face and station.
 import {
   BufferAttribute, BufferGeometry, Color, DoubleSide, Group, LineBasicMaterial, LineDashedMaterial, LineLoop, LineSegments, Line, Mesh, MeshBasicMaterial,
-  PerspectiveCamera, Points, PointsMaterial, Raycaster, Scene, Vector2, Vector3, WebGLRenderer,
+  PerspectiveCamera, Points, PointsMaterial, Raycaster, SRGBColorSpace, Scene, Vector2, Vector3, WebGLRenderer,
 } from 'three';
 import { OrbitControls } from 'three/examples/jsm/controls/OrbitControls.js';
 import { CHOSEN, MARGIN_A, MARGIN_B, ofRock, ofSet, type Rgb } from './colours';
@@ -101,10 +101,14 @@ export function sceneView(store: Store): HTMLElement {
     geometry.getAttribute('color').needsUpdate = true;
   }
 
+  // A set that was chosen by itself stands out; the rest steps back.
+  const marked = () => (store.choice.face < 0 ? store.choice.set : '');
+
   function rebuildFaces(): void {
     const p: number[] = [], c: number[] = [], e: number[] = [], ec: number[] = [];
     shownTriangles = [];
-    const colour = faces.map(f => new Color().setRGB(...(ofSet(f.set).map(v => v / 255) as Rgb), 'srgb'));
+    const only = marked();
+    const colour = faces.map(f => new Color().setRGB(...((only && f.set !== only ? [206, 203, 196] : ofSet(f.set)).map(v => v / 255) as Rgb), SRGBColorSpace));
     owner.forEach((f, t) => {
       if (!store.shown[f]) return;
       shownTriangles.push(f);
@@ -222,9 +226,10 @@ export function sceneView(store: Store): HTMLElement {
     camera.updateProjectionMatrix();
     render();
   }).observe(box);
-  let lastFace = -1, lastStation = store.choice.station;
+  let lastFace = -1, lastSet = '', lastStation = store.choice.station;
   store.listen(change => {
-    if (change !== 'choice') {
+    if (change !== 'choice' || marked() !== lastSet) {
+      lastSet = marked();
       rebuildFaces();
       if (paint === 'set') repaint();
     }

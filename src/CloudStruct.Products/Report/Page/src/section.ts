@@ -1,5 +1,5 @@
 // The cross-section at a station: points within a thin slice, both contacts, the width between them.
-import { INK, MARGIN_A, MARGIN_B, QUIET, css, ofRock } from './colours';
+import { INK, MARGIN_A, MARGIN_B, QUIET, ROCK_NAMES, css, ofRock } from './colours';
 import { el, fitted, niceBelow } from './dom';
 import type { Station, Vec } from './data';
 import { reader, table } from './data';
@@ -129,8 +129,12 @@ export function sectionView(store: Store): HTMLElement {
   }
 
   store.listen(redraw);
+  const there = new Set(cloud.rock), key = el('span', { class: 'rocks' });
+  for (const [code, name] of Object.entries(ROCK_NAMES)) {
+    if (there.has(Number(code))) key.append(el('span', {}, el('i', { style: `background: ${css(ofRock(Number(code)))}`, 'aria-hidden': 'true' }), ` ${name}`));
+  }
   return el('section', { class: 'view section', 'aria-labelledby': 'section-title' },
-    el('div', { class: 'head' }, el('h3', { id: 'section-title' }, 'Cross-section')), canvas, words);
+    el('div', { class: 'head' }, el('h3', { id: 'section-title' }, 'Cross-section'), key), canvas, words);
 }
 
 function halo(pen: CanvasRenderingContext2D, text: string, x: number, y: number, colour: string): void {

@@ -43,7 +43,7 @@ export function tablesView(store: Store): HTMLElement {
   }
   store.listen(change => {
     if (change === 'choice') {
-      const want = store.choice.face >= 0 ? 'faces' : store.choice.contact >= 0 ? 'contacts' : '';
+      const want = store.choice.face >= 0 ? 'faces' : store.choice.contact >= 0 ? 'contacts' : store.choice.set ? 'sets' : '';
       const i = present.findIndex(t => t.name === want);
       if (i >= 0 && i !== open) show(i);
     }
