@@ -28,8 +28,8 @@ export interface Cloud { count: number; xyz: Float32Array; rgb: Uint8Array; rock
 export interface Page { report: Report; faces: Face[]; cloud: Cloud; byId: Map<number, Face> }
 
 export async function load(): Promise<Page> {
-  const report = JSON.parse(new TextDecoder().decode(await unpack('page-data'))) as Report;
-  const planes = report.cloud ? await unpack('page-cloud') : new Uint8Array();
+  const [text, planes] = await Promise.all([unpack('page-data'), unpack('page-cloud')]);
+  const report = JSON.parse(new TextDecoder().decode(text)) as Report;
   const { cloud, outlines, triangles } = decode(report, planes);
   const faces = facesOf(report, outlines, triangles);
   return { report, faces, cloud, byId: new Map(faces.map(f => [f.id, f])) };
@@ -47,10 +47,26 @@ export function reader(t: Table): (row: string[], column: string) => string {
 
 async function unpack(id: string): Promise<Uint8Array> {
   const text = atob(document.getElementById(id)!.textContent!.trim());
+  if (text.length === 0) return new Uint8Array();
   const bytes = new Uint8Array(text.length);
   for (let i = 0; i < text.length; i++) bytes[i] = text.charCodeAt(i);
-  const stream = new Blob([bytes]).stream().pipeThrough(new DecompressionStream('gzip'));
-  return new Uint8Array(await new Response(stream).arrayBuffer());
+  // Written and read by hand: through a blob and a response the browser would pass megabytes in small pieces between processes.
+  const unzip = new DecompressionStream('gzip'), writer = unzip.writable.getWriter(), out = unzip.readable.getReader();
+  const fed = writer.write(bytes).then(() => writer.close());
+  const pieces: Uint8Array[] = [];
+  let length = 0;
+  for (let piece = await out.read(); !piece.done; piece = await out.read()) {
+    pieces.push(piece.value);
+    length += piece.value.length;
+  }
+  await fed;
+  const all = new Uint8Array(length);
+  let at = 0;
+  for (const piece of pieces) {
+    all.set(piece, at);
+    at += piece.length;
+  }
+  return all;
 }
 
 function decode(report: Report, planes: Uint8Array): { cloud: Cloud; outlines: Float32Array[]; triangles: Uint16Array[] } {

@@ -22,7 +22,7 @@ export function sceneView(store: Store): HTMLElement {
   const box = el('div', { class: 'canvas-box' }, canvas);
   let renderer: WebGLRenderer;
   try {
-    renderer = new WebGLRenderer({ canvas, antialias: true, preserveDrawingBuffer: true });
+    renderer = new WebGLRenderer({ canvas, antialias: true });
   } catch {
     return el('section', { class: 'view scene', 'aria-labelledby': 'scene-title' },
       el('div', { class: 'head' }, el('h3', { id: 'scene-title' }, 'In three dimensions')),
@@ -48,21 +48,26 @@ export function sceneView(store: Store): HTMLElement {
   scene.add(points);
 
   // One mesh of all faces, for choosing; face of a triangle by its number.
-  const corners: number[] = [], edges: number[] = [], owner: number[] = [], edgeOwner: number[] = [];
+  const sides = faces.reduce((n, f) => n + f.triangles.length / 3, 0), rims = faces.reduce((n, f) => n + f.outline.length / 3, 0);
+  const corners = new Float32Array(9 * sides), owner = new Uint32Array(sides), edges = new Float32Array(6 * rims), edgeOwner = new Uint32Array(rims);
+  let side = 0, edge = 0;
   for (const f of faces) {
-    for (let i = 0; i < f.triangles.length; i += 3) {
-      corners.push(...at(f, f.triangles[i]!), ...at(f, f.triangles[i + 1]!), ...at(f, f.triangles[i + 2]!));
-      owner.push(f.index);
+    for (let i = 0; i < f.triangles.length; i += 3, side++) {
+      for (let k = 0; k < 3; k++) for (let c = 0; c < 3; c++) corners[9 * side + 3 * k + c] = f.outline[3 * f.triangles[i + k]! + c]!;
+      owner[side] = f.index;
     }
-    const n = f.outline.length / 3;
-    for (let i = 0; i < n; i++) {
-      edges.push(...at(f, i), ...at(f, (i + 1) % n));
-      edgeOwner.push(f.index);
+    for (let i = 0; i < f.outline.length; i += 3, edge++) {
+      const next = (i + 3) % f.outline.length;
+      for (let c = 0; c < 3; c++) {
+        edges[6 * edge + c] = f.outline[i + c]!;
+        edges[6 * edge + 3 + c] = f.outline[next + c]!;
+      }
+      edgeOwner[edge] = f.index;
     }
   }
   const fill = new Mesh(new BufferGeometry(), new MeshBasicMaterial({ side: DoubleSide, transparent: true, opacity: 0.26, vertexColors: true, depthWrite: false, polygonOffset: true, polygonOffsetFactor: -2, polygonOffsetUnits: -2 }));
   const outline = new LineSegments(new BufferGeometry(), new LineBasicMaterial({ vertexColors: true }));
-  let shownTriangles: number[] = [];
+  let shownTriangles: Uint32Array = new Uint32Array();
   scene.add(fill, outline);
 
   const contacts = new Group();
@@ -105,23 +110,19 @@ export function sceneView(store: Store): HTMLElement {
   const marked = () => (store.choice.face < 0 ? store.choice.set : '');
 
   function rebuildFaces(): void {
-    const p: number[] = [], c: number[] = [], e: number[] = [], ec: number[] = [];
-    shownTriangles = [];
     const only = marked();
     const colour = faces.map(f => new Color().setRGB(...((only && f.set !== only ? [206, 203, 196] : ofSet(f.set)).map(v => v / 255) as Rgb), SRGBColorSpace));
-    owner.forEach((f, t) => {
-      if (!store.shown[f]) return;
-      shownTriangles.push(f);
-      for (let k = 0; k < 9; k++) p.push(corners[9 * t + k]!);
-      for (let k = 0; k < 3; k++) c.push(colour[f]!.r, colour[f]!.g, colour[f]!.b);
-    });
-    edgeOwner.forEach((f, s) => {
-      if (!store.shown[f]) return;
-      for (let k = 0; k < 6; k++) e.push(edges[6 * s + k]!);
-      for (let k = 0; k < 2; k++) ec.push(colour[f]!.r * 0.7, colour[f]!.g * 0.7, colour[f]!.b * 0.7);
-    });
-    replace(fill, p, c);
-    replace(outline, e, ec);
+    shownTriangles = picked(owner);
+    replace(fill, shownTriangles, corners, 9, owner, colour, 1);
+    replace(outline, picked(edgeOwner), edges, 6, edgeOwner, colour, 0.7);
+  }
+
+  // Numbers of the triangles or edges whose face is shown.
+  function picked(of: Uint32Array): Uint32Array {
+    let n = 0;
+    const all = new Uint32Array(of.length);
+    of.forEach((f, i) => { if (store.shown[f]) all[n++] = i; });
+    return all.subarray(0, n);
   }
 
   function markChosen(): void {
@@ -214,7 +215,7 @@ export function sceneView(store: Store): HTMLElement {
     const r = canvas.getBoundingClientRect(), ray = new Raycaster();
     ray.setFromCamera(new Vector2(((e.clientX - r.left) / r.width) * 2 - 1, 1 - ((e.clientY - r.top) / r.height) * 2), camera);
     const hit = ray.intersectObject(fill)[0];
-    store.chooseFace(hit?.faceIndex == null ? -1 : (shownTriangles[hit.faceIndex] ?? -1));
+    store.chooseFace(hit?.faceIndex == null ? -1 : (owner[shownTriangles[hit.faceIndex] ?? 0] ?? -1));
   });
   controls.addEventListener('change', render);
   new ResizeObserver(() => {
@@ -267,10 +268,20 @@ function at(f: Face, i: number): [number, number, number] {
   return [f.outline[3 * i]!, f.outline[3 * i + 1]!, f.outline[3 * i + 2]!];
 }
 
-function replace(object: Mesh | LineSegments, positions: number[], colours: number[]): void {
+function replace(object: Mesh | LineSegments, parts: Uint32Array, from: Float32Array, size: number, owner: Uint32Array, colour: Color[], shade: number): void {
+  const positions = new Float32Array(size * parts.length), colours = new Float32Array(size * parts.length);
+  parts.forEach((part, i) => {
+    const c = colour[owner[part]!]!;
+    positions.set(from.subarray(size * part, size * (part + 1)), size * i);
+    for (let k = size * i; k < size * (i + 1); k += 3) {
+      colours[k] = c.r * shade;
+      colours[k + 1] = c.g * shade;
+      colours[k + 2] = c.b * shade;
+    }
+  });
   object.geometry.dispose();
   const g = new BufferGeometry();
-  g.setAttribute('position', new BufferAttribute(new Float32Array(positions), 3));
-  g.setAttribute('color', new BufferAttribute(new Float32Array(colours), 3));
+  g.setAttribute('position', new BufferAttribute(positions, 3));
+  g.setAttribute('color', new BufferAttribute(colours, 3));
   object.geometry = g;
 }
