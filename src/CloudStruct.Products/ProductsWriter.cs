@@ -1,3 +1,5 @@
+using System.Collections.Concurrent;
+using System.Runtime.ExceptionServices;
 using CloudStruct.Formats.Tables;
 using CloudStruct.Products.Clouds;
 using CloudStruct.Products.Map;
@@ -33,47 +35,55 @@ public sealed class ProductsWriter
         WriteTables(files, findings, facts);
         context.Progress(0.05);
 
-        // The cloud waits for the disk, the plots for the processor: together they take little longer than the slower.
-        Task cloud = Start(files, findings, pieces, facts, settings, context with { Progress = done => context.Progress(0.05 + (0.85 * done)) });
-        List<DrawnPlot> plots;
-        try
+        // Longest first: the cloud waits for the disk while the plots take the processor.
+        var work = new List<Action>();
+        if (Cloud(files, findings, pieces, facts, settings, context with { Progress = done => context.Progress(0.05 + (0.85 * done)) }) is { } cloud) work.Add(cloud);
+        work.AddRange(MapWriter.Plan(files, findings, drawings, facts, settings));
+        string model = files.Reserve("model/faces.glb");
+        work.Add(() =>
         {
-            plots = PlotsWriter.Write(files, findings, drawings, facts, context);
-            MapWriter.Write(files, findings, drawings, facts, settings, context.Threads);
-            using Stream model = files.Create("model/faces.glb");
-            ModelWriter.Write(model, findings, drawings, facts);
-        }
-        finally
-        {
-            cloud.GetAwaiter().GetResult();
-        }
-
+            using var stream = new FileStream(model, FileMode.Create, FileAccess.ReadWrite, FileShare.None);
+            ModelWriter.Write(stream, findings, drawings, facts);
+        });
+        (List<Action> sheets, Func<ResultFolder, List<DrawnPlot>> finish) = PlotsWriter.Plan(findings, drawings, facts);
+        work.AddRange(sheets);
+        DoAll(work, context);
+        List<DrawnPlot> plots = finish(files);
         files.Write("report.html", new ReportPage(findings, drawings, facts, plots, PageAssets.Built).Bytes());
         context.Progress(1);
         return files.Written;
     }
 
-    // With one thread the cloud is written before anything else.
-    private static Task Start(
+    // Each piece is made from records alone and writes its own file, so who does which changes no byte.
+    private static void DoAll(List<Action> work, StageContext context)
+    {
+        var options = new ParallelOptions { MaxDegreeOfParallelism = Math.Max(1, context.Threads), CancellationToken = context.Stop };
+        try
+        {
+            Parallel.ForEach(Partitioner.Create(work, EnumerablePartitionerOptions.NoBuffering), options, piece => piece());
+        }
+        catch (AggregateException several)
+        {
+            // The first says what to do; the others mostly follow from it.
+            ExceptionDispatchInfo.Capture(several.InnerExceptions[0]).Throw();
+        }
+    }
+
+    private static Action? Cloud(
         ResultFolder files, Findings findings, IPieces pieces, RunFacts facts, ProductSettings settings, StageContext context)
     {
-        if (settings.Clouds == "none") return Task.CompletedTask;
+        if (settings.Clouds == "none") return null;
         string name = ClassifiedCloudWriter.NameOf(settings);
         CrsInfo crs = findings.Intake.Frame.Crs;
         if (crs is not { HorizontalUnitM: 1, VerticalUnitM: 1 })
             context.Say(new Remark("products", $"{name} is in metres and names no coordinate system, because {crs.Name} is not in metres.", false));
-        Stream stream = files.Create(name);
-        var task = new Task(() =>
+        string path = files.Reserve(name);
+        return () =>
         {
-            using (stream)
-            {
-                if (settings.Clouds == "thinned") ClassifiedCloudWriter.WriteThinned(stream, findings, facts);
-                else ClassifiedCloudWriter.WriteAll(stream, findings, pieces, facts, context, settings.Clouds == "laz");
-            }
-        });
-        if (context.Threads > 1) task.Start();
-        else task.RunSynchronously();
-        return task;
+            using var stream = new FileStream(path, FileMode.Create, FileAccess.ReadWrite, FileShare.None);
+            if (settings.Clouds == "thinned") ClassifiedCloudWriter.WriteThinned(stream, findings, facts);
+            else ClassifiedCloudWriter.WriteAll(stream, findings, pieces, facts, context, settings.Clouds == "laz");
+        };
     }
 
     private static void WriteTables(ResultFolder files, Findings findings, RunFacts facts)

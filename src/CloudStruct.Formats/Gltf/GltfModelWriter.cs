@@ -75,9 +75,8 @@ public static class GltfModelWriter
     }
 
     /// <summary>Linear light of an 8-bit sRGB value (IEC 61966-2-1): what glTF asks of factors and vertex colours.</summary>
-    internal static float Linear(byte value)
-    {
-        double c = value / 255.0;
-        return (float)(c <= 0.04045 ? c / 12.92 : Math.Pow((c + 0.055) / 1.055, 2.4));
-    }
+    internal static float Linear(byte value) => LinearLight[value];
+
+    private static readonly float[] LinearLight = [.. Enumerable.Range(0, 256).Select(v => v / 255.0)
+        .Select(c => (float)(c <= 0.04045 ? c / 12.92 : Math.Pow((c + 0.055) / 1.055, 2.4)))];
 }

@@ -26,7 +26,8 @@ public sealed class NetContours
     /// <param name="density">The counting kernel.</param>
     /// <param name="threads">Workers; never changes a result.</param>
     /// <param name="stop">Cancels.</param>
-    public static NetContours Of(Vec3[] axes, SmoothDensity density, int threads, CancellationToken stop)
+    /// <param name="weights">One an axis; null counts all alike.</param>
+    public static NetContours Of(Vec3[] axes, SmoothDensity density, int threads, CancellationToken stop, double[]? weights = null)
     {
         double[] excess = new double[Columns * Columns];
         BlockParallel.For(Columns, threads, stop, (from, to) =>
@@ -38,7 +39,7 @@ public sealed class NetContours
                 // Two steps past the rim are enough for the curves to cross it.
                 excess[i] = Math.Sqrt((p.X * p.X) + (p.Y * p.Y)) > 1 + (2.0 / Steps)
                     ? double.NaN
-                    : density.Excess(axes, EqualAreaNet.Direction(p));
+                    : weights is null ? density.Excess(axes, EqualAreaNet.Direction(p)) : density.Excess(axes, weights, EqualAreaNet.Direction(p));
             }
         }, 8);
 

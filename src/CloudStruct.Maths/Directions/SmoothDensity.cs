@@ -45,6 +45,26 @@ public readonly record struct SmoothDensity(int N, double K)
         return sum;
     }
 
+    /// <summary>The same for axes that count differently.</summary>
+    /// <param name="axes">Unit vectors of either sign.</param>
+    /// <param name="weights">Above 0, one an axis; their scale does not matter.</param>
+    /// <param name="node">Unit vector of either sign.</param>
+    /// <remarks>A weighted sum of independent axes: uniform axes give W/k with variance Σw² (k/2 - 1)/k². Equal weights give
+    /// the plain form.</remarks>
+    public double Excess(ReadOnlySpan<Vec3> axes, ReadOnlySpan<double> weights, Vec3 node)
+    {
+        double sum = 0, all = 0, squares = 0;
+        for (int i = 0; i < axes.Length; i++)
+        {
+            all += weights[i];
+            squares += weights[i] * weights[i];
+            double e = K * (Math.Abs(axes[i].Dot(node)) - 1);
+            if (e > Negligible) sum += weights[i] * Math.Exp(e);
+        }
+
+        return (sum - (all / K)) / (Math.Sqrt(squares * ((K / 2) - 1)) / K);
+    }
+
     /// <summary>(sum - expected)/σ: standard deviations above uniform.</summary>
     public double Excess(ReadOnlySpan<Vec3> axes, Vec3 node) => (Sum(axes, node) - Expected) / Sigma;
 }

@@ -40,11 +40,10 @@ internal static class MapKey
 
     private static IEnumerable<Entry> Entries(MapDrawing map)
     {
-        foreach ((string kind, string words) in new[] { ("inclined", "dip of a face in the host"), ("vertical", "upright face"), ("horizontal", "face level within 5 deg") })
-        {
-            if (map.Symbols.Any(s => s.Kind == kind && s.Domain is not ("contact" or "dike" or "margin"))) yield return new(words, Symbol(kind, "host"));
-        }
-
+        bool Host(MapSymbol s) => s.Domain is not ("contact" or "dike" or "margin");
+        if (map.Symbols.Any(s => s.Kind == "inclined" && Host(s))) yield return new("dip of a face in the host", Symbol("inclined", "host"));
+        if (map.Symbols.Any(s => s.Kind == "vertical" && s.Domain != "contact")) yield return new("upright face", Symbol("vertical", "host"));
+        if (map.Symbols.Any(s => s.Kind == "horizontal" && s.Domain != "contact")) yield return new("face level within 5 deg", Symbol("horizontal", "host"));
         if (map.Symbols.Any(s => s.Domain is "dike" or "margin")) yield return new("face in the dike or on its contact", Symbol("inclined", "dike"));
         if (map.Symbols.Any(s => s.Domain == "contact")) yield return new("attitude of a contact", Symbol("inclined", "contact"));
         if (map.Lines.Any(l => l.Kind == "contact")) yield return new("contact, traced", Line(false));

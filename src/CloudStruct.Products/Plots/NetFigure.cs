@@ -46,7 +46,7 @@ internal static class NetFigure
         });
     }
 
-    private static void Grid(Pen pen, float x, float y, float radius, bool hasNorth)
+    internal static void Grid(Pen pen, float x, float y, float radius, bool hasNorth)
     {
         for (int azimuth = 0; azimuth < 360; azimuth += 10)
         {
@@ -59,21 +59,26 @@ internal static class NetFigure
         if (hasNorth) pen.Text("N", x, y - radius - TickRoom, Letters.Title, Palette.Ink, Align.Middle);
     }
 
-    private static void Contents(Pen pen, NetDrawing net, float x, float y, float radius)
+    internal static void Contents(Pen pen, NetDrawing net, float x, float y, float radius)
     {
         double[] levels = [.. net.Curves.Where(c => c.Kind == "contour").Select(c => c.Level).Distinct().Order()];
-        foreach (NetCurve curve in net.Curves.Where(c => c.Kind == "contour"))
-        {
-            int rank = Array.IndexOf(levels, curve.Level);
-            byte grey = (byte)Math.Max(0x60, 0xBC - (rank * 0x18));
-            pen.Line(Place(curve.Points, x, y, radius), new SKColor(grey, grey, grey), Math.Min(1.1f, 0.5f + (rank * 0.12f)));
-        }
         float shrink = MathF.Max(0.5f, MathF.Min(1, MathF.Sqrt((float)ManyPoles / Math.Max(1, net.Poles.Length))));
         foreach (NetPole pole in net.Poles.OrderBy(p => p.Group.Length > 0).ThenByDescending(p => p.AreaM2).ThenBy(p => p.FaceId))
         {
             float px = x + (float)(pole.At.X * radius), py = y - (float)(pole.At.Y * radius);
             pen.Mark(Style(net, pole.Group), px, py, Size(pole.AreaM2) * shrink);
         }
+        // Over the poles, on a thin white bed: beneath them the inner contours of a dense set did not show.
+        foreach (NetCurve curve in net.Curves.Where(c => c.Kind == "contour"))
+        {
+            int rank = Array.IndexOf(levels, curve.Level);
+            byte grey = (byte)Math.Max(0x28, 0x98 - (rank * 0x1C));
+            SKPoint[] points = Place(curve.Points, x, y, radius);
+            float line = Math.Min(1, 0.5f + (rank * 0.1f));
+            pen.Line(points, new SKColor(0xFF, 0xFF, 0xFF, 0xB4), line + 0.7f);
+            pen.Line(points, new SKColor(grey, grey, grey), line);
+        }
+
         // White beneath, so that curves stay readable where marks are dense; cones of single poles are many and stay thin.
         HashSet<string> planes = [.. net.Curves.Where(c => c.Kind == "great_circle").Select(c => c.Group)];
         foreach (NetCurve curve in net.Curves.Where(c => c.Kind != "contour"))
@@ -99,7 +104,7 @@ internal static class NetFigure
         return n >= 0 ? Palette.Group(n) : new(Palette.NoSet, MarkShape.Circle, group.Length == 0, []);
     }
 
-    private static KeyEntry[] Key(NetDrawing net)
+    internal static KeyEntry[] Key(NetDrawing net)
     {
         ILookup<string, NetPole> poles = net.Poles.ToLookup(p => Array.IndexOf(net.Groups, p.Group) >= 0 ? p.Group : "");
         IEnumerable<KeyEntry> entries = net.Groups.Select(g => new KeyEntry(
@@ -111,7 +116,7 @@ internal static class NetFigure
         }];
     }
 
-    private static void Entry(Pen pen, KeyEntry entry, float x, float baseline)
+    internal static void Entry(Pen pen, KeyEntry entry, float x, float baseline)
     {
         float y = baseline - (Letters.Body.Size * 0.36f);
         if (entry.HasLine) pen.Line([new(x, y), new(x + KeySymbol - 5, y)], entry.Style.Colour, 1.1f, entry.Style.Dashes);
@@ -132,5 +137,5 @@ internal static class NetFigure
         return char.ToUpperInvariant(text[0]) + text[1..];
     }
 
-    private sealed record KeyEntry(GroupStyle Style, bool HasLine, string Label);
+    internal sealed record KeyEntry(GroupStyle Style, bool HasLine, string Label);
 }

@@ -27,6 +27,13 @@ internal sealed partial class Pen
         Line([.. corners, corners[0]], style.Hollow ? style.Colour : SKColors.White, style.Hollow ? edge * 1.6f : edge);
     }
 
+    /// <summary>A small filled disc.</summary>
+    public void Dot(SKPoint at, float radius, SKColor colour)
+    {
+        using var fill = new SKPaint { Color = colour, IsAntialias = true };
+        canvas.DrawCircle(at, radius, fill);
+    }
+
     // Corners about the middle for a circle of diameter 1, sized to look as heavy as it.
     private static SKPoint[] Corners(MarkShape shape) => shape switch
     {

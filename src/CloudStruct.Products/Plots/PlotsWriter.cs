@@ -1,6 +1,5 @@
 using CloudStruct.Records.Drawings;
 using CloudStruct.Records.Frame;
-using CloudStruct.Records.Stages;
 using static System.FormattableString;
 
 namespace CloudStruct.Products.Plots;
@@ -15,6 +14,13 @@ internal static class PlotsWriter
     public static IEnumerable<Figure> Figures(Findings findings, DrawingsRecord drawings, RunFacts facts)
     {
         foreach (NetDrawing net in drawings.Nets) yield return NetFigure.Make(net, facts.RunId);
+        foreach (NetSheet sheet in drawings.NetSheets) yield return NetSheetFigure.Make(sheet, facts.RunId);
+        foreach (RoseDrawing rose in drawings.Roses) yield return RoseFigure.Make(rose, facts.RunId);
+        foreach (CrossSection section in drawings.Sections.Where(s => s.OnSheet))
+        {
+            if (SectionFigure.Make(section, facts.RunId) is { } figure) yield return figure;
+        }
+
         if (drawings.Map is { } map) yield return Map.MapFigure.Make(map, drawings.Surface, findings.Intake.Frame, facts.RunId);
         foreach (WidthDrawing width in drawings.Widths)
             yield return WidthFigure.Make(width, FrameWords.Toward(findings, width.Dike), facts.RunId, Invariant($"width-dike-{width.Dike}"));
@@ -24,35 +30,37 @@ internal static class PlotsWriter
     public static Figure View(Findings findings, ViewImage view, RunFacts facts) =>
         ViewFigure.Make(view, findings.Intake.Frame.North != North.Model, facts.RunId);
 
-    /// <summary>Makes all sheets at once, writes them below plots/ in their order, and hands them to the report.</summary>
-    public static List<DrawnPlot> Write(ResultFolder files, Findings findings, DrawingsRecord drawings, RunFacts facts, StageContext context)
+    /// <summary>The work of making every sheet, each piece apart from the others, and what writes them once all is done.</summary>
+    public static (List<Action> Work, Func<ResultFolder, List<DrawnPlot>> Finish) Plan(Findings findings, DrawingsRecord drawings, RunFacts facts)
     {
         Figure[] figures = [.. Figures(findings, drawings, facts)];
-        var work = new List<Func<byte[]>>();
-        foreach (ViewImage view in drawings.Views)
+        byte[][] made = new byte[(2 * drawings.Views.Length) + (3 * figures.Length)][];
+        var work = new List<Action>();
+        for (int v = 0; v < drawings.Views.Length; v++)
         {
+            ViewImage view = drawings.Views[v];
             Figure figure = View(findings, view, facts);
-            work.Add(() => FigureFiles.Png(figure, facts.RunId, ViewFigure.PerPoint(view)));
-            work.Add(() => FigureFiles.Png(figure, facts.RunId, ScreenPerPoint));
+            int at = 2 * v;
+            work.Add(() => made[at] = FigureFiles.Png(figure, facts.RunId, ViewFigure.PerPoint(view)));
+            work.Add(() => made[at + 1] = FigureFiles.Png(figure, facts.RunId, ScreenPerPoint));
         }
 
-        foreach (Figure figure in figures)
+        for (int f = 0; f < figures.Length; f++)
         {
-            work.Add(() => FigureFiles.Svg(figure, facts.RunId));
-            work.Add(() => FigureFiles.Pdf(figure, facts));
-            work.Add(() => FigureFiles.Png(figure, facts.RunId));
+            Figure figure = figures[f];
+            int at = (2 * drawings.Views.Length) + (3 * f);
+            work.Add(() => made[at] = FigureFiles.Svg(figure, facts.RunId));
+            work.Add(() => made[at + 1] = FigureFiles.Pdf(figure, facts));
+            work.Add(() => made[at + 2] = FigureFiles.Png(figure, facts.RunId));
         }
 
-        // Each sheet is made from records alone, so who makes which changes no byte.
-        byte[][] made = new byte[work.Count][];
-        Parallel.For(
-            0,
-            made.Length,
-            new ParallelOptions { MaxDegreeOfParallelism = Math.Max(1, context.Threads), CancellationToken = context.Stop },
-            i => made[i] = work[i]());
+        return (work, files => Write(files, drawings.Views, figures, made));
+    }
 
+    private static List<DrawnPlot> Write(ResultFolder files, ViewImage[] views, Figure[] figures, byte[][] made)
+    {
         var drawn = new List<DrawnPlot>();
-        int at = 2 * drawings.Views.Length;
+        int at = 2 * views.Length;
         foreach (Figure figure in figures)
         {
             (byte[] svg, byte[] pdf, byte[] png) = (made[at], made[at + 1], made[at + 2]);
@@ -63,11 +71,10 @@ internal static class PlotsWriter
             drawn.Add(new DrawnPlot(figure.Name, figure.Title, figure.Words, svg, png));
         }
 
-        for (int v = 0; v < drawings.Views.Length; v++)
+        for (int v = 0; v < views.Length; v++)
         {
-            ViewImage view = drawings.Views[v];
-            files.Write($"plots/{view.Name}.png", made[2 * v]);
-            drawn.Add(new DrawnPlot(view.Name, view.Title, view.Sentence, [], made[(2 * v) + 1]));
+            files.Write($"plots/{views[v].Name}.png", made[2 * v]);
+            drawn.Add(new DrawnPlot(views[v].Name, views[v].Title, views[v].Sentence, [], made[(2 * v) + 1]));
         }
 
         return drawn;

@@ -54,15 +54,15 @@ internal static partial class WidthFigure
             return;
         }
         var plain = new GroupStyle(Palette.Ink, MarkShape.Circle, true, []);
-        if (s.Status == StationStatus.Unconstrained) Sparse(pen, f, s, p => p.ApparentM, (x, y) => pen.Mark(plain, x, y, 3.4f));
-        else Sparse(pen, f, s, p => p.VisibleM, (x, y) => AtLeast(pen, x, y));
+        if (s.Status == StationStatus.Unconstrained) Sparse(pen, f, s, p => p.ApparentM, true, (x, y) => pen.Mark(plain, x, y, 3.4f));
+        else Sparse(pen, f, s, p => p.VisibleM, false, (x, y) => AtLeast(pen, x, y));
     }
 
-    // A thin line through all stations, with marks only as close as they can be told apart.
-    private static void Sparse(Pen pen, Frame f, Stretch s, Func<WidthPoint, double?> value, Action<float, float> mark)
+    // Marks only as close as they can be told apart; widths, not lower bounds, are joined by a thin line.
+    private static void Sparse(Pen pen, Frame f, Stretch s, Func<WidthPoint, double?> value, bool joined, Action<float, float> mark)
     {
         SKPoint[] places = [.. s.Points.Where(p => value(p) is { } v && double.IsFinite(v)).Select(p => f.At(p.ChainageM, value(p)!.Value))];
-        pen.Line(places, Palette.Ink, 0.4f);
+        if (joined) pen.Line(places, Palette.Ink, 0.4f);
         float last = float.NegativeInfinity;
         foreach (SKPoint p in places)
         {

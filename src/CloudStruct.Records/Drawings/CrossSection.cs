@@ -11,6 +11,9 @@ public sealed record CrossSection
     /// <summary>Number of the station.</summary>
     public int Station { get; init; }
 
+    /// <summary>Whether this section is also drawn as a sheet of its own.</summary>
+    public bool OnSheet { get; init; }
+
     /// <summary>Chainage [m].</summary>
     public double ChainageM { get; init; }
 

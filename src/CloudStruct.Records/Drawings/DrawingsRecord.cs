@@ -6,6 +6,12 @@ public sealed record DrawingsRecord
     /// <summary>Nets: one per domain with faces, one for contacts.</summary>
     public NetDrawing[] Nets { get; init; } = [];
 
+    /// <summary>Several nets on a sheet: dike against host, every set by itself.</summary>
+    public NetSheet[] NetSheets { get; init; } = [];
+
+    /// <summary>Roses of strikes, one per domain with enough faces.</summary>
+    public RoseDrawing[] Roses { get; init; } = [];
+
     /// <summary>One per dike.</summary>
     public WidthDrawing[] Widths { get; init; } = [];
 

@@ -1,3 +1,5 @@
+using CloudStruct.Records.Width;
+
 namespace CloudStruct.Records.Drawings;
 
 /// <summary>The width of one dike along strike.</summary>
@@ -11,6 +13,15 @@ public sealed record WidthDrawing
 
     /// <summary>Stations in order of chainage.</summary>
     public WidthPoint[] Points { get; init; } = [];
+
+    /// <summary>Steps and tapers.</summary>
+    public WidthTrend[] Trends { get; init; } = [];
+
+    /// <summary>Lean of the margins, stretch by stretch.</summary>
+    public MarginLean[] Leans { get; init; } = [];
+
+    /// <summary>Widths in bins with the laws fitted; null with too few stations.</summary>
+    public WidthHistogram? Histogram { get; init; }
 
     /// <summary>Plain sentence beneath.</summary>
     public string Sentence { get; init; } = "";

@@ -38,9 +38,13 @@ public static class SortedGridLookup
             for (int iz = cz - ring; iz <= cz + ring; iz++)
             {
                 if (iz < 0 || iz >= g.NZ) continue;
+                double gapZ = Gap(z, g.MinZ, cell, iz);
+                if (gapZ * gapZ > bestD2) continue;
                 for (int iy = cy - ring; iy <= cy + ring; iy++)
                 {
                     if (iy < 0 || iy >= g.NY) continue;
+                    double gapY = Gap(y, g.MinY, cell, iy);
+                    if ((gapY * gapY) + (gapZ * gapZ) > bestD2) continue;
                     bool shell = iz == cz - ring || iz == cz + ring || iy == cy - ring || iy == cy + ring;
                     if (shell || ring == 0)
                     {
@@ -56,6 +60,13 @@ public static class SortedGridLookup
         }
 
         return best;
+    }
+
+    // How far a place is at least from the cells of a row along one axis, less what rounding may have moved a point across a border.
+    private static double Gap(double value, double min, double cell, int index)
+    {
+        double low = min + (index * cell);
+        return Math.Max(0, Math.Max(low - value, value - (low + cell)) - (1e-4 * cell));
     }
 
     /// <summary>Indices of all working points within a distance, ascending within each row of cells.</summary>

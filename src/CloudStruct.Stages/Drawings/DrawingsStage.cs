@@ -21,7 +21,9 @@ public sealed class DrawingsStage : IStage<Findings, DrawingSettings, DrawingsRe
         context.Progress(1);
         return new DrawingsRecord
         {
-            Nets = nets,
+            Nets = [.. nets.Select(n => NetForms.In(settings.Net, n))],
+            NetSheets = [.. NetSheets.Of(input, nets).Select(s => NetForms.In(settings.Net, s))],
+            Roses = [.. Roses.Of(input)],
             Widths = widths,
             Views = views,
             Surface = surface,
@@ -29,7 +31,7 @@ public sealed class DrawingsStage : IStage<Findings, DrawingSettings, DrawingsRe
             Faces = Outlines.Of(input.Faces.Faces, context),
             Strips = Strips.Of(input),
             Cloud = Thinning.Of(input, settings.ViewPoints),
-            Sections = Sections.Of(input, context),
+            Sections = Sections.Of(input, settings.SectionStation, context),
             Chainage = ChainageCells.Of(input),
         };
     }

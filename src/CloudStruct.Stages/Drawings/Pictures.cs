@@ -203,7 +203,12 @@ internal static class Pictures
         return rgba;
     }
 
-    private static byte Lit(byte colour, float light) => (byte)Math.Clamp((int)MathF.Round(colour * light), 0, 255);
+    // Neither factor is below 0.
+    private static byte Lit(byte colour, float light)
+    {
+        int lit = (int)((colour * light) + 0.5f);
+        return (byte)(lit > 255 ? 255 : lit);
+    }
 
     /// <summary>One way to colour the points.</summary>
     private sealed record Paint(

@@ -25,17 +25,31 @@ internal static class Sections
     private const int MostSections = 240, MostPoints = 3000;
 
     /// <summary>The sections, dike after dike in order of chainage; of very many stations every second, third, ...</summary>
-    public static CrossSection[] Of(Findings input, StageContext context)
+    /// <param name="input">What was found.</param>
+    /// <param name="onSheet">Number of the station that has a sheet of its own; 0 takes one in the middle of each dike.</param>
+    /// <param name="context">Threads.</param>
+    public static CrossSection[] Of(Findings input, int onSheet, StageContext context)
     {
         Station[] stations = input.Width.Stations;
         int step = (stations.Length + MostSections - 1) / Math.Max(1, MostSections);
-        Station[] shown = [.. stations.Where((_, i) => i % Math.Max(1, step) == 0)];
+        HashSet<Station> sheets = [.. stations.GroupBy(s => s.Dike).Select(d => OnSheet([.. d], onSheet))];
+        Station[] shown = [.. stations.Where((s, i) => i % Math.Max(1, step) == 0 || sheets.Contains(s))];
         var sections = new CrossSection[shown.Length];
         BlockParallel.For(shown.Length, context.Threads, context.Stop, (from, to) =>
         {
-            for (int i = from; i < to; i++) sections[i] = One(input, shown[i]);
+            for (int i = from; i < to; i++) sections[i] = One(input, shown[i]) with { OnSheet = sheets.Contains(shown[i]) };
         }, 1);
         return sections;
+    }
+
+    // The station asked for; else of those measured, or of all, the one nearest the middle.
+    private static Station OnSheet(Station[] own, int wanted)
+    {
+        if (own.FirstOrDefault(s => s.Number == wanted) is { } asked) return asked;
+        Station[] measured = [.. own.Where(s => s.Status == StationStatus.Measured)];
+        if (measured.Length == 0) measured = own;
+        double middle = (own[0].ChainageM + own[^1].ChainageM) / 2;
+        return measured.MinBy(s => Math.Abs(s.ChainageM - middle))!;
     }
 
     private static CrossSection One(Findings input, Station station)

@@ -8,6 +8,9 @@ internal static class Thinning
 {
     private const byte NoColour = 170;
 
+    // A rough surface meets about this many times the cubes of a level one: with it the first count is mostly the last.
+    private const double CubesOfRoughRock = 1.5;
+
     /// <summary>The thinned cloud.</summary>
     /// <param name="input">Cloud, classes and faces.</param>
     /// <param name="most">Points at most.</param>
@@ -15,7 +18,7 @@ internal static class Thinning
     {
         WorkingCloud cloud = input.Described.Cloud;
         if (cloud.Count == 0 || most <= 0) return new ThinnedCloud();
-        double edge = cloud.Count <= most ? 0 : cloud.SpacingM * Math.Sqrt((double)cloud.Count / most);
+        double edge = cloud.Count <= most ? 0 : cloud.SpacingM * Math.Sqrt(CubesOfRoughRock * cloud.Count / most);
         int[] kept = edge > 0 ? Kept(cloud, edge) : [.. Enumerable.Range(0, cloud.Count)];
 
         // How many cubes a rough surface meets is known only after the count.

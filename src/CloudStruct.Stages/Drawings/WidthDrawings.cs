@@ -10,10 +10,11 @@ internal static class WidthDrawings
 {
     /// <summary>The drawings, in order of dikes.</summary>
     public static WidthDrawing[] Of(Findings input) =>
-        [.. input.Contacts.Dikes.Select(d => One(input.Width, d, input.Width.Dikes.FirstOrDefault(s => s.Dike == d.Dike)))];
+        [.. input.Contacts.Dikes.Select(d => One(input, d, input.Width.Dikes.FirstOrDefault(s => s.Dike == d.Dike)))];
 
-    private static WidthDrawing One(WidthRecord width, DikeFrame dike, DikeSummary? summary)
+    private static WidthDrawing One(Findings input, DikeFrame dike, DikeSummary? summary)
     {
+        WidthRecord width = input.Width;
         Station[] own = [.. width.Stations.Where(s => s.Dike == dike.Dike)];
         return new WidthDrawing
         {
@@ -27,6 +28,11 @@ internal static class WidthDrawings
                 s.Status == StationStatus.Unconstrained ? s.ApparentWidthM : null,
                 s.Status is StationStatus.AHidden or StationStatus.BHidden ? s.VisibleWidthM : null,
                 s.Status))],
+            Trends = [.. width.Trends.Where(t => t.Dike == dike.Dike)],
+            Leans = [.. input.Contacts.Contacts.Where(c => c.Dike == dike.Dike).OrderBy(c => c.Margin).ThenBy(c => c.ChainageFromM)
+                .Select(c => new MarginLean(c.Margin, c.ChainageFromM, c.ChainageToM, c.LeanToBDeg, c.LeanLow95Deg, c.LeanHigh95Deg))],
+            Histogram = Histograms.Of(
+                [.. own.Where(s => s.Status == StationStatus.Measured && s.TrueWidthM is not null).Select(s => s.TrueWidthM!.Value)], summary?.Laws ?? []),
             Sentence = Sentence(width, own, summary),
         };
     }

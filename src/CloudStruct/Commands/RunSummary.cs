@@ -18,14 +18,18 @@ internal static class RunSummary
 {
     private static readonly JsonSerializerOptions Layout = new() { WriteIndented = true, NewLine = "\n", Encoder = JavaScriptEncoder.UnsafeRelaxedJsonEscaping };
 
+    // More would push what matters off the screen.
+    private const int MostDikes = 2;
+
+    private static readonly string[] Folders = ["tables", "plots", "map", "model", "clouds"];
+
     /// <summary>About ten lines.</summary>
     public static string Text(MeasureOutcome o)
     {
         Findings f = o.Findings;
         SurveyFrame frame = f.Intake.Frame;
         var text = new StringBuilder();
-        Line(Invariant($"{f.SurveyName}: {f.Intake.Points:N0} points kept, {f.Described.Cloud.Count:N0} working points at {f.Described.Cloud.SpacingM * 100:0.0} cm"));
-        Line("Azimuths from " + (frame.North switch
+        Line(Invariant($"{f.SurveyName}: {f.Intake.Points:N0} points kept, {f.Described.Cloud.Count:N0} working points at {f.Described.Cloud.SpacingM * 100:0.0} cm; azimuths from ") + (frame.North switch
         {
             North.True => Invariant($"true north (convergence {frame.ConvergenceDeg ?? 0:+0.00;-0.00} deg applied)"),
             North.Grid => "grid north",
@@ -39,7 +43,8 @@ internal static class RunSummary
                 : "No dike was looked for");
         }
 
-        foreach (DikeSummary d in f.Width.Dikes) Line(OfDike(d, f.Contacts));
+        foreach (DikeSummary d in f.Width.Dikes.Take(MostDikes)) Line(OfDike(d, f.Contacts));
+        if (f.Width.Dikes.Length > MostDikes) Line(Invariant($"{f.Width.Dikes.Length - MostDikes} more dikes stand in tables/dikes.csv"));
         foreach (IGrouping<FaceDomain, OrientationSet> domain in f.Sets.Sets.GroupBy(s => s.Domain))
         {
             Line("Sets: " + string.Join("; ", domain.Take(6).Select(s =>
@@ -50,8 +55,7 @@ internal static class RunSummary
         if (doubtful > 0) Line(Invariant($"Doubtful: {doubtful} remark{(doubtful == 1 ? "" : "s")}, first: {f.Remarks.First(r => r.Doubtful).Text}"));
         foreach (string l in o.LeftOut) Line($"LEFT OUT: {l}");
         Line(Invariant($"Run {o.RunId}: {o.Times.Sum(t => t.Seconds):0.0} s, peak memory {o.PeakGib:0.00} GiB"));
-        Line("Report: " + Shown(o, "report.html"));
-        Line("Tables: " + Shown(o, "tables"));
+        Line(Invariant($"Report: {Shown(o, "report.html")}; {string.Join(", ", Folders.Where(n => o.Files.Any(x => x.StartsWith(n + "/", StringComparison.Ordinal))))} in {Shown(o, "")}"));
         Line(Cautions.Sentences[0] + " Steep and broken ground can fall.");
         return text.ToString();
 
@@ -69,6 +73,8 @@ internal static class RunSummary
             ["results"] = Shown(o, ""),
             ["report"] = Shown(o, "report.html"),
             ["tables"] = Shown(o, "tables"),
+            ["map"] = Shown(o, "map/structures.gpkg"),
+            ["model"] = Shown(o, "model/faces.glb"),
             ["points_kept"] = f.Intake.Points,
             ["working_points"] = f.Described.Cloud.Count,
             ["faces"] = f.Faces.Faces.Length,

@@ -86,7 +86,7 @@ internal sealed class StageRunner(StageStore store, IBoard board, ulong seed, in
     public T Timed<T>(string name, long points, Func<Action<double>, (T Result, bool Cached)> work)
     {
         stop.ThrowIfCancellationRequested();
-        Action<double> report = board.Begin(name);
+        Action<double> report = board.Begin(name, points);
         var clock = Stopwatch.StartNew();
         (T result, bool cached) = work(report);
         // What a stage left behind would otherwise lie beneath the next one's peak: 1.55 GiB became less for 2 M points.

@@ -81,6 +81,41 @@ internal static class SampleDrawings
         };
     }
 
+    /// <summary>A profile with a step, a taper, leans of both margins, one of them only a line, and a histogram with laws.</summary>
+    public static WidthDrawing Full() => Profile(1, 60, 3) with
+    {
+        Trends =
+        [
+            new WidthTrend { Dike = 1, Kind = WidthTrendKind.Step, ChainageM = new(31, 29, 34), SizeM = new(0.75, 0.6, 0.9), WidthBeforeM = 3, WidthAfterM = 3.75 },
+            new WidthTrend { Dike = 1, Kind = WidthTrendKind.Taper, ChainageM = new(10, 0, 20), SizeM = new(0.4, 0.2, 0.6), WidthBeforeM = 3, WidthAfterM = 3.4 },
+        ],
+        Leans =
+        [
+            new(Records.Contacts.Margin.A, 0, 25, -6, -8, -4), new(Records.Contacts.Margin.A, 20, 60, 4, 1, 7),
+            new(Records.Contacts.Margin.B, 0, 30, -5, -7.5, -2), new(Records.Contacts.Margin.B, 30, 60, null, null, null),
+        ],
+        Histogram = new(2.5, 0.25, [2, 9, 14, 12, 5], [new(ThicknessLawKind.Lognormal, true, [new(2.5, 1), new(3, 13), new(3.7, 3)]), new(ThicknessLawKind.Weibull, false, [new(2.5, 3), new(3.7, 3)])]),
+    };
+
+    /// <summary>A step of rock cut by a leaning dike.</summary>
+    public static CrossSection Section() => new()
+    {
+        Dike = 1,
+        Station = 7,
+        ChainageM = 6,
+        Status = StationStatus.Measured,
+        LookingDeg = 47,
+        SliceM = 0.1,
+        Across = [.. Enumerable.Range(-200, 401).Select(i => i * 0.02f)],
+        Up = [.. Enumerable.Range(-200, 401).Select(i => i < 0 ? 0.6f : 0.1f)],
+        Class = [.. Enumerable.Range(-200, 401).Select(i => (byte)(Math.Abs(i) < 60 ? 65 : 64))],
+        HeightAtM = 1203.4,
+        AtA = new Point2(-1.2, 0.6),
+        AtB = new Point2(1.2, 0.1),
+        LeanToBDeg = 12,
+        Sentence = "True width 2.35 m (95 %: 2.2 to 2.5 m).",
+    };
+
     /// <summary>A small picture with a hole that nothing fills.</summary>
     public static ViewImage View(int width = 600, int height = 240)
     {

@@ -4,7 +4,9 @@ namespace CloudStruct.Runs.Board;
 internal interface IBoard
 {
     /// <summary>A stage starts; the returned action takes the share done, 0 to 1, from any thread.</summary>
-    Action<double> Begin(string stage);
+    /// <param name="stage">Its name.</param>
+    /// <param name="points">Points it works on; 0 when it does not count in points.</param>
+    Action<double> Begin(string stage, long points);
 
     /// <summary>The stage ended.</summary>
     /// <param name="stage">Its name.</param>

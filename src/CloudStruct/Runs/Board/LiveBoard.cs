@@ -14,14 +14,15 @@ internal sealed class LiveBoard(ProgressContext context) : IBoard
         if (Console.IsErrorRedirected) return work(new PlainBoard(Console.Error));
         IAnsiConsole console = AnsiConsole.Create(new AnsiConsoleSettings { Out = new AnsiConsoleOutput(Console.Error) });
         return console.Progress().AutoClear(false).HideCompleted(false)
-            .Columns(new TaskDescriptionColumn { Alignment = Justify.Left }, new ProgressBarColumn { Width = 30 }, new PercentageColumn(), new RemainingTimeColumn())
+            .Columns(new TaskDescriptionColumn { Alignment = Justify.Left }, new ProgressBarColumn { Width = 30 }, new PercentageColumn(), new RateColumn(), new RemainingTimeColumn(), new PeakColumn())
             .Start(context => work(new LiveBoard(context)));
     }
 
     /// <inheritdoc/>
-    public Action<double> Begin(string stage)
+    public Action<double> Begin(string stage, long points)
     {
         ProgressTask task = context.AddTask(stage, maxValue: 1);
+        task.State.Update<long>(RateColumn.Points, _ => points);
         tasks[stage] = task;
         return share => task.Value = Math.Max(task.Value, Math.Clamp(share, 0, 1));
     }

@@ -6,7 +6,7 @@ namespace CloudStruct.Runs.Board;
 internal sealed class PlainBoard(TextWriter to) : IBoard
 {
     /// <inheritdoc/>
-    public Action<double> Begin(string stage) => _ => { };
+    public Action<double> Begin(string stage, long points) => _ => { };
 
     /// <inheritdoc/>
     public void End(string stage, double seconds, string note) =>

@@ -11,7 +11,7 @@ public class FigureTests
 {
     private const string Run = "1f2e3d4c5b6a";
 
-    public static TheoryData<string> Names => ["net-host", "net-contacts", "net-crowded", "net-empty", "width", "width-long", "width-one", "width-hidden"];
+    public static TheoryData<string> Names => ["net-host", "net-contacts", "net-crowded", "net-empty", "width", "width-long", "width-one", "width-hidden", "width-full", "rose", "section"];
 
     [Theory]
     [MemberData(nameof(Names))]
@@ -138,7 +138,53 @@ public class FigureTests
         "net-empty" => NetFigure.Make(new NetDrawing { Name = "n", Title = "Nothing", Sentence = "No pole." }, Run),
         "width" => WidthFigure.Make(SampleDrawings.Profile(1, 60, 3), "toward 047° (NE)", Run, "w"),
         "width-long" => WidthFigure.Make(SampleDrawings.Profile(1, 3000, 12345), "along the centre line", Run, "w"),
+        "width-full" => WidthFigure.Make(SampleDrawings.Full(), "toward 047° (NE)", Run, "w"),
+        "rose" => RoseFigure.Make(new RoseDrawing { Title = "Strikes of 40 faces", Counts = [0, 3, 9, 12, 4, 0, 0, 1, 0, 0, 2, 5, 3, 1, 0, 0, 0, 0], Sentence = "Classes of 10 deg." }, Run),
+        "section" => SectionFigure.Make(SampleDrawings.Section(), Run)!,
         "width-one" => WidthFigure.Make(SampleDrawings.Profile(1, 1, 0.5), "toward 047° (NE)", Run, "w"),
         _ => WidthFigure.Make(new WidthDrawing { Title = "Hidden", Sentence = "All hidden.", Points = [.. Enumerable.Range(0, 5).Select(i => new WidthPoint(i, null, null, null, null, null, Records.Width.StationStatus.BothHidden))] }, "toward 047° (NE)", Run, "w"),
     };
+
+    [Theory]
+    [InlineData("map")]
+    [InlineData("nets")]
+    public void A_sheet_of_page_width_has_a_white_rim(string name)
+    {
+        Findings f = DrawnSamples.Findings();
+        Figure figure = name == "map"
+            ? CloudStruct.Products.Map.MapFigure.Make(DrawnSamples.Drawn(f).Map!, DrawnSamples.Drawn(f).Surface, f.Intake.Frame, Run)
+            : NetSheetFigure.Make(new NetSheet { Name = "nets", Title = "Several", Columns = 2, Nets = [SampleDrawings.Net(), SampleDrawings.ContactNet(), SampleDrawings.Net(5)], Sentence = "Equal area." }, Run);
+        using SKBitmap bitmap = SKBitmap.Decode(FigureFiles.Png(figure, Run));
+        Assert.Equal(2056, bitmap.Width);   // 174 mm at 300 dpi: 2055.1 pixels
+        SKColor[] pixels = bitmap.Pixels;
+        int inked = 0;
+        for (int i = 0; i < pixels.Length; i++)
+        {
+            int x = i % bitmap.Width, y = i / bitmap.Width;
+            if (pixels[i] == SKColors.White) continue;
+            inked++;
+            Assert.True(x >= 12 && y >= 12 && x < bitmap.Width - 12 && y < bitmap.Height - 12, $"{name}: ink at {x}, {y}");
+        }
+
+        Assert.True(inked > 20000);
+    }
+
+    [Fact]
+    public void A_symbol_of_the_map_has_its_tick_down_dip()
+    {
+        // Strike 0 by the right-hand rule dips east: the tick lies right of the bar, the bar runs up and down.
+        using var surface = SKSurface.Create(new SKImageInfo(200, 200));
+        surface.Canvas.Clear(SKColors.White);
+        surface.Canvas.Scale(4);
+        CloudStruct.Products.Map.MapSymbols.Draw(new Pen(surface.Canvas, true), new MapSymbol(default, "vertical", 0, 90, 0, "", "host"), new SKPoint(25, 25));
+        using SKBitmap upright = SKBitmap.FromImage(surface.Snapshot());
+        surface.Canvas.Clear(SKColors.White);
+        CloudStruct.Products.Map.MapSymbols.Draw(new Pen(surface.Canvas, true), new MapSymbol(default, "inclined", 0, 30, 0, "", "host"), new SKPoint(25, 25));
+        using SKBitmap inclined = SKBitmap.FromImage(surface.Snapshot());
+        bool Dark(SKBitmap b, int x, int y) => b.GetPixel(x, y).Red < 90;
+        Assert.True(Dark(inclined, 100, 80) && Dark(inclined, 100, 120));
+        Assert.True(Dark(inclined, 110, 100));
+        Assert.False(Dark(inclined, 90, 100));
+        Assert.True(Dark(upright, 110, 100) && Dark(upright, 90, 100));
+    }
 }

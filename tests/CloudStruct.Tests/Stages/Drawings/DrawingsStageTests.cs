@@ -78,7 +78,8 @@ public class DrawingsStageTests
             Contacts = new ContactsRecord { DomainOfFace = domain, InPlaceOfFace = place },
             Sets = new SetsRecord { Sets = [set], SetOfFace = [.. domain.Select(d => d == FaceDomain.Host ? "host-1" : "")] },
         };
-        NetDrawing[] nets = Run(f).Nets;
+        Assert.Equal(["net-host", "net-host-weighted", "net-dike", "net-dike-weighted"], Run(f).Nets.Select(n => n.Name));
+        NetDrawing[] nets = Run(f, new DrawingSettings { WeightedNets = false }).Nets;
         Assert.Equal(["net-host", "net-dike"], nets.Select(n => n.Name));
         Assert.Equal(19, nets[0].Poles.Length);
         Assert.Equal(["host-1"], nets[0].Groups);

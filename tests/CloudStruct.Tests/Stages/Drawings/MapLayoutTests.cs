@@ -1,6 +1,9 @@
+using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Kernels;
 using CloudStruct.Maths.Planar;
 using CloudStruct.Records.Drawings;
+using CloudStruct.Records.Width;
+using CloudStruct.Stages.Drawings;
 using CloudStruct.Tests.Products;
 
 namespace CloudStruct.Tests.Stages.Drawings;
@@ -75,6 +78,61 @@ public class MapLayoutTests
         Assert.True(section.Across.Length > 0);
         Assert.All(section.Across.Zip(section.Up), p => Assert.True(Math.Abs(p.First) < 20 && Math.Abs(p.Second) < 20));
         if (section is { AtA: { } a, AtB: { } b }) Assert.True(a.X < b.X);
+    }
+
+    [Fact]
+    public void Laws_over_a_histogram_hold_as_many_stations_as_were_measured()
+    {
+        // Densities integrate to 1 (by definition); the bins hold every width once.
+        var random = new Random(3);
+        double[] widths = [.. Enumerable.Range(0, 60).Select(_ => Math.Exp(0.9 + (0.2 * (random.NextDouble() + random.NextDouble() + random.NextDouble() - 1.5))))];
+        ThicknessLaw[] laws = [new(ThicknessLawKind.Lognormal, 0.9, 0.1, 0, 5), new(ThicknessLawKind.Weibull, 9, 2.6, 0, 7), new(ThicknessLawKind.Exponential, 2.5, null, 0, 90)];
+        WidthHistogram h = Histograms.Of(widths, laws)!;
+        Assert.Equal(60, h.Counts.Sum());
+        Assert.InRange(h.Counts.Length, 4, 16);
+        Assert.Equal(ThicknessLawKind.Lognormal, Assert.Single(h.Laws, l => l.Best).Kind);
+        foreach (ThicknessLaw law in laws)
+            Assert.Equal(1, Enumerable.Range(0, 40000).Sum(i => 0.001 * Histograms.Density(law, (i + 0.5) * 0.001)), 1e-3);
+        Assert.Null(Histograms.Of(widths[..5], laws));
+        Assert.Null(Histograms.Of([.. Enumerable.Repeat(2.0, 20)], laws));
+    }
+
+    [Fact]
+    public void Equal_weights_give_the_plain_density_and_scale_does_not_matter()
+    {
+        Records.Frame.Vec3[] axes = [.. Enumerable.Range(0, 30).Select(i => new TrendPlunge(12 * i, (7 * i) % 90).ToVector())];
+        SmoothDensity density = SmoothDensity.Vollmer(30);
+        Records.Frame.Vec3 node = new TrendPlunge(40, 30).ToVector();
+        double plain = density.Excess(axes, node);
+        Assert.Equal(plain, density.Excess(axes, [.. axes.Select(_ => 1.0)], node), 1e-12);
+        Assert.Equal(plain, density.Excess(axes, [.. axes.Select(_ => 7.5)], node), 1e-12);
+        Assert.NotEqual(plain, density.Excess(axes, [.. axes.Select((_, i) => 1.0 + i)], node), 1e-3);
+    }
+
+    [Theory]
+    [InlineData(0, 1)]
+    [InlineData(45, 0.41421356237)]
+    [InlineData(90, 0)]
+    [InlineData(30, 0.57735026919)]
+    public void The_equal_angle_net_puts_a_plunge_at_tan_of_half_its_distance_from_straight_down(double plunge, double radius)
+    {
+        // Stereographic projection: r = tan((90 - plunge)/2): tan 45, tan 22.5, 0, tan 30 (handbook values).
+        Point2 p = EqualAngleNet.OfEqualArea(EqualAreaNet.OfDirection(new TrendPlunge(60, plunge).ToVector()));
+        Assert.Equal(radius, Math.Sqrt((p.X * p.X) + (p.Y * p.Y)), 1e-9);
+        if (plunge < 90) Assert.Equal(60, Math.Atan2(p.X, p.Y) * 180 / Math.PI, 1e-9);
+    }
+
+    [Fact]
+    public void The_recipe_chooses_the_net_and_the_station_of_the_section()
+    {
+        Findings f = DrawnSamples.Findings();
+        DrawingsRecord area = DrawnSamples.Drawn(f), angle = new DrawingsStage().Run(f, new DrawingSettings { Net = NetForm.EqualAngle, SectionStation = 3 }, CloudStruct.Records.Stages.StageContext.Plain());
+        Assert.StartsWith("Equal area", area.Nets[0].Sentence, StringComparison.Ordinal);
+        Assert.StartsWith("Equal angle", angle.Nets[0].Sentence, StringComparison.Ordinal);
+        Assert.NotEqual(area.Nets[0].Poles[0].At, angle.Nets[0].Poles[0].At);
+        Assert.Equal(3, Assert.Single(angle.Sections, s => s.OnSheet).Station);
+        Assert.Single(area.Sections, s => s.OnSheet);
+        Assert.Equal("nets-dike-host", area.NetSheets[0].Name);
     }
 
     private static double TurnOf(MapDrawing map) => map.NorthIsTrue ? 0.42 : 0;
