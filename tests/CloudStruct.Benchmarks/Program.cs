@@ -1,13 +1,25 @@
+using System.Globalization;
 using CloudStruct.Benchmarks;
 
-// Speed of the whole job, as a user meets it: files on disk to results on disk, in a process of its own.
+// Speed of the whole job, as a user meets it: files on disk to results on disk, in a process of its own; and of single kernels on one
+// file, so that other libraries can be run on the same.
 //   dotnet run -c Release --project tests/CloudStruct.Benchmarks -- whole [MILLIONS OF POINTS] [RUNS]
-if (args.Length is 0 or > 3 || args[0] != "whole")
+//   dotnet run -c Release --project tests/CloudStruct.Benchmarks -- make FILE.ply [MILLIONS OF POINTS]
+//   dotnet run -c Release --project tests/CloudStruct.Benchmarks -- kernels FILE.ply [--threads N] [--runs N] [--json]
+double Number(int at, double otherwise) => args.Length > at ? double.Parse(args[at], CultureInfo.InvariantCulture) : otherwise;
+int Option(string name, int otherwise) =>
+    Array.IndexOf(args, name) is int at and >= 0 && at + 1 < args.Length ? int.Parse(args[at + 1], CultureInfo.InvariantCulture) : otherwise;
+switch (args)
 {
-    Console.Error.WriteLine("Name a benchmark: whole [MILLIONS OF POINTS] [RUNS]");
-    return 2;
+    case ["whole", ..] when args.Length <= 3:
+        return WholeRun.Measure((int)(Number(1, 2) * 1e6), (int)Number(2, 1));
+    case ["make", string file, ..] when args.Length <= 3:
+        KernelFile.Write(file, (int)(Number(2, 1) * 1e6));
+        return 0;
+    case ["kernels", string file, ..]:
+        new KernelsRun(file, Option("--threads", Environment.ProcessorCount), Option("--runs", 3)).Measure(args.Contains("--json"));
+        return 0;
+    default:
+        Console.Error.WriteLine("Name a benchmark: whole [MILLIONS] [RUNS], make FILE.ply [MILLIONS], or kernels FILE.ply [--threads N] [--runs N] [--json]");
+        return 2;
 }
-
-double millions = args.Length > 1 ? double.Parse(args[1], System.Globalization.CultureInfo.InvariantCulture) : 2;
-int runs = args.Length > 2 ? int.Parse(args[2], System.Globalization.CultureInfo.InvariantCulture) : 1;
-return WholeRun.Measure((int)(millions * 1e6), runs);

@@ -15,6 +15,8 @@ internal sealed class LasSource : IPointSource
     // About one block of points in the shorter formats, so that a block takes one or two reads.
     private const int BufferBytes = 1 << 21;
 
+    private const int TileRecords = 1024;
+
     private readonly string path;
     private readonly LasHeader las;
 
@@ -58,7 +60,7 @@ internal sealed class LasSource : IPointSource
                     if (file.Read(at, bytes) < bytes.Length)
                         throw new InputException(Invariant($"{las.Name}, byte {at}"), "the file became shorter while it was read",
                             Invariant($"{las.FileBytes} bytes when opened"), "Wait until it is fully written, then run again");
-                    Unpack(bytes, n, block);
+                    UnpackByTiles(bytes, n, block);
                     at += bytes.Length;
                     left -= n;
                 }
@@ -83,7 +85,7 @@ internal sealed class LasSource : IPointSource
                 for (int done = 0; done < count;)
                 {
                     int n = Math.Min(count - done, SourceBlock.Capacity - block.Count - block.Withheld);
-                    Unpack(records.AsSpan(done * las.RecordBytes, n * las.RecordBytes), n, block);
+                    UnpackByTiles(records.AsSpan(done * las.RecordBytes, n * las.RecordBytes), n, block);
                     done += n;
                     if (block.Count + block.Withheld < SourceBlock.Capacity) continue;
                     SourceBlock full = block;
@@ -116,6 +118,16 @@ internal sealed class LasSource : IPointSource
         }
     }
 
+    // Records of a tile stay in the nearest cache while column after column is taken out of them.
+    private void UnpackByTiles(ReadOnlySpan<byte> records, int n, SourceBlock block)
+    {
+        for (int done = 0; done < n; done += TileRecords)
+        {
+            int some = Math.Min(TileRecords, n - done);
+            Unpack(records.Slice(done * las.RecordBytes, some * las.RecordBytes), some, block);
+        }
+    }
+
     // Column by column: each loop has one type, one offset and one destination.
     private void Unpack(ReadOnlySpan<byte> records, int n, SourceBlock block)
     {
@@ -137,15 +149,21 @@ internal sealed class LasSource : IPointSource
 
     private void Coordinates(ReadOnlySpan<byte> records, int at, double scale, double offset, Span<double> to)
     {
-        int step = las.RecordBytes;
-        for (int i = 0; i < to.Length; i++, at += step)
-            to[i] = (BinaryPrimitives.ReadInt32LittleEndian(records.Slice(at, 4)) * scale) + offset;
+        unchecked
+        {
+            int step = las.RecordBytes;
+            for (int i = 0; i < to.Length; i++, at += step)
+                to[i] = (BinaryPrimitives.ReadInt32LittleEndian(records[at..]) * scale) + offset;
+        }
     }
 
     private void Shorts(ReadOnlySpan<byte> records, int at, Span<ushort> to)
     {
-        int step = las.RecordBytes;
-        for (int i = 0; i < to.Length; i++, at += step) to[i] = BinaryPrimitives.ReadUInt16LittleEndian(records.Slice(at, 2));
+        unchecked
+        {
+            int step = las.RecordBytes;
+            for (int i = 0; i < to.Length; i++, at += step) to[i] = BinaryPrimitives.ReadUInt16LittleEndian(records[at..]);
+        }
     }
 
     private bool Classes(ReadOnlySpan<byte> records, Span<byte> to)
