@@ -42,7 +42,7 @@ export function sectionView(store: Store): HTMLElement {
     if (!frame) return;
     const { station, place, across, half } = frame, along = [-across[1], across[0]] as const;
     // Half a slice: thick enough for a line of points, thin enough to be one place.
-    const slice = Math.max(0.08, 1.5 * report.spacing);
+    const slice = Math.max(0.04, 1.2 * report.spacing);
     const scale = Math.min(w / (2 * half), h / (1.7 * half)), zero = h * 0.55;
     const X = (u: number) => w / 2 + u * scale, Y = (z: number) => zero - (z - place[2]) * scale;
     let seen = 0;
