@@ -26,7 +26,7 @@ export function mapView(store: Store): HTMLElement {
     pen.fillStyle = '#fff';
     pen.fillRect(0, 0, w, h);
     pen.drawImage(raster(), 0, 0, w, h);
-    grid(pen);
+    grid(pen, false);
     for (const t of report.traces) polyline(pen, t.line, t.margin === 'A' ? MARGIN_A : MARGIN_B, 2.2, t.margin === 'B' ? [7, 3] : []);
     for (const d of report.dikes) polyline(pen, d.line, INK, 1, [2, 3]);
     symbols(pen);
@@ -35,6 +35,7 @@ export function mapView(store: Store): HTMLElement {
       if (t.dike === contact.dike && t.margin === contact.margin) polyline(pen, t.line.filter(p => p[3] >= contact.from && p[3] <= contact.to), CHOSEN, 5, []);
     }
     station(pen);
+    grid(pen, true);
     scaleBar(pen);
     if (report.north !== 'model') arrow(pen);
     canvas.dataset['face'] = String(store.face?.id ?? '');
@@ -64,7 +65,7 @@ export function mapView(store: Store): HTMLElement {
     return at;
   }
 
-  function grid(pen: CanvasRenderingContext2D): void {
+  function grid(pen: CanvasRenderingContext2D, figures: boolean): void {
     const step = niceBelow(110 / scale), [ox, oy] = report.origin;
     pen.font = '11px system-ui, sans-serif';
     pen.strokeStyle = 'rgb(26 26 26 / 0.22)';
@@ -81,13 +82,13 @@ export function mapView(store: Store): HTMLElement {
     };
     const digits = Math.max(0, -Math.floor(Math.log10(step)));
     for (let e = Math.ceil((mx - w / 2 / scale + ox) / step) * step; e < mx + w / 2 / scale + ox; e += step) {
-      stroke(pen, X(e - ox), 0, X(e - ox), h);
-      if (X(e - ox) > 40 && X(e - ox) < w - 40) label(e.toFixed(digits), X(e - ox), h - 5);
+      if (!figures) stroke(pen, X(e - ox), 0, X(e - ox), h);
+      else if (X(e - ox) > 40 && X(e - ox) < w - 40) label(e.toFixed(digits), X(e - ox), h - 5);
     }
     for (let n = Math.ceil((my - h / 2 / scale + oy) / step) * step; n < my + h / 2 / scale + oy; n += step) {
-      stroke(pen, 0, Y(n - oy), w, Y(n - oy));
+      if (!figures) stroke(pen, 0, Y(n - oy), w, Y(n - oy));
       pen.textAlign = 'left';
-      if (Y(n - oy) > 60 && Y(n - oy) < h - 30) label(n.toFixed(digits), 4, Y(n - oy) + 4);
+      if (figures && Y(n - oy) > 60 && Y(n - oy) < h - 30) label(n.toFixed(digits), 4, Y(n - oy) + 4);
       pen.textAlign = 'center';
     }
   }
@@ -125,7 +126,8 @@ export function mapView(store: Store): HTMLElement {
     symbol(pen, x, y, chosen.strike - report.turn, chosen.dip, INK, 9, 2.4);
   }
 
-  // FGDC-STD-013-2006, section 4, joints: a strike line with a filled bar down dip; a cross for a level plane.
+  // As on the program's map sheet, after FGDC-STD-013-2006: a bar along strike with a tick down dip, to both sides for an upright
+  // plane, and a cross in a circle for a level one.
   function symbol(pen: CanvasRenderingContext2D, x: number, y: number, strikeGrid: number, dip: number, colour: string, r: number, thick: number): void {
     const a = (strikeGrid * Math.PI) / 180, sx = Math.sin(a), sy = -Math.cos(a), dx = Math.cos(a), dy = Math.sin(a);
     for (const [style, width] of [['rgb(255 255 255 / 0.9)', thick + 2.2], [colour, thick]] as const) {
@@ -134,12 +136,14 @@ export function mapView(store: Store): HTMLElement {
       if (dip < 5) {
         stroke(pen, x - r * 0.7, y, x + r * 0.7, y);
         stroke(pen, x, y - r * 0.7, x, y + r * 0.7);
+        pen.beginPath();
+        pen.arc(x, y, r * 0.7, 0, 2 * Math.PI);
+        pen.stroke();
         continue;
       }
       stroke(pen, x - r * sx, y - r * sy, x + r * sx, y + r * sy);
-      pen.lineWidth = width + 1.2;
-      const back = dip > 87 ? -0.45 : 0;
-      stroke(pen, x + back * r * dx, y + back * r * dy, x + 0.5 * r * dx, y + 0.5 * r * dy);
+      const back = dip > 87 ? -0.6 : 0;
+      stroke(pen, x + back * r * dx, y + back * r * dy, x + 0.6 * r * dx, y + 0.6 * r * dy);
     }
   }
 
