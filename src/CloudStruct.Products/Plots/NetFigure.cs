@@ -68,15 +68,12 @@ internal static class NetFigure
             float px = x + (float)(pole.At.X * radius), py = y - (float)(pole.At.Y * radius);
             pen.Mark(Style(net, pole.Group), px, py, Size(pole.AreaM2) * shrink);
         }
-        // Over the poles, on a thin white bed: beneath them the inner contours of a dense set did not show.
+        // Over the poles, as thin as prints: beneath them the inner contours of a dense set did not show, on a white bed they hid it.
         foreach (NetCurve curve in net.Curves.Where(c => c.Kind == "contour"))
         {
             int rank = Array.IndexOf(levels, curve.Level);
-            byte grey = (byte)Math.Max(0x28, 0x98 - (rank * 0x1C));
-            SKPoint[] points = Place(curve.Points, x, y, radius);
-            float line = Math.Min(1, 0.5f + (rank * 0.1f));
-            pen.Line(points, new SKColor(0xFF, 0xFF, 0xFF, 0xB4), line + 0.7f);
-            pen.Line(points, new SKColor(grey, grey, grey), line);
+            byte grey = (byte)Math.Max(0x30, 0x90 - (rank * 0x18));
+            pen.Line(Place(curve.Points, x, y, radius), new SKColor(grey, grey, grey), Math.Min(0.65f, 0.4f + (rank * 0.05f)));
         }
 
         // White beneath, so that curves stay readable where marks are dense; cones of single poles are many and stay thin.
