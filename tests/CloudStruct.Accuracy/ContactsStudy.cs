@@ -9,6 +9,7 @@ using CloudStruct.Simulate;
 using CloudStruct.Stages.Classify;
 using CloudStruct.Stages.Contacts;
 using CloudStruct.Stages.Describe;
+using CloudStruct.Stages.Faces;
 using CloudStruct.Stages.Intake;
 using CloudStruct.Stages.Thin;
 using CloudStruct.Stages.Width;
@@ -16,7 +17,7 @@ using static System.FormattableString;
 
 namespace CloudStruct.Accuracy;
 
-/// <summary>Contacts and widths behind the real stages before them: intake, thin, describe, classify without labels.</summary>
+/// <summary>Contacts and widths behind the real stages before them: intake, thin, describe, classify without labels, faces.</summary>
 public sealed class ContactsStudy : IStudy
 {
     /// <inheritdoc/>
@@ -35,8 +36,8 @@ public sealed class ContactsStudy : IStudy
                 WorkingCloud cloud = new ThinStage().Run(pieces, new ThinSettings(), context);
                 DescribedCloud described = new DescribeStage().Run(cloud, new DescribeSettings(), context);
                 ClassifiedCloud classes = new ClassifyStage().Run(new ClassifyInput(described, new HandLabels()), new ClassifySettings(), context);
-                var none = new FaceSet { FaceOfPoint = new int[cloud.Count] };
-                ContactsRecord contacts = new ContactsStage().Run(new ContactsInput(described, classes, none, []), new ContactSettings(), context);
+                FaceSet faces = new FacesStage().Run(described, new FaceSettings(), context);
+                ContactsRecord contacts = new ContactsStage().Run(new ContactsInput(described, classes, faces, []), new ContactSettings(), context);
                 WidthRecord width = new WidthStage().Run(new WidthInput(described, classes, contacts), new WidthSettings(), context);
                 SimulatedOutcrop local = outcrop with { Origin = cloud.Frame.Origin };   // places of the records count from the survey's origin
                 var one = new WidthScore();

@@ -105,6 +105,7 @@ public sealed class SetsStudy : IStudy
         DescribedCloud described = new DescribeStage().Run(cloud, new DescribeSettings(), context);
         FaceSet found = new FacesStage().Run(described, new FaceSettings(), context);
         int[] nearest = TruthOfPoints.Nearest(cloud, rock);
+        int[][] dike = [.. found.Faces.Select(_ => new int[rock.Dikes.Length + 1])];
         int[,] votes = new int[found.Faces.Length, 4];
         for (int i = 0; i < cloud.Count; i++)
         {
@@ -118,6 +119,7 @@ public sealed class SetsStudy : IStudy
                 _ => 3,
             };
             votes[found.FaceOfPoint[i] - 1, kind]++;
+            if (kind is 1 or 2) dike[found.FaceOfPoint[i] - 1][rock.TrueDike[nearest[i]]]++;
         }
 
         FaceDomain[] kinds = [FaceDomain.Host, FaceDomain.Dike, FaceDomain.Margin, FaceDomain.Unknown];
@@ -125,6 +127,7 @@ public sealed class SetsStudy : IStudy
         var contacts = new ContactsRecord
         {
             DomainOfFace = [.. most.Select(k => kinds[k])],
+            DikeOfFace = [.. most.Select((k, f) => k is 1 or 2 ? Array.IndexOf(dike[f], dike[f].Max()) : 0)],
             InPlaceOfFace = [.. most.Select(k => k == 3 ? InPlace.No : InPlace.Yes)],
         };
         return new SetsInput(cloud.Frame, found, contacts, described);
@@ -136,6 +139,7 @@ public sealed class SetsStudy : IStudy
         int[] number = new int[rock.Faces.Length + 1];
         var faces = new List<Face>();
         var domains = new List<FaceDomain>();
+        var dikes = new List<int>();
         var places = new List<InPlace>();
         var d = new Draws(seed, 32, 0);
         foreach (SimulatedFace f in kept)
@@ -143,6 +147,7 @@ public sealed class SetsStudy : IStudy
             faces.Add(DrawnSets.Perturbed(f.Normal, f.Middle - rock.Origin, f.AreaM2, faces.Count + 1, ref d));
             number[f.Id] = faces.Count;
             domains.Add(f.Kind switch { FaceKind.Joint => FaceDomain.Host, FaceKind.CoolingJoint => FaceDomain.Dike, FaceKind.Contact => FaceDomain.Margin, _ => FaceDomain.Host });
+            dikes.Add(f.Dike);
             places.Add(f.InPlace ? InPlace.Yes : InPlace.No);
         }
 
@@ -152,6 +157,7 @@ public sealed class SetsStudy : IStudy
             int beside = d.NextBelow(kept.Length);
             faces.Add(DrawnSets.Perturbed(DrawnSets.Random(ref d), faces[beside].Middle + (DrawnSets.Random(ref d) * 0.5), 0.03 + (0.1 * d.NextUnit()), faces.Count + 1, ref d));
             domains.Add(domains[beside]);
+            dikes.Add(dikes[beside]);
             places.Add(places[beside]);
         }
 
@@ -165,32 +171,49 @@ public sealed class SetsStudy : IStudy
         return new SetsInput(
             new SurveyFrame { Crs = rock.Crs, Origin = rock.Origin },
             new FaceSet { Faces = [.. faces], FaceOfPoint = [.. rock.TrueFace.Select(t => number[t])], NoiseM = rock.NoiseM, SmallestFaceM2 = SmallestM2 },
-            new ContactsRecord { DomainOfFace = [.. domains], InPlaceOfFace = [.. places] },
+            new ContactsRecord { DomainOfFace = [.. domains], DikeOfFace = [.. dikes], InPlaceOfFace = [.. places] },
             new DescribedCloud { Cloud = cloud });
     }
 
-    /// <summary>Scores host and dike; joints of several dikes are sought together, so their poles are pooled where they agree.</summary>
+    /// <summary>Scores host and dike; dike by dike where the sets say whose they are, otherwise all dikes together.</summary>
     internal static SetScore Score(SimulatedOutcrop rock, SetsInput input, SetsRecord record)
     {
-        SetScore host = Domain(FaceDomain.Host, rock.HostSetPoles, input, record);
-        Vec3[] dike = [.. rock.DikeSetPoles.SelectMany(p => p)];
-        return dike.Length == 0 ? host : host + Domain(FaceDomain.Dike, dike, input, record);
+        OrientationSet[] Of(FaceDomain domain) => [.. record.Sets.Where(s => s.Domain == domain && s.Zone.Length == 0)];
+        SetScore score = Domain(FaceDomain.Host, rock.HostSetPoles, input, Of(FaceDomain.Host), _ => true);
+        if (rock.DikeSetPoles.Length == 0) return score;
+        OrientationSet[] sets = Of(FaceDomain.Dike);
+        int[] told = input.Contacts.DikeOfFace;
+        if (told.Length == 0) return score + Domain(FaceDomain.Dike, [.. rock.DikeSetPoles.SelectMany(p => p)], input, sets, _ => true);
+
+        // Found dike of every true one; sets of the only dike found carry no number.
+        SimulatedOutcrop local = rock with { Origin = input.Frame.Origin };
+        DikeFrame[] frames = input.Contacts.Dikes;
+        int[] numbers = [.. told.Where((d, i) => d > 0 && input.Contacts.DomainOfFace[i] == FaceDomain.Dike).Distinct()];
+        for (int k = 0; k < rock.DikeSetPoles.Length; k++)
+        {
+            int truth = k;
+            int[] own = frames.Length == 0 ? [truth + 1] : [.. frames.Where(f => WidthScore.Match(local, f) == truth).Select(f => f.Dike)];
+            OrientationSet[] ofDike = [.. sets.Where(s => own.Contains(s.Dike > 0 ? s.Dike : numbers.Length == 1 ? numbers[0] : 0))];
+            score += Domain(FaceDomain.Dike, rock.DikeSetPoles[truth], input, ofDike, i => own.Contains(told[i]));
+        }
+
+        return score;
     }
 
-    private static SetScore Domain(FaceDomain domain, Vec3[] poles, SetsInput input, SetsRecord record)
+    private static SetScore Domain(FaceDomain domain, Vec3[] poles, SetsInput input, OrientationSet[] sets, Func<int, bool> counts)
     {
         // Shown: at least ten faces of 0.05 m² or more whose nearest true pole it is, within 15 deg.
         int[] faces = new int[poles.Length];
         for (int i = 0; i < input.Faces.Faces.Length; i++)
         {
             Face f = input.Faces.Faces[i];
-            if (input.Contacts.DomainOfFace[i] != domain || input.Contacts.InPlaceOfFace[i] == InPlace.No || f.AreaM2 < 0.05) continue;
+            if (input.Contacts.DomainOfFace[i] != domain || input.Contacts.InPlaceOfFace[i] == InPlace.No || f.AreaM2 < 0.05 || !counts(i)) continue;
             int nearest = 0;
             for (int p = 1; p < poles.Length; p++) if (Math.Abs(f.Normal.Dot(poles[p])) > Math.Abs(f.Normal.Dot(poles[nearest]))) nearest = p;
             if (Math.Abs(f.Normal.Dot(poles[nearest])) > Math.Cos(15 * Degree)) faces[nearest]++;
         }
 
-        return SetScore.Of([.. record.Sets.Where(s => s.Domain == domain)], poles, [.. faces.Select(n => n >= 10)]);
+        return SetScore.Of(sets, poles, [.. faces.Select(n => n >= 10)]);
     }
 
     private void PrintSpacing()

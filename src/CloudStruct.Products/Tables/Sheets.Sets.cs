@@ -39,5 +39,6 @@ public static partial class Sheets
     .Number("stability", "Share of redrawn outcrops (places drawn with replacement) in which the set came back; empty in zones.", s => s.Stability)
     .Word("spacing_class", "ISRM 1978 word for the mean spacing; a value on a boundary belongs to the upper class.", ["extremely_close", "very_close", "close", "moderate", "wide", "very_wide", "extremely_wide"], s => s.SpacingClass)
     .Word("persistence_class", "ISRM 1978 word for the persistence; a value on a boundary belongs to the upper class.", ["very_low", "low", "medium", "high", "very_high"], s => s.PersistenceClass)
-    .Text("decided", "What a geologist decided by hand: joined, split, note; empty when nothing.", s => s.Decided);
+    .Text("decided", "What a geologist decided by hand: joined, split, note; empty when nothing.", s => s.Decided)
+    .Count("dike", "Dike whose joints these are, where several were found and each was looked at by itself; empty elsewhere.", s => s.Dike > 0 ? s.Dike : null);
 }

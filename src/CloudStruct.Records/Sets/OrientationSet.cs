@@ -77,6 +77,9 @@ public sealed record OrientationSet
     /// <summary>ISRM 1978 word for the spacing; empty when it is not known.</summary>
     public string SpacingClass { get; init; } = "";
 
+    /// <summary>Dike whose faces alone were looked at; 0 in other domains, and where all dikes were looked at together.</summary>
+    public int Dike { get; init; }
+
     /// <summary>ISRM 1978 word for the persistence; empty when it is not known.</summary>
     public string PersistenceClass { get; init; } = "";
 

@@ -34,7 +34,7 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
             }
 
             TraceCell[] surface = tracer.MarkMargins(sides);
-            if (surface.Length > 0) tracer = tracer.With(surface);
+            tracer = tracer.With(surface);
             dikes.Add(tracer.Frame(input.Baseline));
             rows.AddRange(tracer.Rows());
             traces.AddRange(tracer.Traces());
@@ -45,7 +45,7 @@ public sealed class ContactsStage : IStage<ContactsInput, ContactSettings, Conta
         context.Progress(1);
         return new ContactsRecord
         {
-            Dikes = [.. dikes], Contacts = [.. rows], Traces = [.. traces], DomainOfFace = sides.Domain, InPlaceOfFace = sides.InPlace,
+            Dikes = [.. dikes], Contacts = [.. rows], Traces = [.. traces], DomainOfFace = sides.Domain, DikeOfFace = sides.Dike, InPlaceOfFace = sides.InPlace,
         };
     }
 

@@ -39,6 +39,7 @@ public static class CoverFaces
             contacts with
             {
                 DomainOfFace = [.. kept.Select(f => contacts.DomainOfFace[f - 1])],
+                DikeOfFace = contacts.DikeOfFace.Length == 0 ? [] : [.. kept.Select(f => contacts.DikeOfFace[f - 1])],
                 InPlaceOfFace = [.. kept.Select(f => contacts.InPlaceOfFace[f - 1])],
             });
     }

@@ -36,8 +36,8 @@ internal sealed partial class DikeTracer
         return new DikeFrame
         {
             Dike = Dike, CentreLine = line, ChainageM = chainage, Normal = normal, DipSigmaDeg = sigma, Constraint = Fixed, AIsLower = tracker.Sheet.AIsLower,
-            WindowM = tracker.WindowM, TraceScatterM = noise.Noise.Sigma, TraceRangeM = noise.Noise.Range, TraceWhiteShare = noise.Noise.WhiteShare,
-            TraceShared = noise.Shared, WaveM = noise.WaveM, WaveRangeM = noise.WaveRangeM,
+            WindowM = tracker.WindowM, TraceScatterM = traceNoise.Noise.Sigma, TraceRangeM = traceNoise.Noise.Range, TraceWhiteShare = traceNoise.Noise.WhiteShare,
+            TraceShared = traceNoise.Shared, WaveM = traceNoise.WaveM, WaveRangeM = traceNoise.WaveRangeM,
         };
     }
 

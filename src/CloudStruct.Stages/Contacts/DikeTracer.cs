@@ -22,11 +22,12 @@ internal sealed partial class DikeTracer
     private const double OutlierSigmas = 3.5;
     private const int LargestSet = 240;   // cells: the cost grows with the cube
     private readonly MarginTracker tracker;
-    private readonly TraceCell[] cells;
+    private readonly TraceCell[] cells, steady;   // those of the traces, and those that attitudes rest on
+    private readonly double scaleM;
     private readonly SurveyFrame frame;
     private readonly ContactSettings settings;
     private readonly TraceLaws laws;
-    private readonly TraceNoise noise;
+    private readonly TraceNoise traceNoise;   // of the traces with the stretches that attitudes leave out: widths rest on those too
     private readonly Func<double, Vec3> groundAt;
     private readonly PriorPoles priors;
 
@@ -39,19 +40,37 @@ internal sealed partial class DikeTracer
     /// <param name="priors">Compass readings that take part.</param>
     /// <param name="settings">Settings.</param>
     public DikeTracer(int dike, MarginTracker tracker, TraceCell[] cells, SurveyFrame frame, Func<double, Vec3> groundAt, PriorPoles priors, ContactSettings settings)
+        : this(dike, tracker, cells, frame, groundAt, priors, settings, null)
+    {
+    }
+
+    // Law of the cells' scatter when strays are out already; null: strays are still among them.
+    private DikeTracer(int dike, MarginTracker tracker, TraceCell[] cells, SurveyFrame frame, Func<double, Vec3> groundAt, PriorPoles priors, ContactSettings settings, TraceLaws? rough)
     {
         Dike = dike;
         this.tracker = tracker;
         this.cells = [.. cells.OrderBy(c => c.At.S).ThenBy(c => c.At.T)];
-        cells = this.cells;
+        cells = steady = this.cells;
         this.frame = frame;
         this.settings = settings;
         this.groundAt = groundAt;
         this.priors = priors;
         (FromS, ToS) = (cells[0].At.S, cells[^1].At.S);
-        this.cells = cells = WithoutOutliers(TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, settings.EdgeErrorM / 3).Best);
-        laws = TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, settings.EdgeErrorM / 3);
-        noise = laws.Best;
+        double least = settings.EdgeErrorM / 3;
+        if (rough is null)
+        {
+            rough = TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, least);
+            this.cells = cells = WithoutOutliers(rough.Best);
+            (steady, scaleM) = SteadyCells.Of(cells, tracker.CellM);
+            laws = rough;
+        }
+        else
+        {
+            (steady, scaleM) = SteadyCells.Of(cells, tracker.CellM);
+            laws = TraceLaws.Estimate(Apart(), tracker.CellM, tracker.WindowM, least);
+        }
+
+        traceNoise = rough.Best;
         double step = Math.Clamp(tracker.WindowM / FitsPerWindow, 0.5, 5);
         int count = Math.Max(1, (int)Math.Round((ToS - FromS) / step));
         Stretches = new DikeStretch[count + 1];
@@ -60,7 +79,7 @@ internal sealed partial class DikeTracer
         for (int i = 0; i < sets; i++)
         {
             double middle = FromS + ((ToS - FromS) * (i + 0.5) / sets);
-            TraceCell[] own = Thinned(Near(middle, ReachWindows * tracker.WindowM));
+            TraceCell[] own = Thinned(Steady(middle, ReachWindows * tracker.WindowM));
             models[i] = (own, own.Length >= 8 ? MarginModel.Of(own, middle, laws) : null);
         }
 
@@ -94,19 +113,19 @@ internal sealed partial class DikeTracer
     /// <summary>Margin polylines; after <see cref="Frame"/>.</summary>
     public IEnumerable<MarginTrace> Traces() =>
         from margin in (Margin[])[Margin.A, Margin.B]
-        from line in TraceLines.Of(Dike, margin, cells.Where(c => !c.Surface), tracker.CellM, noise.Noise.Sigma, ChainageAt)
+        from line in TraceLines.Of(Dike, margin, cells.Where(c => !c.Surface), tracker.CellM, traceNoise.Noise.Sigma, ChainageAt)
         select line;
 
     /// <summary>Marks faces on the contacts of this dike.</summary>
     /// <returns>Those faces as cells of their margins.</returns>
     public TraceCell[] MarkMargins(FaceSides sides)
     {
-        double tolerance = settings.SurfaceToleranceM ?? Math.Max(0.04, 2 * noise.Noise.Sigma);
-        return sides.MarkMargins(tracker, cells, s => NormalAt(s), settings.SurfaceAngleDeg, tolerance);
+        double tolerance = settings.SurfaceToleranceM ?? Math.Max(0.04, 2 * scaleM);
+        return sides.MarkMargins(Dike, tracker, cells, s => NormalAt(s), settings.SurfaceAngleDeg, tolerance);
     }
 
     /// <summary>The same dike with cells on exposed contact surfaces besides those of the traces.</summary>
-    public DikeTracer With(TraceCell[] surface) => new(Dike, tracker, [.. cells, .. surface.Where(c => c.At.S >= FromS && c.At.S <= ToS)], frame, groundAt, priors, settings);
+    public DikeTracer With(TraceCell[] surface) => new(Dike, tracker, [.. cells, .. surface.Where(c => c.At.S >= FromS && c.At.S <= ToS)], frame, groundAt, priors, settings, laws);
 
     /// <summary>What there is to say about this dike.</summary>
     /// <param name="stage">Name of the stage.</param>
@@ -140,7 +159,7 @@ internal sealed partial class DikeTracer
         var apart = new List<TraceCell[]>();
         for (int i = 0; i < count; i += every)
         {
-            TraceCell[] near = Near(FromS + ((ToS - FromS) * (i + 0.5) / count), length / 2);
+            TraceCell[] near = Steady(FromS + ((ToS - FromS) * (i + 0.5) / count), length / 2);
             if (near.Length >= 8) apart.Add(near);
         }
 
@@ -166,6 +185,8 @@ internal sealed partial class DikeTracer
 
     private TraceCell[] Near(double s, double reach) => [.. cells.Where(c => Math.Abs(c.At.S - s) <= reach)];
 
+    private TraceCell[] Steady(double s, double reach) => [.. steady.Where(c => Math.Abs(c.At.S - s) <= reach)];
+
     private static TraceCell[] Thinned(TraceCell[] near)
     {
         int k = (near.Length + LargestSet - 1) / LargestSet;
@@ -180,13 +201,28 @@ internal sealed partial class DikeTracer
         TraceCell[] a = [.. near.Where(c => c.Margin == Margin.A)], b = [.. near.Where(c => c.Margin == Margin.B)];
         if (near.Length < 4) return new DikeStretch(s, [null, null, null], false, false);
         Vec3 ground = groundAt(s);
-        double[] heights = [.. near.Select(c => c.At.T).Order()];
-        double low = heights[heights.Length / 20], high = heights[^(1 + (heights.Length / 20))], more = (HeightShare * tracker.WindowM) - (high - low);
-        if (more > 0) (low, high) = (low - (more / 2), high + (more / 2));
-        StretchFit? Fit(Margin? margin, TraceCell[] own) => own.Length < 4 ? null : StretchFit.Of(s, model.Patch(margin, from, to, low, high), own, ground);
+        StretchFit? Fit(Margin? margin, TraceCell[] own)
+        {
+            if (own.Length < 4) return null;
+            (double fromS, double toS, double low, double high) = margin is null ? Rectangle(near, from, to) : Rectangle(own, from, to);
+            return StretchFit.Of(s, model.Patch(margin, fromS, toS, low, high), own, ground);
+        }
+
         StretchFit?[] fits = [Fit(Margin.A, a), Fit(Margin.B, b), Fit(a.Length < 4 ? Margin.B : b.Length < 4 ? Margin.A : null, near)];
         bool passes = fits[2] is { } middle && Passes(StretchFit.Of(s, new PatchSlopes(middle.Tilt, middle.TiltVariance, middle.Slope, middle.SlopeVariance, middle.SlopeTilt), wide, ground));
         return new DikeStretch(s, fits, wide.Any(c => c.Margin == Margin.A) && wide.Any(c => c.Margin == Margin.B), passes);
+    }
+
+    // Where a plane is to lie nearest to the margin: as far along strike and up dip as its trace reaches in the stretch (a twentieth
+    // of the cells cut off above and below), at least a third of that length high.
+    private (double FromS, double ToS, double Low, double High) Rectangle(TraceCell[] cells, double from, double to)
+    {
+        TraceCell[] trace = [.. cells.Where(c => !c.Surface)];
+        if (trace.Length < 3) trace = cells;
+        else if (trace.Max(c => c.At.S) - trace.Min(c => c.At.S) is var reach && reach > HeightShare * tracker.WindowM) (from, to) = (trace.Min(c => c.At.S), trace.Max(c => c.At.S));
+        double[] heights = [.. trace.Select(c => c.At.T).Order()];
+        double low = heights[heights.Length / 20], high = heights[^(1 + (heights.Length / 20))], more = (HeightShare * (to - from)) - (high - low);
+        return more > 0 ? (from, to, low - (more / 2), high + (more / 2)) : (from, to, low, high);
     }
 
     // The gates of a dip: relief against the trace's own error, both in the sheet and out of the ground, and the cone.

@@ -35,15 +35,20 @@ internal sealed class FaceSides
         for (int i = 0; i < members.Length; i++) members[next[faces.FaceOfPoint[i]]++] = i;
         Domain = new FaceDomain[n];
         InPlace = new InPlace[n];
+        Dike = new int[n];
         for (int f = 0; f < n; f++)
         {
             Vote(f, classes);
             Domain[f] = Decided(f) ?? Domain[f];
+            if (Domain[f] == FaceDomain.Dike) Dike[f] = Commonest(f, classes);
         }
     }
 
     /// <summary>Domain of every face.</summary>
     public FaceDomain[] Domain { get; }
+
+    /// <summary>Dike of every face of domain dike or margin; 0 for others.</summary>
+    public int[] Dike { get; }
 
     /// <summary>Whether the rock of every face is in place.</summary>
     public InPlace[] InPlace { get; }
@@ -73,15 +78,28 @@ internal sealed class FaceSides
         InPlace[face] = rock ? Records.Faces.InPlace.Yes : most == other ? Records.Faces.InPlace.Unknown : Records.Faces.InPlace.No;
     }
 
+    // The dike that most of its dike rock belongs to; the lower number on a tie.
+    private int Commonest(int face, ClassifiedCloud classes)
+    {
+        var votes = new SortedDictionary<int, int>();
+        foreach (int i in Members(face))
+        {
+            if ((RockClass)classes.Class[i] is RockClass.Dike or RockClass.Inclusion && classes.DikeOfPoint[i] > 0) votes[classes.DikeOfPoint[i]] = votes.GetValueOrDefault(classes.DikeOfPoint[i]) + 1;
+        }
+
+        return votes.Count == 0 ? 0 : votes.MaxBy(v => v.Value).Key;
+    }
+
     /// <summary>Marks the faces that lie on a contact of one dike: parallel to it, and the trace that touches them runs in their
     /// plane.</summary>
+    /// <param name="dike">Number of the dike.</param>
     /// <param name="tracker">The dike's margins.</param>
     /// <param name="cells">Its trace cells in order of s.</param>
     /// <param name="normalAt">Unit normal of the dike at a place along the sheet.</param>
     /// <param name="angleDeg">Largest angle between face and contact [deg].</param>
     /// <param name="toleranceM">Largest distance of the trace from the face's plane, in the median [m].</param>
     /// <returns>The faces as cells of the margin that they lie on.</returns>
-    public TraceCell[] MarkMargins(MarginTracker tracker, TraceCell[] cells, Func<double, Vec3> normalAt, double angleDeg, double toleranceM)
+    public TraceCell[] MarkMargins(int dike, MarginTracker tracker, TraceCell[] cells, Func<double, Vec3> normalAt, double angleDeg, double toleranceM)
     {
         var surface = new List<TraceCell>();
         double least = Math.Cos(angleDeg * Math.PI / 180);
@@ -95,7 +113,7 @@ internal sealed class FaceSides
             double away = Math.Min(Math.Abs(tracker.Guess.Distance(Margin.A, at)), Math.Abs(tracker.Guess.Distance(Margin.B, at)));
             if (away > 0.5) continue;
             if (byHand is null && !TouchesTrace(f, at, cells, toleranceM)) continue;
-            Domain[f] = FaceDomain.Margin;
+            (Domain[f], Dike[f]) = (FaceDomain.Margin, dike);
             surface.AddRange(CellsOf(f, tracker, toleranceM));
         }
 

@@ -13,6 +13,8 @@ internal sealed class MarginModel
 {
     private const int Columns = 7, Rows = 5;   // of the grid that stands for a patch
     private const double LeastFreedom = 4;
+    private const double UsualWorth = 20;   // cells that speak for the usual roughness where a stretch shows its own
+    private readonly Lazy<double[]> leftOut;
     private readonly TraceCell[] cells;
     private readonly double s0, t0;
     private readonly bool both;
@@ -25,6 +27,7 @@ internal sealed class MarginModel
         this.t0 = t0;
         this.both = both;
         this.fits = fits;
+        leftOut = new Lazy<double[]>(() => fits[0].Fit.LeaveOneOut());
     }
 
     /// <summary>Fits; null when there are too few cells or the fit is singular.</summary>
@@ -64,6 +67,24 @@ internal sealed class MarginModel
         return CorrelatedFit.Solve(design, y, noise.Covariance(cells), precision);
     }
 
+    /// <summary>How much larger errors are over a stretch than along the dike as a whole, as a ratio of variances, at least 1: behind
+    /// soil or in shade traces are rougher.</summary>
+    /// <param name="margin">Side; null: both.</param>
+    /// <param name="fromS">Stretch along strike [m].</param>
+    /// <param name="toS">Its end [m].</param>
+    public double Roughness(Margin? margin, double fromS, double toS)
+    {
+        double sum = UsualWorth, count = UsualWorth;
+        for (int i = 0; i < cells.Length; i++)
+        {
+            if ((margin is { } m && cells[i].Margin != m) || cells[i].At.S < fromS || cells[i].At.S > toS) continue;
+            sum += leftOut.Value[i] * leftOut.Value[i];
+            count++;
+        }
+
+        return Math.Max(1, sum / count);
+    }
+
     /// <summary>Plane nearest to a margin over a rectangle: change of q per metre up dip and along strike, with their covariance.</summary>
     /// <param name="margin">Side; null: midway between both.</param>
     /// <param name="fromS">Rectangle along strike [m].</param>
@@ -93,7 +114,9 @@ internal sealed class MarginModel
         }
 
         (tilt, slope) = (tilt / total, slope / total);
-        return new PatchSlopes(tilt, Math.Max(1e-12, (vt / total) - (tilt * tilt)), slope, Math.Max(1e-12, (vs / total) - (slope * slope)), (mixed / total) - (tilt * slope));
+        double rough = Roughness(margin, fromS, toS);
+        return new PatchSlopes(
+            tilt, Math.Max(1e-12, rough * ((vt / total) - (tilt * tilt))), slope, Math.Max(1e-12, rough * ((vs / total) - (slope * slope))), rough * ((mixed / total) - (tilt * slope)));
     }
 
     // The height of the waves is judged from the few that the cells show: Student's law with as many degrees of freedom takes the

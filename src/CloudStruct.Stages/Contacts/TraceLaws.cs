@@ -13,11 +13,12 @@ internal sealed record TraceLaws((TraceNoise Noise, double Weight)[] Laws)
     private const int LargestCount = 10;
     private const double LeastWeight = 0.01;
     private static readonly double[] WhiteShares = [0.05, 0.3, 0.6, 0.9];
-    private static readonly double[] Waves = [0.1, 0.4, 1.5, 5, 16];
+    private static readonly double[] Waves = [0.4, 1.5, 5, 16, 50];
     private static readonly double[] Sharings = [0.1, 0.5, 0.85];
 
-    /// <summary>Lengths of the undulation that are tried, as shares of the window.</summary>
-    private static readonly double[] WaveLengths = [1.0 / 14, 1.0 / 8, 1.0 / 4.5, 1.0 / 2.5];
+    /// <summary>Lengths of the undulation that are tried, as shares of the window. Shorter ones were tried: what is that short is the
+    /// classifier's wander, and taken for the margin's own shape it counts as known.</summary>
+    private static readonly double[] WaveLengths = [1 / 4.5, 1 / 2.5, 1 / 1.5];
 
     /// <summary>The likeliest law.</summary>
     public TraceNoise Best => Laws[0].Noise;
@@ -31,7 +32,7 @@ internal sealed record TraceLaws((TraceNoise Noise, double Weight)[] Laws)
     {
         TraceCell[][] sets = [.. stretches.Select(Thinned)];
         (double Deviance, TraceNoise Noise) best = (double.PositiveInfinity, new TraceNoise(new CorrelatedNoise(Math.Max(floorM, 0.02), 2 * cellM, 0.3), 0.5, 2, windowM / 8));
-        foreach (double range in (double[])[cellM, 2 * cellM, 4 * cellM])
+        foreach (double range in (double[])[cellM, 2 * cellM, 4 * cellM, 8 * cellM])
         {
             foreach (double white in WhiteShares)
             {

@@ -1,6 +1,5 @@
 using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
-using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Decisions;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
@@ -22,21 +21,20 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
 
     /// <summary>Finds them; names of sets go into the list of faces.</summary>
     public static DomainSets Of(
-        SetsInput input, SetSettings settings, StageContext context, FaceDomain domain, int[] members, string[] setOfFace)
+        SetsInput input, SetSettings settings, StageContext context, SetGroup group, int[] members, string[] setOfFace)
     {
         Face[] faces = input.Faces.Faces;
-        string word = domain.ToString().ToLowerInvariant();
         JointPlane[] joined = JointPlanes.Of(faces, members, input.Faces.NoiseM, settings.ReachM);
         var seen = SeenRock.Of(input, members, null);
         var planes = new DomainPlanes(
-            domain,
+            group,
             joined,
             [.. joined.Select(p => p.Normal)],
             PlaneWeights.Of(joined, settings.Weighting, seen.Surface),
             JointPlanes.Groups(faces, joined, input.Faces.NoiseM, settings.ReachM));
         var rules = new ClusterRules(settings.MostSets, settings.FewestPlanes, settings.ValleyDepth, settings.WidestDeg);
         AxisClusters clusters = AxisClusters.Find(planes.Poles, planes.Weights, rules, context.Seed, context.Stop);
-        SetRemarks.Say(context, word, clusters, joined.Length, members.Length, settings, domain);
+        SetRemarks.Say(context, group.Said, clusters, joined.Length, members.Length, settings, group.Domain);
         var decisions = new SetDecisions(planes, clusters, context.Stop);
         clusters = decisions.Apply(input.Decisions, input.Frame);
         if (clusters.Count == 0) return new DomainSets([], [], [], decisions.Outcomes);
@@ -63,7 +61,7 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
             context.Threads,
             context.Stop);
         OrientationSet[] sets = [.. found.Select((f, s) => f!.Value.Set with { Stability = stability[s], Decided = decisions.Decided[byArea[s]] })];
-        List<MeanToCompare> means = [.. found.Select(f => ToCompare(f!.Value, word, ""))];
+        List<MeanToCompare> means = [.. found.Select(f => ToCompare(f!.Value, group.Said, ""))];
         List<OrientationSet> zoned = [];
         foreach (Zone zone in input.Zones)
         {
@@ -72,7 +70,7 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
             {
                 if (f is null) continue;
                 zoned.Add(f.Value.Set);
-                means.Add(ToCompare(f.Value, word, zone.Name));
+                means.Add(ToCompare(f.Value, group.Said, zone.Name));
             }
         }
 
@@ -138,7 +136,7 @@ internal sealed record DomainSets(OrientationSet[] Sets, OrientationSet[] Zoned,
             if (c < 0) continue;
             SetMean mean = SetMean.Of(mixture.Components[c], planes.Poles, shares[c], regions[c].Covariance, regions[c].Groups, input.Frame.Reference);
             JointPlane[] own = [.. planes.Planes.Where((_, i) => componentOf[i] == c)];
-            OrientationSet set = SetRow.Of(input, settings, planes.Domain, s + 1, own, mean, seen);
+            OrientationSet set = SetRow.Of(input, settings, planes.Group, planes.Group.Numbered + s + 1, own, mean, seen);
             result[s] = (set with { BlindShare = blind, Zone = zone }, mean);
         }
 

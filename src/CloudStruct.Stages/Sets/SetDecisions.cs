@@ -34,7 +34,7 @@ internal sealed class SetDecisions(DomainPlanes planes, AxisClusters found, Canc
     /// <param name="frame">North of the azimuths.</param>
     public AxisClusters Apply(IReadOnlyList<Decision> decisions, SurveyFrame frame)
     {
-        Decision[] own = [.. decisions.Where(d => d.Target == DecisionTarget.Set && d.Domain == planes.Domain)];
+        Decision[] own = [.. decisions.Where(d => d.Target == DecisionTarget.Set && d.Domain == planes.Group.Domain)];
         if (own.Length == 0) return found;
         foreach (Decision d in own)
         {

@@ -1,6 +1,5 @@
 using CloudStruct.Maths.Rates;
 using CloudStruct.Records.Attitudes;
-using CloudStruct.Records.Contacts;
 using CloudStruct.Records.Faces;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Sets;
@@ -15,13 +14,13 @@ internal static class SetRow
     /// <summary>One row of sets.csv.</summary>
     /// <param name="input">The stage's input.</param>
     /// <param name="settings">Settings.</param>
-    /// <param name="domain">Domain.</param>
+    /// <param name="group">Whose faces they are.</param>
     /// <param name="number">Its number in the domain.</param>
     /// <param name="planes">Its planes.</param>
     /// <param name="mean">Its mean.</param>
     /// <param name="seen">The rock of the domain.</param>
     public static OrientationSet Of(
-        SetsInput input, SetSettings settings, FaceDomain domain, int number, JointPlane[] planes, SetMean mean, SeenRock seen)
+        SetsInput input, SetSettings settings, SetGroup group, int number, JointPlane[] planes, SetMean mean, SeenRock seen)
     {
         Face[] faces = input.Faces.Faces;
         (double shape, double strength) = mean.Tensor.Woodcock;
@@ -33,8 +32,9 @@ internal static class SetRow
         Estimate? persistence = SetPersistence.Of(input.Described.Cloud, faces, planes, mean.Mean, seen.Grid);
         return new OrientationSet
         {
-            Set = Invariant($"{domain.ToString().ToLowerInvariant()}-{number}"),
-            Domain = domain,
+            Set = Invariant($"{group.Word}-{number}"),
+            Domain = group.Domain,
+            Dike = group.Dike,
             Count = own.Length,
             Mean = Attitude.FromNormal(mean.Mean, input.Frame.TurnDeg),
             Normal = mean.Mean,

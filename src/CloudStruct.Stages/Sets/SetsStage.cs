@@ -35,14 +35,16 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
         for (int d = 0; d < order.Length; d++)
         {
             context.Stop.ThrowIfCancellationRequested();
-            int[] members = [.. Enumerable.Range(0, faces.Length).Where(i => domain[i] == order[d])];
-            if (members.Length > 0)
+            int numbered = 0;
+            foreach ((int dike, int[] members) in Groups(input.Contacts, order[d], domain))
             {
-                var found = DomainSets.Of(input, settings, context, order[d], members, setOfFace);
+                var found = DomainSets.Of(input, settings, context, new SetGroup(order[d], dike, numbered), members, setOfFace);
+                numbered += found.Sets.Length;
                 sets.AddRange(found.Sets);
                 zoned.AddRange(found.Zoned);
                 means.AddRange(found.Means);
-                foreach (DecisionOutcome o in found.Decided) decided[o.Decision.Line] = o;
+                // What one dike did not fit may fit the next.
+                foreach (DecisionOutcome o in found.Decided) if (numbered == found.Sets.Length || o.Applied) decided[o.Decision.Line] = o;
             }
 
             context.Progress((d + 1.0) / order.Length);
@@ -62,6 +64,17 @@ public sealed class SetsStage : IStage<SetsInput, SetSettings, SetsRecord>
             CommonMeans = CommonMeans.Of(means, zones),
             Decided = [.. decided.OrderBy(d => d.Key).Select(d => d.Value)],
         };
+    }
+
+    // Faces of a domain; of the dikes each by itself where there are several: they cooled by themselves, and two sets of two dikes
+    // some degrees apart would be taken for one that lies between them.
+    private static IEnumerable<(int Dike, int[] Members)> Groups(ContactsRecord contacts, FaceDomain which, FaceDomain[] domain)
+    {
+        int[] members = [.. Enumerable.Range(0, domain.Length).Where(i => domain[i] == which)];
+        if (members.Length == 0) return [];
+        int[] dike = contacts.DikeOfFace;
+        if (which != FaceDomain.Dike || dike.Length != domain.Length || members.Select(i => dike[i]).Distinct().Count() < 2) return [(0, members)];
+        return members.GroupBy(i => dike[i]).OrderBy(g => g.Key).Select(g => (g.Key, g.ToArray()));
     }
 
     /// <summary>Domain of every face; Unknown for those that stay out.</summary>

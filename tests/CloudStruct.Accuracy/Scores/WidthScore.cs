@@ -149,16 +149,16 @@ public sealed class WidthScore
         return PlaneFit.From(sums).Normal;
     }
 
-    private static bool Same(DikeFrame frame, SimulatedDike dike) => frame.Normal[frame.Normal.Length / 2].Dot(dike.Normal) > 0;
+    internal static bool Same(DikeFrame frame, SimulatedDike dike) => frame.Normal[frame.Normal.Length / 2].Dot(dike.Normal) > 0;
 
-    private static int Match(SimulatedOutcrop truth, DikeFrame frame)
+    internal static int Match(SimulatedOutcrop truth, DikeFrame frame)
     {
-        Vec3 middle = frame.CentreLine[frame.CentreLine.Length / 2] + truth.Origin;
         int best = -1;
         double least = double.PositiveInfinity;
         for (int k = 0; k < truth.Dikes.Length; k++)
         {
-            double off = Math.Abs(truth.Dikes[k].SignedFromA(middle) + truth.Dikes[k].SignedFromB(middle)) / 2;
+            // All along: dikes that cross are equally near to either middle.
+            double off = frame.CentreLine.Average(p => Math.Abs(truth.Dikes[k].SignedFromA(p + truth.Origin) + truth.Dikes[k].SignedFromB(p + truth.Origin)) / 2);
             if (off < least) (best, least) = (k, off);
         }
 

@@ -46,6 +46,30 @@ public class SetsStageTests
     }
 
     [Fact]
+    public void Two_dikes_have_sets_of_their_own()
+    {
+        // Sets of two dikes 12 deg apart, 6 deg wide each: together they are one cluster without a valley.
+        Face[] faces = [.. Set(40, 94, 80, 0.5, 1), .. Set(40, 106, 80, 0.5, 2), .. Set(40, 10, 70, 0.5, 3)];
+        faces = [.. faces.Select((f, i) => f with { FaceId = i + 1 })];
+        FaceDomain[] domain = [.. faces.Select((_, i) => i < 80 ? FaceDomain.Dike : FaceDomain.Host)];
+        int[] dike = [.. faces.Select((_, i) => i < 40 ? 1 : i < 80 ? 2 : 0)];
+        SetsRecord r = Run(faces, domain, dike: dike);
+        Assert.Equal(["host-1", "dike-1", "dike-2"], r.Sets.Select(s => s.Set));
+        Assert.Equal([0, 1, 2], r.Sets.Select(s => s.Dike));
+        Assert.All(r.Sets, s => Assert.True(s.Domain == (s.Dike > 0 ? FaceDomain.Dike : FaceDomain.Host)));
+        Assert.Equal(94, r.Sets[1].Mean.StrikeDeg, 3.0);
+        Assert.Equal(106, r.Sets[2].Mean.StrikeDeg, 3.0);
+        Assert.Equal("dike-2", r.SetOfFace[40..80].Where(s => s != "").Distinct().Single());
+
+        // Whether their means may be one is tested, as between any two domains.
+        Assert.Contains(r.CommonMeans, c => c.First == "dike-1" && c.Second == "dike-2");
+
+        // One dike alone, or faces whose dike was not told: the domain as a whole.
+        Assert.All(Run(faces[..40], domain[..40], dike: dike[..40]).Sets, s => Assert.Equal(0, s.Dike));
+        Assert.All(Run(faces, domain).Sets, s => Assert.Equal(0, s.Dike));
+    }
+
+    [Fact]
     public void Loose_and_unknown_faces_stay_out()
     {
         Face[] faces = [.. Set(40, 90, 80, 0.5, 1)];
@@ -290,9 +314,10 @@ public class SetsStageTests
     };
 
     private static SetsRecord Run(
-        Face[] faces, FaceDomain[]? domain = null, InPlace[]? place = null, SurveyFrame? frame = null, int threads = 2, List<Remark>? remarks = null)
+        Face[] faces, FaceDomain[]? domain = null, InPlace[]? place = null, SurveyFrame? frame = null, int threads = 2, List<Remark>? remarks = null,
+        int[]? dike = null)
     {
-        var contacts = new ContactsRecord { DomainOfFace = domain ?? [], InPlaceOfFace = place ?? [] };
+        var contacts = new ContactsRecord { DomainOfFace = domain ?? [], DikeOfFace = dike ?? [], InPlaceOfFace = place ?? [] };
         var input = new SetsInput(frame ?? new SurveyFrame(), new FaceSet { Faces = faces, NoiseM = 0.005 }, contacts, new DescribedCloud());
         return new SetsStage().Run(input, new SetSettings(), StageContext.Plain(1, threads, r => remarks?.Add(r)));
     }
