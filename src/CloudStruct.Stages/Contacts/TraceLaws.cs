@@ -20,6 +20,9 @@ internal sealed record TraceLaws((TraceNoise Noise, double Weight)[] Laws)
     /// classifier's wander, and taken for the margin's own shape it counts as known.</summary>
     private static readonly double[] WaveLengths = [1 / 4.5, 1 / 2.5, 1 / 1.5];
 
+    // For widths, which follow a trace over a metre or two, whatever bends it.
+    private static readonly double[] ShortWaveLengths = [1.0 / 14, 1.0 / 8, .. WaveLengths];
+
     /// <summary>The likeliest law.</summary>
     public TraceNoise Best => Laws[0].Noise;
 
@@ -28,7 +31,8 @@ internal sealed record TraceLaws((TraceNoise Noise, double Weight)[] Laws)
     /// <param name="cellM">Edge of a cell [m]: the shortest range tried.</param>
     /// <param name="windowM">Length over which attitudes are wanted [m].</param>
     /// <param name="floorM">Smallest standard deviation of the errors [m].</param>
-    public static TraceLaws Estimate(IReadOnlyList<TraceCell[]> stretches, double cellM, double windowM, double floorM)
+    /// <param name="shortWaves">Whether waves of a tenth of the window are tried too.</param>
+    public static TraceLaws Estimate(IReadOnlyList<TraceCell[]> stretches, double cellM, double windowM, double floorM, bool shortWaves = false)
     {
         TraceCell[][] sets = [.. stretches.Select(Thinned)];
         (double Deviance, TraceNoise Noise) best = (double.PositiveInfinity, new TraceNoise(new CorrelatedNoise(Math.Max(floorM, 0.02), 2 * cellM, 0.3), 0.5, 2, windowM / 8));
@@ -45,7 +49,7 @@ internal sealed record TraceLaws((TraceNoise Noise, double Weight)[] Laws)
         var all = new List<(double Deviance, TraceNoise Noise)>();
         foreach (double wave in Waves)
         {
-            foreach (double length in WaveLengths)
+            foreach (double length in shortWaves ? ShortWaveLengths : WaveLengths)
             {
                 foreach (double shared in Sharings)
                 {
