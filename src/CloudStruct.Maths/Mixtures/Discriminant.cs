@@ -1,3 +1,6 @@
+using System.Runtime.CompilerServices;
+using System.Runtime.Intrinsics;
+
 namespace CloudStruct.Maths.Mixtures;
 
 /// <summary>Classes told apart by normal distributions whose covariances are drawn toward each other and toward their diagonal.</summary>
@@ -100,6 +103,23 @@ public sealed class Discriminant
         {
             for (int j = 0; j < d; j++) v[j] = item[j] - means[(c * d) + j];
             logs[c] = constants[c] - (0.5 * Cholesky.Whiten(factors.AsSpan(c * d * d, d * d), d, v));
+        }
+    }
+
+    /// <summary>The same for four items at once, one in each lane.</summary>
+    /// <param name="item">As long as a training row.</param>
+    /// <param name="logs">[out] As long as <see cref="Classes"/>.</param>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public void Logs(ReadOnlySpan<Vector256<double>> item, Span<Vector256<double>> logs)
+    {
+        unchecked
+        {
+            Span<Vector256<double>> v = stackalloc Vector256<double>[d];
+            for (int c = 0; c < Classes; c++)
+            {
+                for (int j = 0; j < d; j++) v[j] = item[j] - Vector256.Create(means[(c * d) + j]);
+                logs[c] = Vector256.Create(constants[c]) - (Vector256.Create(0.5) * Cholesky.Whiten(factors.AsSpan(c * d * d, d * d), d, v));
+            }
         }
     }
 }

@@ -1,3 +1,4 @@
+using System.Runtime.Intrinsics;
 using CloudStruct.Maths.Blocks;
 
 namespace CloudStruct.Maths.Mixtures;
@@ -42,15 +43,20 @@ public sealed partial class GaussianMixture
     /// <param name="seed">Seed of the starts.</param>
     /// <param name="starts">Number of starts.</param>
     /// <param name="rounds">Most rounds per start.</param>
+    /// <param name="threads">Numbers of components tried at once.</param>
     /// <remarks>Fraley and Raftery 2002, J. Am. Stat. Assoc. 97, 611-631.</remarks>
     public static GaussianMixture? Choose(
-        ReadOnlySpan<double> items, int dimensions, int most, CovarianceModel model, double effective, ulong seed, int starts = 10, int rounds = 500)
+        ReadOnlySpan<double> items, int dimensions, int most, CovarianceModel model, double effective, ulong seed, int starts = 10, int rounds = 500, int threads = 1)
     {
         GaussianMixture? best = null;
         int n = items.Length / dimensions;
+        var fits = new GaussianMixture?[most + 1];
+        double[] own = threads > 1 ? items.ToArray() : [];
+        // The largest takes longest and starts first.
+        if (threads > 1) BlockParallel.For(most, threads, CancellationToken.None, (from, _) => fits[most - from] = Fit(own, dimensions, most - from, model, seed, most - from == 1 ? 1 : starts, rounds), length: 1);
         for (int k = 1; k <= most; k++)
         {
-            GaussianMixture? fit = Fit(items, dimensions, k, model, seed, k == 1 ? 1 : starts, rounds);
+            GaussianMixture? fit = threads > 1 ? fits[k] : Fit(items, dimensions, k, model, seed, k == 1 ? 1 : starts, rounds);
             if (fit == null) break;
             if (best == null || fit.Bic(n, effective) > best.Bic(n, effective)) best = fit;
         }
@@ -127,17 +133,27 @@ public sealed partial class GaussianMixture
         int n = items.Length / d;
         double before = double.NegativeInfinity;
         GaussianMixture? current = null;
-        Span<double> logs = stackalloc double[k];
+        Span<Vector256<double>> item = stackalloc Vector256<double>[d], logs = stackalloc Vector256<double>[k];
         for (int round = 0; round < rounds; round++)
         {
             GaussianMixture? made = Maximise(items, d, share, k, model, spread);
             if (made == null) return current;
             double likelihood = 0;
-            for (int i = 0; i < n; i++)
+            for (int i = 0; i < n; i += 4)
             {
-                double log = made.LogDensities(items.Slice(i * d, d), logs);
-                likelihood += log;
-                for (int c = 0; c < k; c++) share[(i * k) + c] = Math.Exp(logs[c] - log);
+                int last = Math.Min(4, n - i) - 1;
+                for (int j = 0; j < d; j++)
+                {
+                    item[j] = Vector256.Create(items[(i * d) + j], items[((i + Math.Min(1, last)) * d) + j], items[((i + Math.Min(2, last)) * d) + j], items[((i + last) * d) + j]);
+                }
+
+                Vector256<double> log = made.LogDensities(item, logs);
+                for (int e = 0; e <= last; e++) likelihood += log[e];
+                for (int c = 0; c < k; c++)
+                {
+                    Vector256<double> r = Vector256.Exp(logs[c] - log);
+                    for (int e = 0; e <= last; e++) share[((i + e) * k) + c] = r[e];
+                }
             }
 
             current = new GaussianMixture(d, model, made.Weights, made.Means, made.Covariances) { LogLikelihood = likelihood };
@@ -154,13 +170,18 @@ public sealed partial class GaussianMixture
         var weight = new double[k];
         var mean = new double[k * d];
         var covariance = new double[k * dd];
-        for (int i = 0; i < n; i++)
+        unchecked
         {
-            for (int c = 0; c < k; c++)
+            for (int i = 0; i < n; i++)
             {
-                double r = share[(i * k) + c];
-                weight[c] += r;
-                for (int j = 0; j < d; j++) mean[(c * d) + j] += r * items[(i * d) + j];
+                ReadOnlySpan<double> item = items.Slice(i * d, d);
+                for (int c = 0; c < k; c++)
+                {
+                    double r = share[(i * k) + c];
+                    weight[c] += r;
+                    Span<double> m = mean.AsSpan(c * d, d);
+                    for (int j = 0; j < m.Length; j++) m[j] += r * item[j];
+                }
             }
         }
 
@@ -171,17 +192,20 @@ public sealed partial class GaussianMixture
         }
 
         Span<double> v = stackalloc double[d];
-        for (int i = 0; i < n; i++)
+        unchecked
         {
-            for (int c = 0; c < k; c++)
+            for (int i = 0; i < n; i++)
             {
-                double r = share[(i * k) + c];
-                if (r < 1e-12) continue;
-                for (int j = 0; j < d; j++) v[j] = items[(i * d) + j] - mean[(c * d) + j];
-                Span<double> m = covariance.AsSpan(c * dd, dd);
-                for (int a = 0; a < d; a++)
+                for (int c = 0; c < k; c++)
                 {
-                    for (int b = 0; b <= a; b++) m[(a * d) + b] += r * v[a] * v[b];
+                    double r = share[(i * k) + c];
+                    if (r < 1e-12) continue;
+                    for (int j = 0; j < d; j++) v[j] = items[(i * d) + j] - mean[(c * d) + j];
+                    Span<double> m = covariance.AsSpan(c * dd, dd);
+                    for (int a = 0; a < d; a++)
+                    {
+                        for (int b = 0; b <= a; b++) m[(a * d) + b] += r * v[a] * v[b];
+                    }
                 }
             }
         }

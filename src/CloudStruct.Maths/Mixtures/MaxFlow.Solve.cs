@@ -1,3 +1,5 @@
+using System.Runtime.CompilerServices;
+
 namespace CloudStruct.Maths.Mixtures;
 
 /// <summary>The search: grow both trees until they touch, augment, adopt the orphans.</summary>
@@ -77,6 +79,7 @@ public sealed partial class MaxFlow
     }
 
     /// <summary>Extends the tree of a node over its unsaturated arcs; returns the arc from the source's to the sink's tree where they touch.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private int Grow(int i)
     {
         bool sink = inSinkTree[i];
@@ -108,6 +111,7 @@ public sealed partial class MaxFlow
         return None;
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Augment(int bridge)
     {
         float least = residual[bridge];
@@ -152,6 +156,7 @@ public sealed partial class MaxFlow
         orphans.Enqueue(i);
     }
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private void Adopt(int i)
     {
         bool sink = inSinkTree[i];

@@ -100,22 +100,21 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
     private static void DropSpecks(Patches patches, bool[] cover)
     {
         const double SpeckM2 = 0.3;
-        foreach ((List<int> piece, double area) in Pieces(patches, i => cover[i], 1))
+        foreach ((List<int> piece, double area) in Pieces(patches, cover))
         {
             if (area >= SpeckM2) continue;
             foreach (int i in piece) cover[i] = false;
         }
     }
 
-    /// <summary>Connected pieces of the patches asked for, in order of their first patch; patches within some rings touch.</summary>
-    private static IEnumerable<(List<int> Piece, double AreaM2)> Pieces(Patches patches, Func<int, bool> of, int rings)
+    /// <summary>Connected pieces of the patches asked for, in order of their first patch; patches whose cells touch belong together.</summary>
+    private static IEnumerable<(List<int> Piece, double AreaM2)> Pieces(Patches patches, bool[] of)
     {
-        int side = (2 * rings) + 1;
         var seen = new bool[patches.Count];
         var stack = new Stack<int>();
         for (int start = 0; start < seen.Length; start++)
         {
-            if (seen[start] || !of(start)) continue;
+            if (seen[start] || !of[start]) continue;
             var piece = new List<int>();
             double area = 0;
             seen[start] = true;
@@ -125,11 +124,9 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
                 int i = stack.Pop();
                 piece.Add(i);
                 area += patches.AreaM2[i];
-                for (int k = 0; k < side * side * side; k++)
+                foreach (int j in patches.Around(i))
                 {
-                    int j = patches.Map.Find(
-                        patches.Cell[3 * i] + (k % side) - rings, patches.Cell[(3 * i) + 1] + (k / side % side) - rings, patches.Cell[(3 * i) + 2] + (k / side / side) - rings);
-                    if (j < 0 || seen[j] || !of(j)) continue;
+                    if (seen[j] || !of[j]) continue;
                     seen[j] = true;
                     stack.Push(j);
                 }
@@ -145,13 +142,12 @@ public sealed class ClassifyStage : IStage<ClassifyInput, ClassifySettings, Clas
         double all = 0;
         foreach (float a in patches.AreaM2) all += a;
         double limit = Math.Min(LoosePieceM2, 0.01 * all);
-        foreach ((List<int> piece, double area) in Pieces(patches, _ => true, 2))
+        int[] piece = SeparateClouds.Of(patches.Cell);
+        var area = new double[patches.Count];
+        for (int i = 0; i < piece.Length; i++) area[piece[i]] += patches.AreaM2[i];
+        for (int i = 0; i < piece.Length; i++)
         {
-            if (area >= limit) continue;
-            foreach (int i in piece)
-            {
-                if (kind[i] == (byte)RockClass.Host) kind[i] = (byte)(area > 0.05 ? RockClass.Loose : RockClass.Unknown);
-            }
+            if (area[piece[i]] < limit && kind[i] == (byte)RockClass.Host) kind[i] = (byte)(area[piece[i]] > 0.05 ? RockClass.Loose : RockClass.Unknown);
         }
     }
 

@@ -1,3 +1,5 @@
+using System.Runtime.InteropServices;
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Mixtures;
 using CloudStruct.Records.Stages;
 
@@ -47,14 +49,14 @@ internal sealed class CoverFinder
         foreach (float a in patches.AreaM2) area += a;
         double effective = Math.Clamp(area / 0.09, 100, index.Count);
         GaussianMixture? kinds = GaussianMixture.Choose(
-            System.Runtime.InteropServices.CollectionsMarshal.AsSpan(items), d, 7, CovarianceModel.Own, effective, context.Seed, starts: 1, rounds: 30);
+            CollectionsMarshal.AsSpan(items), d, 7, CovarianceModel.Own, effective, context.Seed, starts: 1, rounds: 30, threads: context.Threads);
         if (kinds == null) return null;
         (bool[] cover, bool[] hanging) = Judge(kinds, items, index, d);
         if (!cover.Contains(true) || !cover.Contains(false)) return null;
         double limit = Math.Cos(SteepDeg * Math.PI / 180);
         var odds = new float[patches.Count];
         hangs = new bool[patches.Count];
-        Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
+        BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
         {
             Span<double> own = stackalloc double[d], logs = stackalloc double[kinds.Components];
             for (int i = from; i < to; i++)
@@ -88,25 +90,25 @@ internal sealed class CoverFinder
         bool[] near = PatchCut.Grown(patches, cover, rims);
         var train = new List<int>();
         var side = new List<byte>();
-        var fold = new List<int>();
         int[] columns = [.. Enumerable.Range(0, Math.Min(4, features.Columns))];
         for (int i = 0; i < cover.Length; i++)
         {
             if ((near[i] && !cover[i]) || !Sound(i, columns.Length)) continue;
             train.Add(i);
             side.Add((byte)(cover[i] ? 1 : 0));
-            fold.Add(0);
         }
 
-        if (Looks.Learn(features, columns, train, side, fold, -1, curved: true) is not { } looks) return null;
+        if (Looks.Learn(features, columns, CollectionsMarshal.AsSpan(train), CollectionsMarshal.AsSpan(side), [], -1, curved: true, context.Threads) is not { } looks) return null;
         var odds = new float[cover.Length];
         double limit = Math.Cos(SteepDeg * Math.PI / 180);
-        for (int i = 0; i < odds.Length; i++)
+        BlockParallel.For(odds.Length, context.Threads, context.Stop, (from, to) =>
         {
-            float o = Sound(i, columns.Length) ? looks.LogOdds(features, i, 3) : 0;
-            odds[i] = features.Level06[i] < limit && !hangs[i] ? Math.Min(o, 0) - 0.5f : o;
-        }
-
+            for (int i = from; i < to; i++)
+            {
+                float o = Sound(i, columns.Length) ? looks.LogOdds(features, i, 3) : 0;
+                odds[i] = features.Level06[i] < limit && !hangs[i] ? Math.Min(o, 0) - 0.5f : o;
+            }
+        });
         return odds;
     }
 
@@ -151,7 +153,7 @@ internal sealed class CoverFinder
         double allSteep = 0, all = 0;
         for (int i = 0; i < index.Count; i++)
         {
-            double log = kinds.LogDensities(System.Runtime.InteropServices.CollectionsMarshal.AsSpan(items).Slice(i * d, d), logs), a = patches.AreaM2[index[i]];
+            double log = kinds.LogDensities(CollectionsMarshal.AsSpan(items).Slice(i * d, d), logs), a = patches.AreaM2[index[i]];
             bool isSteep = features.Level06[index[i]] < limit;
             all += a;
             if (isSteep) allSteep += a;

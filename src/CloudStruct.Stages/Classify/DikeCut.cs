@@ -1,3 +1,5 @@
+using System.Runtime.InteropServices;
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Classes;
 using CloudStruct.Records.Stages;
 
@@ -33,19 +35,25 @@ internal sealed class DikeCut
         var depth = new float[patches.Count];
         var train = new List<int>(dike.Train);
         var side = new List<byte>(dike.Side);
-        for (int i = 0; i < patches.Count; i++)
+        BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
         {
-            depth[i] = (float)sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]);
-            active[i] = free[i] && depth[i] > -reach;
-            inside[i] = free[i] && depth[i] > 0;
-            if (labels.Train.Length == 0 || labels.Train[i] is not ((byte)RockClass.Dike or (byte)RockClass.Host)) continue;
+            for (int i = from; i < to; i++)
+            {
+                depth[i] = (float)sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]);
+                active[i] = free[i] && depth[i] > -reach;
+                inside[i] = free[i] && depth[i] > 0;
+            }
+        });
+        for (int i = 0; i < labels.Train.Length; i++)
+        {
+            if (labels.Train[i] is not ((byte)RockClass.Dike or (byte)RockClass.Host)) continue;
             train.Add(i);
             side.Add((byte)(labels.Train[i] == (byte)RockClass.Dike ? 1 : 0));
         }
 
         Looks[] looks = Learn(dike, train, side);
         var odds = new float[patches.Count];
-        Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
+        BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
         {
             for (int i = from; i < to; i++)
             {
@@ -54,9 +62,9 @@ internal sealed class DikeCut
         });
         Cut();
         // The outline's own edge, freed of its bulges, says where the margins run; then once more.
-        MarginFit fit = MarginFit.Of(sheet, Edges(inside, free), 0.3 * patches.SizeM);
+        MarginFit fit = MarginFit.Of(sheet, Edges(inside, free), 0.3 * patches.SizeM, context.Threads);
         double most = dike.ByColour ? PointCut.Most : 3;
-        Maths.Blocks.BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
+        BlockParallel.For(patches.Count, context.Threads, context.Stop, (from, to) =>
         {
             for (int i = from; i < to; i++)
             {
@@ -91,10 +99,9 @@ internal sealed class DikeCut
         for (int i = 0; i < inside.Length; i++)
         {
             if (!inside[i]) continue;
-            for (int k = 0; k < 27; k++)
+            foreach (int j in patches.Around(i))
             {
-                int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
-                if (j < 0 || inside[j] || !free[j]) continue;
+                if (inside[j] || !free[j]) continue;
                 places.Add(((patches.X[i] + patches.X[j]) / 2, (patches.Y[i] + patches.Y[j]) / 2, (patches.Z[i] + patches.Z[j]) / 2));
             }
         }
@@ -112,10 +119,9 @@ internal sealed class DikeCut
     private Looks[] Learn(FoundDike dike, List<int> train, List<byte> side)
     {
         int c = features.ColourColumns;
-        List<int> fold = [.. Enumerable.Repeat(0, train.Count)];
         var looks = new List<Looks>();
-        if (c > 0 && Looks.Learn(features, [.. Enumerable.Range(0, c)], train, side, fold, -1, curved: true) is { } colour) looks.Add(colour);
-        if (!dike.ByColour && Looks.Learn(features, [.. Enumerable.Range(c, features.Columns - c)], train, side, fold, -1, curved: false) is { } texture) looks.Add(texture);
+        if (c > 0 && Looks.Learn(features, [.. Enumerable.Range(0, c)], CollectionsMarshal.AsSpan(train), CollectionsMarshal.AsSpan(side), [], -1, curved: true, context.Threads) is { } colour) looks.Add(colour);
+        if (!dike.ByColour && Looks.Learn(features, [.. Enumerable.Range(c, features.Columns - c)], CollectionsMarshal.AsSpan(train), CollectionsMarshal.AsSpan(side), [], -1, curved: false, context.Threads) is { } texture) looks.Add(texture);
         return [.. looks];
     }
 
@@ -138,10 +144,9 @@ internal sealed class DikeCut
                 int i = stack.Pop();
                 island.Add(i);
                 area += patches.AreaM2[i];
-                for (int k = 0; k < 27; k++)
+                foreach (int j in patches.Around(i))
                 {
-                    int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
-                    if (j < 0 || !free[j]) continue;
+                    if (!free[j]) continue;
                     touchesFar |= !active[j];
                     if (seen[j] || !active[j] || inside[j] != kind) continue;
                     seen[j] = true;

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Points;
 using CloudStruct.Records.Stages;
 
@@ -38,8 +39,8 @@ internal sealed class DikeDrawing
         var say = new bool[n];
         for (int i = 0; i < n; i++) say[i] = inside[patches.OfPoint[i]];
         PointCut.Run(described, patches, features, dike, margins, looks, inside, free, settings.SmoothingPerM, say, context);
-        MarginFit fine = MarginFit.Of(dike.Sheet, Edges(say), 0.3 * described.Cloud.SpacingM);
-        double sharpness = described.LStar.Length == n ? MarginProfile.Sharpness(described, patches, features, fine, say, free) : double.NaN;
+        MarginFit fine = MarginFit.Of(dike.Sheet, Edges(say), 0.3 * described.Cloud.SpacingM, context.Threads);
+        double sharpness = described.LStar.Length == n ? MarginProfile.Sharpness(described, patches, features, fine, free, context.Threads) : double.NaN;
         return new Drawn(dike, inside, say, odds, fine.ScatterM, sharpness, MarginProfile.Widening(described.Cloud.SpacingM));
     }
 
@@ -54,19 +55,22 @@ internal sealed class DikeDrawing
     private List<(float X, float Y, float Z)> Edges(bool[] say)
     {
         WorkingCloud cloud = described.Cloud;
-        var places = new List<(float, float, float)>();
-        for (int i = 0; i < say.Length; i++)
+        return [.. BlockParallel.Map(say.Length, context.Threads, context.Stop, (from, to) =>
         {
-            if (!say[i]) continue;
-            for (int k = 0; k < Near; k++)
+            var places = new List<(float, float, float)>();
+            for (int i = from; i < to; i++)
             {
-                int j = cloud.Neighbours[(i * WorkingCloud.K) + k];
-                if (j < 0) break;
-                if (say[j] || !free[patches.OfPoint[j]]) continue;
-                places.Add(((cloud.X[i] + cloud.X[j]) / 2, (cloud.Y[i] + cloud.Y[j]) / 2, (cloud.Z[i] + cloud.Z[j]) / 2));
+                if (!say[i]) continue;
+                for (int k = 0; k < Near; k++)
+                {
+                    int j = cloud.Neighbours[(i * WorkingCloud.K) + k];
+                    if (j < 0) break;
+                    if (say[j] || !free[patches.OfPoint[j]]) continue;
+                    places.Add(((cloud.X[i] + cloud.X[j]) / 2, (cloud.Y[i] + cloud.Y[j]) / 2, (cloud.Z[i] + cloud.Z[j]) / 2));
+                }
             }
-        }
 
-        return places;
+            return places;
+        }).SelectMany(p => p)];
     }
 }

@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Frame;
 
 namespace CloudStruct.Stages.Classify;
@@ -8,13 +9,6 @@ internal sealed partial class DikeFinder
     /// <summary>Cosine of 15 deg, as in the search: flatter slabs are beds or benches.</summary>
     private static readonly double SteepestPole = Math.Cos(15 * Math.PI / 180);
 
-    /// <summary>Patches of rock about a sheet, sorted by s.</summary>
-    private sealed record Corridor(List<int> Patch, List<int> Fold, double[] S, double[] V, double[] T)
-    {
-        public SheetFitter Fitter(Patches patches, float[] odds) =>
-            new(patches.SizeM, S, V, T, odds, [.. Patch.Select(p => patches.AreaM2[p])]);
-    }
-
     /// <summary>A fold per stretch: five in turn, so that each fold has stretches from all over the sheet.</summary>
     private static int FoldOf(double s, double foldM)
     {
@@ -22,55 +16,73 @@ internal sealed partial class DikeFinder
         return k < 0 ? k + Folds : k;
     }
 
-    private Corridor CorridorOf(Sheet sheet, double reachM)
+    private StrikeOrder OrderOf(Sheet sheet, double reachM) => StrikeOrder.Of(patches, sheet, reachM, rock, taken, context.Threads, context.Stop);
+
+    private Corridor CorridorOf(Sheet sheet, StrikeOrder order)
     {
-        double width = sheet.WidthM, from = sheet.Knots[0].S, to = sheet.Knots[^1].S;
-        var found = new List<(double S, double V, double T, int Patch)>();
-        for (int i = 0; i < patches.Count; i++)
+        double width = sheet.WidthM, start = sheet.Knots[0].S, end = sheet.Knots[^1].S, foldM = Math.Max(2, width);
+        int[][] parts = BlockParallel.Map(order.Patch.Length, context.Threads, context.Stop, (from, to) =>
         {
-            if (!rock[i] || taken[i]) continue;
-            (double s, double v, double t) = sheet.At(patches.X[i], patches.Y[i], patches.Z[i]);
-            if (Math.Abs(s) > reachM && sheet.Knots.Count == 1 && !double.IsInfinity(reachM)) continue;
-            (double a, double b) = sheet.Margins(s, v);
-            // Beyond the ends the sheet may bend away by some twenty degrees.
-            double beyond = Math.Max(0, Math.Max(from - s, s - to)), slack = (2.2 * width) + (0.35 * beyond);
-            if (t > a - slack && t < b + slack) found.Add((s, v, t, i));
+            var own = new int[to - from];
+            int n = 0;
+            for (int i = from; i < to; i++)
+            {
+                double s = order.S[i], t = order.T[i];
+                (double a, double b) = sheet.Margins(s, order.V[i]);
+                // Beyond the ends the sheet may bend away by some twenty degrees.
+                double beyond = Math.Max(0, Math.Max(start - s, s - end)), slack = (2.2 * width) + (0.35 * beyond);
+                if (t > a - slack && t < b + slack) own[n++] = i;
+            }
+
+            return own[..n];
+        });
+        int[] place = [.. parts.SelectMany(p => p)];
+        int[] patch = new int[place.Length], fold = new int[place.Length];
+        double[] along = new double[place.Length], up = new double[place.Length], across = new double[place.Length];
+        for (int i = 0; i < place.Length; i++)
+        {
+            int p = place[i];
+            (patch[i], fold[i], along[i], up[i], across[i]) = (order.Patch[p], FoldOf(order.S[p], foldM), order.S[p], order.V[p], order.T[p]);
         }
 
-        found.Sort((p, q) => p.S != q.S ? p.S.CompareTo(q.S) : p.Patch.CompareTo(q.Patch));
-        double foldM = Math.Max(2, width);
-        return new Corridor(
-            [.. found.Select(f => f.Patch)], [.. found.Select(f => FoldOf(f.S, foldM))], [.. found.Select(f => f.S)], [.. found.Select(f => f.V)], [.. found.Select(f => f.T)]);
+        return new Corridor(patch, fold, along, up, across);
     }
 
     /// <summary>Patches to learn from: well inside, and on the flanks up to most of a width away: the shaded
     /// steps and rims beside a dike must be learnt as what they are.</summary>
-    private (List<int> Train, List<byte> Side, List<int> Fold) Sides(Sheet sheet, Corridor corridor, double foldM)
+    private Sides SidesOf(Sheet sheet, Corridor corridor)
     {
-        var train = new List<int>();
-        var side = new List<byte>();
-        var fold = new List<int>();
-        double from = sheet.Knots[0].S - sheet.Knots[0].HalfM, to = sheet.Knots[^1].S + sheet.Knots[^1].HalfM;
-        for (int i = 0; i < corridor.Patch.Count; i++)
+        double start = sheet.Knots[0].S - sheet.Knots[0].HalfM, end = sheet.Knots[^1].S + sheet.Knots[^1].HalfM;
+        var which = new sbyte[corridor.Patch.Length];
+        BlockParallel.For(which.Length, context.Threads, context.Stop, (from, to) =>
         {
-            double s = corridor.S[i];
-            if (s < from || s > to) continue;
-            (double a, double b) = sheet.Margins(s, corridor.V[i]);
-            double width = b - a, outside = Math.Max(a - corridor.T[i], corridor.T[i] - b), reach = Math.Max(0.8 * width, 0.5);
-            int which = outside < -0.08 * width ? 1 : outside > 0.08 * width && outside < reach ? 0 : -1;
-            if (which < 0) continue;
-            train.Add(corridor.Patch[i]);
-            side.Add((byte)which);
-            fold.Add(FoldOf(s, foldM));
+            for (int i = from; i < to; i++)
+            {
+                which[i] = -1;
+                double s = corridor.S[i], t = corridor.T[i];
+                if (s < start || s > end) continue;
+                (double a, double b) = sheet.Margins(s, corridor.V[i]);
+                double width = b - a, outside = Math.Max(a - t, t - b), reach = Math.Max(0.8 * width, 0.5);
+                which[i] = (sbyte)(outside < -0.08 * width ? 1 : outside > 0.08 * width && outside < reach ? 0 : -1);
+            }
+        });
+        int n = which.Count(w => w >= 0), at = 0;
+        int[] patch = new int[n], fold = new int[n], place = new int[n];
+        var side = new byte[n];
+        for (int i = 0; i < which.Length; i++)
+        {
+            if (which[i] < 0) continue;
+            (patch[at], side[at], fold[at], place[at]) = (corridor.Patch[i], (byte)which[i], corridor.Fold[i], i);
+            at++;
         }
 
-        return (train, side, fold);
+        return new Sides(patch, side, fold, place);
     }
 
     /// <summary>Fits knots along strike from the middle outward, over hidden stretches too, until the rock no longer shows it.</summary>
     private void Follow(Sheet sheet, Corridor corridor, float[] odds)
     {
-        SheetFitter fitter = corridor.Fitter(patches, odds);
+        SheetFitter fitter = corridor.Fitter(patches, odds, context.Threads);
         double width = sheet.WidthM, half = Math.Max(Math.Max(0.75 * width, 0.75), 8 * patches.SizeM), step = half;
         Knot start = sheet.Knots[sheet.Knots.Count / 2];
         // A refitted sheet keeps its own knots as guesses; a fresh one is followed out of its window.
@@ -84,8 +96,7 @@ internal sealed partial class DikeFinder
             double reachGap = Math.Max(4 * width, 8);
             var up = new List<Knot>();
             var down = new List<Knot>();
-            March(+1, first, up);
-            March(-1, first, down);
+            BlockParallel.For(2, context.Threads, context.Stop, (way, _) => March(way == 0 ? +1 : -1, first, way == 0 ? up : down), length: 1);
             down.Reverse();
             knots = [.. down, first, .. up];
 
@@ -133,22 +144,33 @@ internal sealed partial class DikeFinder
     {
         Knot knot = sheet.Knots[0];
         double width = knot.B - knot.A, reach = 1.1 * width, bin = Math.Max(patches.SizeM / 2, width / 60);
-        int bins = (int)Math.Ceiling(2 * reach / bin), least = (int)(0.5 * width / bin), most = (int)(1.9 * width / bin);
-        var sum = new double[bins + 1];
+        int bins = (int)Math.Ceiling(2 * reach / bin), least = (int)(0.5 * width / bin), most = (int)(1.9 * width / bin), n = odds.Length;
+        double[] dx = new double[n], dy = new double[n], dz = new double[n];
+        var gain = new float[n];
+        for (int i = 0; i < n; i++)
+        {
+            int p = corridor.Patch[i];
+            (dx[i], dy[i], dz[i], gain[i]) = (patches.X[p] - sheet.Origin.X, patches.Y[p] - sheet.Origin.Y, patches.Z[p] - sheet.Origin.Z, odds[i] * patches.AreaM2[p]);
+        }
+
         Vec3 best = sheet.N;
         (double top, int from, int to) = Score(best);
+        var around = new (Vec3 Normal, double Value, int From, int To)[6];
         for (double step = 12; step > 1; step /= 2)
         {
             for (int again = 0; again < 2; again++)
             {
                 Vec3 about = best, e1 = Math.Abs(about.Z) < 0.9 ? about.Cross(Vec3.Up).Unit() : about.Cross(new Vec3(1, 0, 0)).Unit(), e2 = about.Cross(e1);
                 double tan = Math.Tan(step * Math.PI / 180);
-                bool moved = false;
-                for (int k = 0; k < 6; k++)
+                BlockParallel.For(around.Length, context.Threads, context.Stop, (k, _) =>
                 {
                     Vec3 near = (about + (e1 * (tan * Math.Cos(k * Math.PI / 3))) + (e2 * (tan * Math.Sin(k * Math.PI / 3)))).Unit();
-                    if (Math.Abs(near.Z) > SteepestPole) continue;
-                    (double value, int a, int b) = Score(near);
+                    (double value, int a, int b) = Math.Abs(near.Z) > SteepestPole ? (double.NegativeInfinity, 0, 1) : Score(near);
+                    around[k] = (near, value, a, b);
+                }, length: 1);
+                bool moved = false;
+                foreach ((Vec3 near, double value, int a, int b) in around)
+                {
                     // A degree that wins nothing is not taken.
                     if (value <= top * (1 + 1e-3)) continue;
                     (top, from, to, best, moved) = (value, a, b, near, true);
@@ -165,13 +187,15 @@ internal sealed partial class DikeFinder
 
         (double Value, int From, int To) Score(Vec3 normal)
         {
-            Array.Clear(sum);
-            for (int i = 0; i < odds.Length; i++)
+            var sum = new double[bins + 1];
+            unchecked
             {
-                int p = corridor.Patch[i];
-                double t = normal.Dot(new Vec3(patches.X[p], patches.Y[p], patches.Z[p]) - sheet.Origin);
-                int at = (int)((t + reach) / bin) + 1;
-                if (t >= -reach && at <= bins) sum[at] += odds[i] * patches.AreaM2[p];
+                for (int i = 0; i < gain.Length; i++)
+                {
+                    double t = (normal.X * dx[i]) + (normal.Y * dy[i]) + (normal.Z * dz[i]);
+                    int at = (int)((t + reach) / bin) + 1;
+                    if (t >= -reach && at <= bins) sum[at] += gain[i];
+                }
             }
 
             for (int k = 1; k <= bins; k++) sum[k] += sum[k - 1];

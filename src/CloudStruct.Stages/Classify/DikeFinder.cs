@@ -1,3 +1,4 @@
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Records.Frame;
 using CloudStruct.Records.Stages;
 
@@ -58,10 +59,11 @@ internal sealed partial class DikeFinder
             if (!(labels.Verdict(patches, dike.Sheet) ?? IsDike(dike.Judgement, drawn))) continue;
             drawing.Keep(drawn);
             found.Add(dike);
-            for (int i = 0; i < taken.Length; i++)
+            double beside = -0.1 * dike.Sheet.WidthM;
+            BlockParallel.For(taken.Length, context.Threads, context.Stop, (from, to) =>
             {
-                if (dike.Sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]) > -0.1 * dike.Sheet.WidthM) taken[i] = true;
-            }
+                for (int i = from; i < to; i++) taken[i] |= dike.Sheet.Depth(patches.X[i], patches.Y[i], patches.Z[i]) > beside;
+            });
         }
     }
 
@@ -78,53 +80,65 @@ internal sealed partial class DikeFinder
         sheet.Knots.Add(new Knot { S = 0, HalfM = half, A = -candidate.WidthM / 2, B = candidate.WidthM / 2 });
         for (int aim = 0; aim < 2; aim++)
         {
-            Corridor corridor = CorridorOf(sheet, half);
-            (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, foldM: Math.Max(2, sheet.WidthM));
-            float[]? odds = Appearance.LogOdds(features, colour, surface, train, side, fold, corridor.Patch, corridor.Fold, 1);
-            if (odds == null || Tells(corridor, odds, train, side) < 0.65) return null;
+            Corridor corridor = CorridorOf(sheet, OrderOf(sheet, half));
+            Sides sides = SidesOf(sheet, corridor);
+            float[]? odds = Appearance.Learn(features, colour, surface, sides, 1, context.Threads)?.LogOdds(corridor.Patch, corridor.Fold);
+            if (odds == null || Tells(odds, sides) < 0.65) return null;
             sheet = Aimed(sheet, corridor, odds);
         }
 
+        StrikeOrder? whole = null;
         for (int round = 0; round < 3; round++)
         {
-            Corridor corridor = CorridorOf(sheet, round == 0 ? half : double.PositiveInfinity);
-            (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, foldM: Math.Max(2, sheet.WidthM));
-            float[]? odds = Appearance.LogOdds(features, colour, surface, train, side, fold, corridor.Patch, corridor.Fold, 1);
+            Corridor corridor = CorridorOf(sheet, round == 0 ? OrderOf(sheet, half) : whole ??= OrderOf(sheet, double.PositiveInfinity));
+            Sides sides = SidesOf(sheet, corridor);
+            float[]? odds = Appearance.Learn(features, colour, surface, sides, 1, context.Threads)?.LogOdds(corridor.Patch, corridor.Fold);
             if (odds == null) return null;
-            if (Tells(corridor, odds, train, side) < 0.7) return null;
+            if (Tells(odds, sides) < 0.7) return null;
             Follow(sheet, corridor, odds);
             // What shows its margins nowhere need not be learnt again.
             if (sheet.Knots.Count(k => k.BothMargins) < 0.3 * sheet.Knots.Count) return null;
             if (sheet.Knots.Count == 0 || !(sheet.WidthM >= narrowestM && sheet.WidthM <= 1.3 * widestM)) return null;
         }
 
-        return Judge(sheet, labels);
+        return Judge(sheet, whole!, labels);
     }
 
     /// <summary>Separation of the training sides by their own odds: too good by nature, so what fails it is nothing.</summary>
-    private static double Tells(Corridor corridor, float[] odds, List<int> train, List<byte> side)
+    private double Tells(float[] odds, Sides sides)
     {
-        var place = new Dictionary<int, int>(corridor.Patch.Count);
-        for (int i = 0; i < corridor.Patch.Count; i++) place[corridor.Patch[i]] = i;
-        var inside = new List<float>();
-        var outside = new List<float>();
-        for (int i = 0; i < train.Count; i++) (side[i] == 1 ? inside : outside).Add(odds[place[train[i]]]);
-        return Appearance.Auc(inside, outside);
+        float[] inside = new float[sides.Patch.Length], outside = new float[sides.Patch.Length];
+        int ins = 0, outs = 0;
+        for (int i = 0; i < sides.Place.Length; i++)
+        {
+            if (sides.Side[i] == 1) inside[ins++] = odds[sides.Place[i]];
+            else outside[outs++] = odds[sides.Place[i]];
+        }
+
+        float[][] both = [inside[..ins], outside[..outs]];
+        BlockParallel.For(2, context.Threads, context.Stop, (from, _) => RankSeparation.Sort(both[from]), length: 1);
+        return RankSeparation.Auc(both[0], both[1]);
     }
 
-    private FoundDike? Judge(Sheet sheet, PatchLabels labels)
+    private FoundDike? Judge(Sheet sheet, StrikeOrder order, PatchLabels labels)
     {
-        Corridor corridor = CorridorOf(sheet, double.PositiveInfinity);
+        Corridor corridor = CorridorOf(sheet, order);
         double width = sheet.WidthM;
-        (List<int> train, List<byte> side, List<int> fold) = Sides(sheet, corridor, Math.Max(2, width));
-        double textureAuc = HeldOut([], texture), colourAuc = colour.Length > 0 ? HeldOut(colour, []) : 0.5;
-        float[] slopes = [.. train.Select(p => features.Level06[p])];
-        double slopeAuc = Math.Max(Worse(slopes), Worse([.. slopes.Select(v => -v)]));
+        Sides sides = SidesOf(sheet, corridor);
+        sbyte[] flanks = Flanks(sheet, corridor, sides);
+        // Each stretch by what was learnt on the others. Odds by colour are asked of the whole corridor, where the margins are looked for too.
+        Appearance? byColours = colour.Length > 0 ? Appearance.Learn(features, colour, [], sides, Folds, context.Threads) : null;
+        Appearance? byTextures = Appearance.Learn(features, [], texture, sides, Folds, context.Threads);
+        float[]? colourOdds = byColours?.LogOdds(corridor.Patch, corridor.Fold);
+        double colourAuc = colourOdds == null ? 0.5 : Worse(Averaged(sides.Patch, [.. sides.Place.Select(p => colourOdds[p])]), flanks);
+        double textureAuc = byTextures == null ? 0.5 : Worse(Averaged(sides.Patch, byTextures.LogOdds(sides.Patch, sides.Fold)), flanks);
+        float[] slopes = [.. sides.Patch.Select(p => features.Level06[p])];
+        double slopeAuc = Math.Max(Worse(slopes, flanks), Worse([.. slopes.Select(v => -v)], flanks));
         bool byColour = colourAuc >= textureAuc - 0.05;
-        float[]? odds = Appearance.LogOdds(features, byColour ? colour : [], byColour ? [] : texture, train, side, fold, corridor.Patch, corridor.Fold, Folds);
+        float[]? odds = byColour ? (colour.Length > 0 ? colourOdds : new float[corridor.Patch.Length]) : byTextures?.LogOdds(corridor.Patch, corridor.Fold);
         if (odds == null) return null;
         odds = Averaged(corridor.Patch, odds);
-        var fitter = corridor.Fitter(patches, odds);
+        SheetFitter fitter = corridor.Fitter(patches, odds, context.Threads);
         double wander = fitter.Wander(sheet, Math.Max(0.5, 0.2 * width));
         int both = sheet.Knots.Count(k => k.BothMargins);
         double length = both == 0 ? 0 : sheet.Knots.Where(k => k.BothMargins).Max(k => k.S + k.HalfM) - sheet.Knots.Where(k => k.BothMargins).Min(k => k.S - k.HalfM);
@@ -132,53 +146,51 @@ internal sealed partial class DikeFinder
         // A hand that has labelled dike and host knows better than the shape.
         bool accepted = labels.Verdict(patches, sheet) ?? IsPlausible(judgement);
         Looked.Add((judgement, accepted));
-        return accepted ? new FoundDike(sheet, judgement, train, side, byColour) : null;
+        return accepted ? new FoundDike(sheet, judgement, sides.Patch, sides.Side, byColour) : null;
+    }
 
-        // The worse of the two flanks: a bench edge or a bed differs from one side only.
-        double HeldOut(int[] ofColour, int[] ofTexture)
+    /// <summary>Part of the sheet that each training patch lies in: -1 inside, 0 the flank of A, 1 that of B.</summary>
+    private static sbyte[] Flanks(Sheet sheet, Corridor corridor, Sides sides)
+    {
+        var part = new sbyte[sides.Patch.Length];
+        for (int i = 0; i < part.Length; i++)
         {
-            float[]? o = Appearance.LogOdds(features, ofColour, ofTexture, train, side, fold, train, fold, Folds);
-            return o == null ? 0.5 : Worse(Averaged(train, o));
+            int p = sides.Place[i];
+            (double a, double b) = sheet.Margins(corridor.S[p], corridor.V[p]);
+            part[i] = (sbyte)(sides.Side[i] == 1 ? -1 : corridor.T[p] < (a + b) / 2 ? 0 : 1);
         }
 
-        double Worse(float[] o)
-        {
-            var inside = new List<float>();
-            var flank = new[] { new List<float>(), new List<float>() };
-            for (int i = 0; i < train.Count; i++)
-            {
-                if (side[i] == 1)
-                {
-                    inside.Add(o[i]);
-                    continue;
-                }
+        return part;
+    }
 
-                (double s, double v, double t) = sheet.At(patches.X[train[i]], patches.Y[train[i]], patches.Z[train[i]]);
-                (double a, double b) = sheet.Margins(s, v);
-                flank[t < (a + b) / 2 ? 0 : 1].Add(o[i]);
-            }
-
-            return Math.Min(Appearance.Auc(inside, flank[0]), Appearance.Auc(inside, flank[1]));
-        }
+    /// <summary>Separation of the inside from the worse of the two flanks: a bench edge or a bed differs from one side only.</summary>
+    private double Worse(float[] odds, sbyte[] parts)
+    {
+        var counts = new int[3];
+        foreach (sbyte p in parts) counts[p + 1]++;
+        float[][] samples = [new float[counts[0]], new float[counts[1]], new float[counts[2]]];
+        Array.Clear(counts);
+        for (int i = 0; i < parts.Length; i++) samples[parts[i] + 1][counts[parts[i] + 1]++] = odds[i];
+        BlockParallel.For(3, context.Threads, context.Stop, (from, _) => RankSeparation.Sort(samples[from]), length: 1);
+        return Math.Min(RankSeparation.Auc(samples[0], samples[1]), RankSeparation.Auc(samples[0], samples[2]));
     }
 
     /// <summary>Odds averaged over each patch and its neighbours in the list: one lichen spot does not make an outlier.</summary>
-    private float[] Averaged(List<int> list, float[] odds)
+    private float[] Averaged(int[] list, float[] odds)
     {
         var place = new int[patches.Count];
         Array.Fill(place, -1);
-        for (int i = 0; i < list.Count; i++) place[list[i]] = i;
+        for (int i = 0; i < list.Length; i++) place[list[i]] = i;
         var mean = new float[odds.Length];
-        Maths.Blocks.BlockParallel.For(list.Count, context.Threads, context.Stop, (from, to) =>
+        BlockParallel.For(list.Length, context.Threads, context.Stop, (from, to) =>
         {
             for (int i = from; i < to; i++)
             {
                 int p = list[i], count = 0;
                 float sum = 0;
-                for (int k = 0; k < 27; k++)
+                foreach (int j in patches.Around(p))
                 {
-                    int j = patches.Map.Find(patches.Cell[3 * p] + (k % 3) - 1, patches.Cell[(3 * p) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * p) + 2] + (k / 9) - 1);
-                    if (j < 0 || place[j] < 0) continue;
+                    if (place[j] < 0) continue;
                     sum += odds[place[j]];
                     count++;
                 }

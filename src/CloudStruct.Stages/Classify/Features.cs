@@ -47,10 +47,14 @@ internal sealed class Features
         {
             Level level = levels[start + w];
             float[] shape = level.ToPatches(level.Shape(context), 4, patches, context);
-            for (int i = 0; i < n; i++)
+            int at = colour + 1 + (3 * w);
+            BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
             {
-                for (int c = 0; c < 3; c++) rows[(i * columns) + colour + 1 + (3 * w) + c] = c == 2 ? MathF.Sqrt(shape[(4 * i) + c]) : shape[(4 * i) + c];
-            }
+                for (int i = from; i < to; i++)
+                {
+                    for (int c = 0; c < 3; c++) rows[(i * columns) + at + c] = c == 2 ? MathF.Sqrt(shape[(4 * i) + c]) : shape[(4 * i) + c];
+                }
+            });
 
             if (w <= 1)
             {
@@ -78,10 +82,9 @@ internal sealed class Features
         int n = patches.Count, stride = Math.Max(1, n / 12_000);
         directionFits = new double[Columns][];
         (middles, scales) = (new float[Columns], new float[Columns]);
-        for (int c = 0; c < Columns; c++)
+        BlockParallel.For(Columns, context.Threads, context.Stop, (column, _) =>
         {
-            int column = c;
-            double[] coefficients = directionFits[c] = DirectionFit(patches, rock, column, stride);
+            double[] coefficients = directionFits[column] = DirectionFit(patches, rock, column, stride);
             var sample = new List<float>();
             for (int i = 0; i < n; i += stride)
             {
@@ -90,17 +93,19 @@ internal sealed class Features
             }
 
             (float middle, float scale) = MedianAndScale(sample);
-            (middles[c], scales[c]) = (middle, scale);
-            BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
+            (middles[column], scales[column]) = (middle, scale);
+        }, length: 1);
+        BlockParallel.For(n, context.Threads, context.Stop, (from, to) =>
+        {
+            for (int i = from; i < to; i++)
             {
-                for (int i = from; i < to; i++)
+                for (int c = 0; c < Columns; c++)
                 {
-                    ref float v = ref Rows[(i * Columns) + column];
-                    float t = (v - (float)Predict(coefficients, patches.Normal[i], SlopeFor(column, i)) - middle) / scale;
-                    v = float.IsFinite(t) ? Math.Clamp(t, -6, 6) : 0;
+                    ref float v = ref Rows[(i * Columns) + c];
+                    v = Standard(c, v, patches.Normal[i], i);
                 }
-            });
-        }
+            }
+        });
     }
 
     /// <summary>A raw number of a place as <see cref="Rows"/> would have it.</summary>

@@ -6,4 +6,4 @@ namespace CloudStruct.Stages.Classify;
 /// <param name="Train">Patches learnt from.</param>
 /// <param name="Side">Their side: 1 inside.</param>
 /// <param name="ByColour">True when colour carries the decision.</param>
-internal sealed record FoundDike(Sheet Sheet, DikeJudgement Judgement, List<int> Train, List<byte> Side, bool ByColour);
+internal sealed record FoundDike(Sheet Sheet, DikeJudgement Judgement, int[] Train, byte[] Side, bool ByColour);

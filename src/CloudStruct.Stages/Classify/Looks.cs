@@ -1,4 +1,7 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
+using System.Runtime.Intrinsics;
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Mixtures;
 
 namespace CloudStruct.Stages.Classify;
@@ -27,35 +30,39 @@ internal sealed class Looks
     /// <param name="columns">Columns used, one after the other.</param>
     /// <param name="train">Patches with a side.</param>
     /// <param name="side">Side of each: 1 inside, 0 outside.</param>
-    /// <param name="fold">Fold of each.</param>
+    /// <param name="fold">Fold of each; empty for none.</param>
     /// <param name="leaveOut">Fold left out; -1 for none.</param>
     /// <param name="curved">Mixtures instead of one normal law a side.</param>
+    /// <param name="threads">Workers.</param>
     /// <returns>Null when a side has too few patches.</returns>
-    public static Looks? Learn(Features features, int[] columns, List<int> train, List<byte> side, List<int> fold, int leaveOut, bool curved)
+    public static Looks? Learn(
+        Features features, int[] columns, ReadOnlySpan<int> train, ReadOnlySpan<byte> side, ReadOnlySpan<int> fold, int leaveOut, bool curved, int threads)
     {
         int d = columns.Length;
         var count = new int[2];
-        for (int i = 0; i < train.Count; i++)
+        bool all = leaveOut < 0;
+        for (int i = 0; i < train.Length; i++)
         {
-            if (fold[i] != leaveOut) count[side[i]]++;
+            if (all || fold[i] != leaveOut) count[side[i]]++;
         }
 
         if (Math.Min(count[0], count[1]) < 40) return null;
         int most = curved ? MostMixed : MostItems;
         double[] stride = [Math.Max(1.0, (double)count[0] / most), Math.Max(1.0, (double)count[1] / most)], due = [0, 0];
         var items = new[] { new List<double>(), new List<double>() };
-        for (int i = 0; i < train.Count; i++)
+        for (int i = 0; i < train.Length; i++)
         {
             int s = side[i];
-            if (fold[i] == leaveOut || (due[s] += 1) < stride[s]) continue;
+            if ((!all && fold[i] == leaveOut) || (due[s] += 1) < stride[s]) continue;
             due[s] -= stride[s];
             for (int c = 0; c < d; c++) items[s].Add(features.Rows[(train[i] * features.Columns) + columns[c]]);
         }
 
         if (curved)
         {
-            GaussianMixture? inner = Mixed(items[1], d), outer = Mixed(items[0], d);
-            if (inner != null && outer != null) return new Looks(columns, null, inner, outer) { IsColour = columns[0] < features.ColourColumns };
+            var mixed = new GaussianMixture?[2];
+            BlockParallel.For(2, threads, CancellationToken.None, (from, _) => mixed[from] = Mixed(items[from], d), length: 1);
+            if (mixed[1] is { } inner && mixed[0] is { } outer) return new Looks(columns, null, inner, outer) { IsColour = columns[0] < features.ColourColumns };
         }
 
         double[] both = [.. items[0], .. items[1]];
@@ -98,6 +105,51 @@ internal sealed class Looks
         }
 
         return (float)Math.Clamp(inside!.LogDensities(item, logs) - outside!.LogDensities(item, logs), -clip, clip);
+    }
+
+    /// <summary>Adds the log odds inside : outside, each within ±clip, of the patches asked about.</summary>
+    /// <param name="features">Rows.</param>
+    /// <param name="patches">Patches asked about.</param>
+    /// <param name="picked">Which of them; empty for all.</param>
+    /// <param name="to">[in, out] Log odds per patch asked about.</param>
+    /// <param name="clip">Largest log odds.</param>
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
+    public void Add(Features features, ReadOnlySpan<int> patches, ReadOnlySpan<int> picked, Span<float> to, float clip)
+    {
+        unchecked
+        {
+            int d = columns.Length, width = features.Columns, n = picked.IsEmpty ? patches.Length : picked.Length;
+            ReadOnlySpan<float> rows = features.Rows;
+            Span<Vector256<double>> item = stackalloc Vector256<double>[d], logs = stackalloc Vector256<double>[RowKinds];
+            for (int i = 0; i < n; i += 4)
+            {
+                int last = n - 1, i0 = i, i1 = Math.Min(i + 1, last), i2 = Math.Min(i + 2, last), i3 = Math.Min(i + 3, last);
+                if (!picked.IsEmpty) (i0, i1, i2, i3) = (picked[i0], picked[i1], picked[i2], picked[i3]);
+                int p0 = patches[i0] * width, p1 = patches[i1] * width, p2 = patches[i2] * width, p3 = patches[i3] * width;
+                for (int c = 0; c < d; c++)
+                {
+                    int at = columns[c];
+                    item[c] = Vector256.Create((double)rows[p0 + at], rows[p1 + at], rows[p2 + at], rows[p3 + at]);
+                }
+
+                Vector256<double> odds;
+                if (plain != null)
+                {
+                    plain.Logs(item, logs);
+                    odds = logs[1] - logs[0];
+                }
+                else
+                {
+                    odds = inside!.LogDensities(item, logs) - outside!.LogDensities(item, logs);
+                }
+
+                odds = Vector256.Min(Vector256.Max(odds, Vector256.Create((double)-clip)), Vector256.Create((double)clip));
+                to[i0] += (float)odds[0];
+                if (i + 1 < n) to[i1] += (float)odds[1];
+                if (i + 2 < n) to[i2] += (float)odds[2];
+                if (i + 3 < n) to[i3] += (float)odds[3];
+            }
+        }
     }
 
     private static GaussianMixture? Mixed(List<double> items, int d) =>

@@ -1,3 +1,5 @@
+using CloudStruct.Maths.Blocks;
+
 namespace CloudStruct.Stages.Classify;
 
 /// <summary>Where the margins of one dike run in detail: the sheet plus what the outline's own edge says, fitted locally and
@@ -16,7 +18,9 @@ internal sealed class MarginFit
 
     private readonly Sheet sheet;
     private readonly double leastSigmaM, looseSigmaM;
-    private readonly Dictionary<(int, int), Local>[] fits = [[], []];
+    private double farthestM;
+    private readonly Local[][] fits = [[], []];   // per margin a rectangle of cells, S first; those without a fit have no scatter
+    private readonly (int S, int V, int Ss, int Vs)[] cells = new (int, int, int, int)[2];
 
     private MarginFit(Sheet sheet, double leastSigmaM)
     {
@@ -41,7 +45,8 @@ internal sealed class MarginFit
     /// <param name="sheet">The sheet.</param>
     /// <param name="places">Places on the edge of the outline, local frame [m].</param>
     /// <param name="leastSigmaM">Least scatter believed: places on the edge are known no better [m].</param>
-    public static MarginFit Of(Sheet sheet, List<(float X, float Y, float Z)> places, double leastSigmaM)
+    /// <param name="threads">Workers.</param>
+    public static MarginFit Of(Sheet sheet, List<(float X, float Y, float Z)> places, double leastSigmaM, int threads)
     {
         var fit = new MarginFit(sheet, leastSigmaM);
         var edges = new[] { new Dictionary<(int, int), List<Edge>>(), new Dictionary<(int, int), List<Edge>>() };
@@ -61,11 +66,24 @@ internal sealed class MarginFit
         var scatter = new List<double>();
         for (int side = 0; side < 2; side++)
         {
-            foreach ((int, int) cell in edges[side].Keys)
+            (int S, int V)[] at = [.. edges[side].Keys];
+            if (at.Length == 0) continue;
+            Dictionary<(int, int), List<Edge>> own = edges[side];
+            var locals = new Local?[at.Length];
+            BlockParallel.For(at.Length, threads, CancellationToken.None, (from, to) =>
             {
-                if (fit.At(edges[side], cell) is not { } local) continue;
-                fit.fits[side][cell] = local;
+                for (int k = from; k < to; k++) locals[k] = fit.At(own, at[k]);
+            }, length: 16);
+            int s0 = at.Min(c => c.S), v0 = at.Min(c => c.V), ss = at.Max(c => c.S) - s0 + 1, vs = at.Max(c => c.V) - v0 + 1;
+            fit.cells[side] = (s0, v0, ss, vs);
+            fit.fits[side] = new Local[(long)ss * vs];
+            for (int k = 0; k < at.Length; k++)
+            {
+                if (locals[k] is not { } local) continue;
+                fit.fits[side][((at[k].S - s0) * vs) + at[k].V - v0] = local;
                 scatter.Add(local.SigmaM);
+                // The farthest that a fit is asked for is the fourth ring.
+                fit.farthestM = Math.Max(fit.farthestM, Math.Abs(local.Offset) + (4.5 * CellM * (Math.Abs(local.AlongS) + Math.Abs(local.AlongV))));
             }
         }
 
@@ -99,6 +117,14 @@ internal sealed class MarginFit
         return depthM / sigma;
     }
 
+    /// <summary>No more than the distance of a place from the fitted margins [m]; 0 beyond the ends.</summary>
+    public double Off(float x, float y, float z)
+    {
+        (double s, double v, double t) = sheet.At(x, y, z);
+        (double a, double b) = sheet.Margins(s, v);
+        return sheet.Beyond(s) > 0 ? 0 : Math.Min(Math.Abs(t - a), Math.Abs(b - t)) - farthestM;
+    }
+
     private static (int, int) CellOf(double s, double v) => ((int)Math.Floor(s / CellM), (int)Math.Floor(v / CellM));
 
     private (double OffsetM, double SigmaM) Offset(int side, double s, double v)
@@ -106,13 +132,16 @@ internal sealed class MarginFit
         // The mean of the fits about, the nearer the heavier; where the trace is hidden the sheet itself, loosely.
         (int cs, int cv) = CellOf(s, v);
         double sum = 0, sigma = 0, weight = 0;
+        Local[] own = fits[side];
+        (int firstS, int firstV, int ss, int vs) = cells[side];
         for (int ring = 1; ring <= 4 && weight == 0; ring += 1)
         {
-            for (int i = cs - ring; i <= cs + ring; i++)
+            for (int i = Math.Max(cs - ring, firstS); i <= Math.Min(cs + ring, firstS + ss - 1); i++)
             {
-                for (int j = cv - ring; j <= cv + ring; j++)
+                for (int j = Math.Max(cv - ring, firstV); j <= Math.Min(cv + ring, firstV + vs - 1); j++)
                 {
-                    if (!fits[side].TryGetValue((i, j), out Local f)) continue;
+                    Local f = own[((i - firstS) * vs) + j - firstV];
+                    if (!(f.SigmaM > 0)) continue;
                     double ds = s - ((i + 0.5) * CellM), dv = v - ((j + 0.5) * CellM), w = 1 / (0.05 + (ds * ds) + (dv * dv));
                     sum += w * (f.Offset + (f.AlongS * ds) + (f.AlongV * dv));
                     sigma += w * f.SigmaM;

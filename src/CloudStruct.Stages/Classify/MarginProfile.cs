@@ -1,4 +1,5 @@
 using System.Numerics;
+using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Mixtures;
 using CloudStruct.Records.Points;
 
@@ -22,30 +23,34 @@ internal static class MarginProfile
     /// <param name="patches">Patches.</param>
     /// <param name="features">Features.</param>
     /// <param name="margins">Margins fitted to the outline at the points' spacing.</param>
-    /// <param name="say">Points of the outline.</param>
     /// <param name="free">Rock that no other dike has.</param>
+    /// <param name="threads">Workers.</param>
     /// <returns>NaN when too little rock shows beside the margins.</returns>
-    public static double Sharpness(DescribedCloud described, Patches patches, Features features, MarginFit margins, bool[] say, bool[] free)
+    public static double Sharpness(DescribedCloud described, Patches patches, Features features, MarginFit margins, bool[] free, int threads)
     {
         WorkingCloud cloud = described.Cloud;
         double h = cloud.SpacingM, near = Math.Max(NearM, 2 * h), far = Math.Clamp(0.25 * margins.WidthM, 2 * near, 0.6), farthest = 2 * far;
         // Four places: far outside, just outside, just inside, far inside.
-        var rows = new List<double>[] { [], [], [], [] };
-        Span<float> row = stackalloc float[3];
-        for (int i = 0; i < cloud.Count; i++)
+        List<double>[][] parts = BlockParallel.Map(cloud.Count, threads, CancellationToken.None, (from, to) =>
         {
-            int p = patches.OfPoint[i];
-            if (!free[p]) continue;
-            double sigmas = margins.DepthInSigmas(cloud.X[i], cloud.Y[i], cloud.Z[i], out double depth), off = Math.Abs(depth);
-            if (off > farthest || double.IsNaN(sigmas)) continue;
-            int at = off > far ? depth < 0 ? 0 : 3 : off < near ? depth < 0 ? 1 : 2 : -1;
-            if (at < 0) continue;
-            var normal = new Vector3(described.NormalX[i], described.NormalY[i], described.NormalZ[i]);
-            rows[at].Add(features.Standard(0, described.LStar[i], normal, p));
-            rows[at].Add(features.Standard(1, 100 * described.LogRedGreen[i], normal, p));
-            rows[at].Add(features.Standard(2, 100 * described.LogBlueGreen[i], normal, p));
-        }
+            List<double>[] own = [[], [], [], []];
+            for (int i = from; i < to; i++)
+            {
+                int p = patches.OfPoint[i];
+                if (!free[p] || margins.Off(cloud.X[i], cloud.Y[i], cloud.Z[i]) > farthest) continue;
+                double sigmas = margins.DepthInSigmas(cloud.X[i], cloud.Y[i], cloud.Z[i], out double depth), off = Math.Abs(depth);
+                if (off > farthest || double.IsNaN(sigmas)) continue;
+                int at = off > far ? depth < 0 ? 0 : 3 : off < near ? depth < 0 ? 1 : 2 : -1;
+                if (at < 0) continue;
+                var normal = new Vector3(described.NormalX[i], described.NormalY[i], described.NormalZ[i]);
+                own[at].Add(features.Standard(0, described.LStar[i], normal, p));
+                own[at].Add(features.Standard(1, 100 * described.LogRedGreen[i], normal, p));
+                own[at].Add(features.Standard(2, 100 * described.LogBlueGreen[i], normal, p));
+            }
 
+            return own;
+        });
+        List<double>[] rows = [.. Enumerable.Range(0, 4).Select(k => parts.SelectMany(p => p[k]).ToList())];
         if (rows.Min(r => r.Count) < 300) return double.NaN;
         double[][] mean = [.. rows.Select(Mean)];
         // Fisher's direction between far outside and far inside.

@@ -29,12 +29,10 @@ internal static class PatchCut
             if (node[i] < 0) continue;
             double evidence = odds[i] * patches.AreaM2[i] / SheetFitter.IndependentM2;
             double source = Math.Max(0, evidence), sink = Math.Max(0, -evidence);
-            for (int k = 0; k < 27; k++)
+            foreach (int j in patches.Around(i))
             {
-                if (k == 13) continue;
-                int dx = (k % 3) - 1, dy = (k / 3 % 3) - 1, dz = (k / 9) - 1;
-                int j = patches.Map.Find(patches.Cell[3 * i] + dx, patches.Cell[(3 * i) + 1] + dy, patches.Cell[(3 * i) + 2] + dz);
-                if (j < 0) continue;
+                if (j == i) continue;
+                int dx = patches.Cell[3 * i] - patches.Cell[3 * j], dy = patches.Cell[(3 * i) + 1] - patches.Cell[(3 * j) + 1], dz = patches.Cell[(3 * i) + 2] - patches.Cell[(3 * j) + 2];
                 double price = perM * size * Math.PI / 8 / Math.Sqrt((dx * dx) + (dy * dy) + (dz * dz));
                 if (node[j] >= 0)
                 {
@@ -72,10 +70,9 @@ internal static class PatchCut
             var next = new List<int>();
             foreach (int i in front)
             {
-                for (int k = 0; k < 27; k++)
+                foreach (int j in patches.Around(i))
                 {
-                    int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
-                    if (j < 0 || grown[j]) continue;
+                    if (grown[j]) continue;
                     grown[j] = true;
                     next.Add(j);
                 }

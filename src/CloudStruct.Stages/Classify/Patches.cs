@@ -44,6 +44,12 @@ internal sealed class Patches
     /// <summary>Cells of the lattice to patches.</summary>
     public required CellMap Map { get; init; }
 
+    // Looked up once: the odds of each candidate are averaged over them three times, and every cut asks again.
+    private int[] starts = [], around = [];
+
+    /// <summary>Patches whose cells touch each patch's, itself among them, in the order of the lattice.</summary>
+    public ReadOnlySpan<int> Around(int i) => around.AsSpan(starts[i], starts[i + 1] - starts[i]);
+
     public Vector3 Place(int i) => new(X[i], Y[i], Z[i]);
 
     /// <summary>Cuts the cells of the shared grid into 1 to 4 parts a side, so that no point has to be sorted again.</summary>
@@ -143,10 +149,42 @@ internal sealed class Patches
 
         var map = new CellMap(n);
         for (int p = 0; p < n; p++) map.FindOrAdd(at[3 * p], at[(3 * p) + 1], at[(3 * p) + 2]);
-        return new Patches
+        var patches = new Patches
         {
             SizeM = part, OfPoint = ofPoint, Cell = at, X = x, Y = y, Z = z, AreaM2 = area, Normal = normal, Colour = colour,
             LogRoughness = rough, Planarity = planar, Map = map,
         };
+        patches.Touch(context);
+        return patches;
+    }
+
+    private void Touch(StageContext context)
+    {
+        starts = new int[Count + 1];
+        int[][] lists = BlockParallel.Map(Count, context.Threads, context.Stop, (from, to) =>
+        {
+            var own = new List<int>(12 * (to - from));
+            for (int i = from; i < to; i++)
+            {
+                int before = own.Count;
+                for (int k = 0; k < 27; k++)
+                {
+                    int j = Map.Find(Cell[3 * i] + (k % 3) - 1, Cell[(3 * i) + 1] + (k / 3 % 3) - 1, Cell[(3 * i) + 2] + (k / 9) - 1);
+                    if (j >= 0) own.Add(j);
+                }
+
+                starts[i + 1] = own.Count - before;
+            }
+
+            return own.ToArray();
+        });
+        for (int i = 0; i < Count; i++) starts[i + 1] += starts[i];
+        around = new int[starts[Count]];
+        int at = 0;
+        foreach (int[] list in lists)
+        {
+            list.CopyTo(around, at);
+            at += list.Length;
+        }
     }
 }

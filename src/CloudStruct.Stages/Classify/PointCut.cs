@@ -149,10 +149,9 @@ internal static class PointCut
         for (int i = 0; i < inside.Length; i++)
         {
             if (!inside[i]) continue;
-            for (int k = 0; k < 27; k++)
+            foreach (int j in patches.Around(i))
             {
-                int j = patches.Map.Find(patches.Cell[3 * i] + (k % 3) - 1, patches.Cell[(3 * i) + 1] + (k / 3 % 3) - 1, patches.Cell[(3 * i) + 2] + (k / 9) - 1);
-                if (j >= 0 && free[j] && !inside[j]) edge[i] = edge[j] = true;
+                if (free[j] && !inside[j]) edge[i] = edge[j] = true;
             }
         }
 

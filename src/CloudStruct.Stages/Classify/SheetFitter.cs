@@ -1,3 +1,5 @@
+using CloudStruct.Maths.Blocks;
+
 namespace CloudStruct.Stages.Classify;
 
 /// <summary>Fits the margins of a sheet to log odds, knot by knot along strike.</summary>
@@ -8,13 +10,18 @@ internal sealed class SheetFitter
 
     private const double MarginStrain = 2;
 
+    /// <summary>Slabs of the first fit are so many that they are tried on all cores.</summary>
+    private const int ManyTilts = 8;
+
     private readonly double patchM;
+    private readonly int threads;
     private readonly double[] s, v, t;
     private readonly float[] odds, area;
 
     /// <summary>Takes the patches of a corridor, sorted by s.</summary>
-    public SheetFitter(double patchM, double[] s, double[] v, double[] t, float[] odds, float[] area)
+    public SheetFitter(double patchM, double[] s, double[] v, double[] t, float[] odds, float[] area, int threads)
     {
+        this.threads = threads;
         this.patchM = patchM;
         (this.s, this.v, this.t, this.odds, this.area) = (s, v, t, odds, area);
     }
@@ -50,44 +57,29 @@ internal sealed class SheetFitter
         double middleV = sumV / weightV, shift = guess.G * (middleV - guess.V);
         double a0 = guess.A + shift, b0 = guess.B + shift, bin = Math.Max(patchM / 2, width / 100);
         int bins = (int)Math.Ceiling((b0 - a0 + (2 * look)) / bin) + 1;
-        var sum = new double[bins + 1];
+        int aLow = Bin(a0 - reachM), aHigh = Bin(Math.Min(a0 + reachM, ((a0 + b0) / 2) - bin)), bLow = Bin(Math.Max(b0 - reachM, ((a0 + b0) / 2) + bin)), bHigh = Bin(b0 + reachM);
+        var alongs = new (double S, double V, double T, double Odds)[near.Count];
+        for (int k = 0; k < alongs.Length; k++)
+        {
+            int p = near[k];
+            alongs[k] = (s[p] - guess.S, v[p] - middleV, t[p], odds[p] * area[p] / IndependentM2);
+        }
+
+        var tried = new (double Value, int A, int B)[3 * ((2 * tilts) + 1)];
+        BlockParallel.For(tried.Length, tilts < ManyTilts ? 1 : threads, CancellationToken.None, () => new double[bins + 1], (from, to, sum) =>
+        {
+            for (int k = from; k < to; k++) tried[k] = Try(GOf((k / 3) - tilts), YOf((k % 3) - 1), sum);
+        }, length: 3);
         Knot? best = null;
         double bestValue = double.NegativeInfinity;
-        int aLow = Bin(a0 - reachM), aHigh = Bin(Math.Min(a0 + reachM, ((a0 + b0) / 2) - bin)), bLow = Bin(Math.Max(b0 - reachM, ((a0 + b0) / 2) + bin)), bHigh = Bin(b0 + reachM);
         for (int i = -tilts; i <= tilts; i++)
         {
-            double g = guess.G + (tilts == 0 ? 0 : tiltSpread * i / tilts);
             for (int j = -1; j <= 1; j++)
             {
-                double y = yaw + (tilts == 0 ? 0 : 0.035 * j);
-                Array.Clear(sum);
-                foreach (int k in near)
-                {
-                    int at = Bin(t[k] - (g * (v[k] - middleV)) - (y * (s[k] - guess.S))) + 1;
-                    if (at >= 1 && at <= bins) sum[at] += odds[k] * area[k] / IndependentM2;
-                }
-
-                for (int k = 1; k <= bins; k++) sum[k] += sum[k - 1];
-                int a = aLow, b = bLow;
-                double low = double.PositiveInfinity, high = double.NegativeInfinity, total = Math.Abs(sum[bins]) + Math.Max(0, sum[Bin(b0)] - sum[Bin(a0)]);
-                for (int k = aLow; k <= aHigh; k++)
-                {
-                    double cost = sum[k] + Strain(Edge(k) - a0);
-                    if (cost < low) (low, a) = (cost, k);
-                }
-
-                for (int k = bLow; k <= bHigh; k++)
-                {
-                    double win = sum[k] - Strain(Edge(k) - b0);
-                    if (win > high) (high, b) = (win, k);
-                }
-
-                // A margin that leaves its guess by a tenth of the width has to win some percent for it: shade and scree
-                // beside the dike pull, but not that much.
-                double Strain(double off) => MarginStrain * total * off * off / (width * width);
-
+                (double value, int a, int b) = tried[(3 * (i + tilts)) + j + 1];
+                double g = GOf(i);
                 // A degree of tilt that wins nothing is not taken.
-                double value = sum[b] - sum[a], penalty = 0.002 * Math.Abs(value) * (Math.Pow(g - guess.G, 2) / 0.0076) + (0.002 * Math.Abs(value) * j * j);
+                double penalty = 0.002 * Math.Abs(value) * (Math.Pow(g - guess.G, 2) / 0.0076) + (0.002 * Math.Abs(value) * j * j);
                 if (value - penalty <= bestValue || b <= a) continue;
                 bestValue = value - penalty;
                 best = new Knot { S = guess.S, HalfM = guess.HalfM, V = middleV, G = g, A = Edge(a), B = Edge(b), Gain = value };
@@ -96,6 +88,45 @@ internal sealed class SheetFitter
 
         if (best != null) Judge(best, near, yaw);
         return best;
+
+        double GOf(int i) => guess.G + (tilts == 0 ? 0 : tiltSpread * i / tilts);
+        double YOf(int j) => yaw + (tilts == 0 ? 0 : 0.035 * j);
+
+        (double Value, int A, int B) Try(double g, double y, double[] sum)
+        {
+            unchecked
+            {
+                Array.Clear(sum);
+                double start = a0 - look;
+                foreach ((double ds, double dv, double dt, double weight) in alongs)
+                {
+                    int at = Math.Clamp((int)Math.Floor((dt - (g * dv) - (y * ds) - start) / bin), 0, bins - 1) + 1;
+                    sum[at] += weight;
+                }
+
+                for (int k = 1; k <= bins; k++) sum[k] += sum[k - 1];
+            }
+
+            int a = aLow, b = bLow;
+            double low = double.PositiveInfinity, high = double.NegativeInfinity, total = Math.Abs(sum[bins]) + Math.Max(0, sum[Bin(b0)] - sum[Bin(a0)]);
+            for (int k = aLow; k <= aHigh; k++)
+            {
+                double cost = sum[k] + Strain(Edge(k) - a0);
+                if (cost < low) (low, a) = (cost, k);
+            }
+
+            for (int k = bLow; k <= bHigh; k++)
+            {
+                double win = sum[k] - Strain(Edge(k) - b0);
+                if (win > high) (high, b) = (win, k);
+            }
+
+            return (sum[b] - sum[a], a, b);
+
+            // A margin that leaves its guess by a tenth of the width has to win some percent for it: shade and scree
+            // beside the dike pull, but not that much.
+            double Strain(double off) => MarginStrain * total * off * off / (width * width);
+        }
 
         int Bin(double at) => Math.Clamp((int)Math.Floor((at - (a0 - look)) / bin), 0, bins - 1);
         double Edge(int k) => a0 - look + (k * bin);

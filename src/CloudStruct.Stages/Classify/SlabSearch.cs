@@ -1,3 +1,4 @@
+using System.Runtime.CompilerServices;
 using System.Runtime.Intrinsics;
 using CloudStruct.Maths.Blocks;
 using CloudStruct.Maths.Mixtures;
@@ -13,10 +14,13 @@ namespace CloudStruct.Stages.Classify;
 internal sealed class SlabSearch
 {
     /// <summary>Cells along the edge of a window.</summary>
-    private const int WindowCells = 48;
+    internal const int WindowCells = 48;
 
-    /// <summary>Features looked at; one lane more carries the weight.</summary>
-    private const int Lanes = 8;
+    /// <summary>Bins along a pole: the diagonal of the cube is 83 cells.</summary>
+    internal const int Bins = 2 * WindowCells;
+
+    /// <summary>Features looked at; the last lane carries the weight. Fewer than <see cref="Packed"/> columns share a vector with their squares.</summary>
+    internal const int Lanes = 8, Packed = 4;
 
     /// <summary>Texture windows overlap for patches nearer than this: they count as one observation [m].</summary>
     private const double IndependentM = 0.35;
@@ -211,7 +215,7 @@ internal sealed class SlabSearch
             windows.Count,
             context.Threads,
             context.Stop,
-            () => new Scratch(),
+            () => new SlabBins(),
             (from, to, scratch) =>
             {
                 for (int w = from; w < to; w++) best[w] = SearchWindow(windows[w], middle, facing, means, weights, columns, colour, level.SizeM, poles, narrowestM, widestM, scratch);
@@ -222,8 +226,9 @@ internal sealed class SlabSearch
 
     private static int Floor(int a, int b) => (int)Math.Floor((double)a / b);
 
+    [MethodImpl(MethodImplOptions.AggressiveOptimization)]
     private static SlabCandidate[] SearchWindow(
-        List<int> cells, float[] middle, System.Numerics.Vector3[] facing, float[] means, float[] weights, int columns, bool colour, double cellM, Vec3[] poles, double narrowestM, double widestM, Scratch scratch)
+        List<int> cells, float[] middle, System.Numerics.Vector3[] facing, float[] means, float[] weights, int columns, bool colour, double cellM, Vec3[] poles, double narrowestM, double widestM, SlabBins scratch)
     {
         int n = cells.Count;
         if (n < 250) return [];
@@ -239,6 +244,7 @@ internal sealed class SlabSearch
         centre /= n;
         face /= face.Length() + 1e-12f;
         double cellArea = cellM * cellM;
+        bool packed = columns < Packed;
         Span<float> row = stackalloc float[Lanes];
         for (int k = 0; k < n; k++)
         {
@@ -247,17 +253,18 @@ internal sealed class SlabSearch
             float w = (float)Math.Min(1, weights[i] / cellArea);
             row.Clear();
             for (int c = 0; c < columns; c++) row[c] = means[(i * columns) + c];
-            row[Lanes - 1] = 1;
+            row[packed ? Packed - 1 : Lanes - 1] = 1;
             var v = Vector256.Create<float>(row);
-            scratch.First[k] = v * w;
-            scratch.Second[k] = v * v * w;
+            scratch.Weight[k] = w;
+            scratch.First[k] = packed ? Vector256.Create(v.GetLower() * w, v.GetLower() * v.GetLower() * w) : v * w;
+            if (!packed) scratch.Second[k] = v * v * w;
             scratch.X[k] = (float)(middle[3 * i] - centre.X);
             scratch.Y[k] = (float)(middle[(3 * i) + 1] - centre.Y);
             scratch.Z[k] = (float)(middle[(3 * i) + 2] - centre.Z);
         }
 
         float inverse = (float)(1 / cellM);
-        const int Bins = 2 * WindowCells;   // the diagonal of the cube is 83 cells
+        double independent = Math.Min(1, Math.Pow(cellM / IndependentM, 2));
         var tops = new List<(double Evidence, double Contrast, Vec3 Pole, int From, int Width)>();
         // A coarse round over the half sphere, then finer ones about the best: a pole some degrees off smears a slab, but
         // still shows it.
@@ -280,24 +287,7 @@ internal sealed class SlabSearch
 
         void Try(Vec3 pole)
         {
-            float nx = (float)pole.X * inverse, ny = (float)pole.Y * inverse, nz = (float)pole.Z * inverse;
-            Vector256<float>[] first = scratch.BinFirst, second = scratch.BinSecond;
-            Array.Clear(first);
-            Array.Clear(second);
-            for (int k = 0; k < n; k++)
-            {
-                int bin = (int)((scratch.X[k] * nx) + (scratch.Y[k] * ny) + (scratch.Z[k] * nz) + WindowCells) + 1;
-                bin = Math.Clamp(bin, 1, Bins);
-                first[bin] += scratch.First[k];
-                second[bin] += scratch.Second[k];
-            }
-
-            for (int b = 1; b <= Bins; b++)
-            {
-                first[b] += first[b - 1];
-                second[b] += second[b - 1];
-            }
-
+            scratch.Bin((float)pole.X * inverse, (float)pole.Y * inverse, (float)pole.Z * inverse, n, packed);
             (double Evidence, double Contrast, int From, int Width) top = default;
             foreach (int width in WidthCells)
             {
@@ -305,7 +295,12 @@ internal sealed class SlabSearch
                 if (widthM < 0.8 * narrowestM || widthM > 1.2 * widestM) continue;
                 for (int from = 3; from + width + 3 <= Bins; from++)
                 {
-                    (double evidence, double contrast) = Score(first, second, from, width, cellM, colour);
+                    if (!scratch.Weighs(from, width, out float wi, out float wa, out float wb)) continue;
+                    double contrast = packed ? scratch.PackedContrast(from, width, wi, wa, wb) : scratch.Contrast(from, width, wi, wa, wb, colour);
+                    if (!(contrast > 0)) continue;
+                    double effective = independent / ((1 / wi) + (0.5 / wa) + (0.5 / wb));
+                    if (AtMost((float)effective, (float)contrast) < top.Evidence) continue;
+                    double evidence = Math.Pow(effective, 0.35) * Math.Log(1 + contrast);
                     if (evidence > top.Evidence) top = (evidence, contrast, from, width);
                 }
             }
@@ -328,7 +323,7 @@ internal sealed class SlabSearch
                 var q = new Vec3(scratch.X[k], scratch.Y[k], scratch.Z[k]);
                 double t = pole.Dot(q);
                 if (t < low || t >= high) continue;
-                double w = scratch.First[k][Lanes - 1];
+                double w = scratch.Weight[k];
                 sum += q * w;
                 weight += w;
             }
@@ -365,39 +360,14 @@ internal sealed class SlabSearch
         && Math.Abs(a.Normal.Dot(b.Middle - a.Middle)) < 0.6 * Math.Max(a.WidthM, b.WidthM)
         && (b.Middle - a.Middle).Length < 0.6 * Math.Max(a.WindowM, b.WindowM);
 
-    private static (double Evidence, double Contrast) Score(Vector256<float>[] first, Vector256<float>[] second, int from, int width, double cellM, bool colour)
+    /// <summary>No less than the evidence of a slab, from the bits of its numbers: seven slabs of eight need neither power nor logarithm.</summary>
+    /// <remarks>The bits of a float, read as an integer, are its logarithm of base 2 up to 0.0861 (from below), and the other way round a
+    /// power of 2 from above.</remarks>
+    private static double AtMost(float effective, float contrast)
     {
-        int to = from + width, low = Math.Max(0, from - width), high = Math.Min(first.Length - 1, to + width);
-        Vector256<float> inside = first[to] - first[from], a = first[from] - first[low], b = first[high] - first[to];
-        float wi = inside[Lanes - 1], wa = a[Lanes - 1], wb = b[Lanes - 1];
-        if (wi < 30 || wa < 0.35f * wi || wb < 0.35f * wi) return default;
-        Vector256<float> mi = inside / wi, ma = a / wa, mb = b / wb;
-        Vector256<float> variance =
-            ((second[high] - second[low]) - (mi * inside) - (ma * a) - (mb * b)) / (wi + wa + wb);
-        Vector256<float> ratio = (mi - ma) * (mi - mb) / (Vector256.Max(variance, Vector256<float>.Zero) + Vector256.Create(0.03f));
-        double contrast = Vector256.Sum(ratio.WithElement(Lanes - 1, 0));
-        // A wall or a bench differs from its flanks by slope first: what slope tells speaks against a slab.
-        if (!colour) contrast -= 3 * Math.Max(0, ratio[0]);
-        if (contrast <= 0) return default;
-        double independent = Math.Min(1, Math.Pow(cellM / IndependentM, 2));
-        double effective = independent / ((1 / wi) + (0.5 / wa) + (0.5 / wb));
-        return (Math.Pow(effective, 0.35) * Math.Log(1 + contrast), contrast);
-    }
+        float power = UpperLog2(effective) * 0.35f, log = Math.Min(contrast, 0.69315f * UpperLog2(1 + contrast));
+        return 1.001 * BitConverter.Int32BitsToSingle((int)((power + 127) * (1 << 23))) * log;
 
-    /// <summary>Memory of one worker.</summary>
-    private sealed class Scratch
-    {
-        public Vector256<float>[] First = [], Second = [];
-        public float[] X = [], Y = [], Z = [];
-        public readonly Vector256<float>[] BinFirst = new Vector256<float>[(2 * WindowCells) + 1];
-        public readonly Vector256<float>[] BinSecond = new Vector256<float>[(2 * WindowCells) + 1];
-
-        public void Hold(int n)
-        {
-            if (First.Length >= n) return;
-            First = new Vector256<float>[n];
-            Second = new Vector256<float>[n];
-            (X, Y, Z) = (new float[n], new float[n], new float[n]);
-        }
+        static float UpperLog2(float x) => (BitConverter.SingleToInt32Bits(x) * (1f / (1 << 23))) - 126.913f;
     }
 }
