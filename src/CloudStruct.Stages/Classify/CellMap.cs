@@ -1,12 +1,12 @@
 namespace CloudStruct.Stages.Classify;
 
-/// <summary>Cells of a cubic lattice by their three integers: open addressing, filled once, read from any thread.</summary>
+/// <summary>Cells of a cubic lattice by their three integers: open addressing, filled by one thread, read from any; grows when more cells come than expected.</summary>
 internal sealed class CellMap
 {
     private const int Offset = 1 << 20;   // 21 bits a coordinate
-    private readonly ulong[] keys;        // 0 marks an empty place: no key is 0, for coordinates are shifted by Offset
-    private readonly int[] values;
-    private readonly int mask;
+    private ulong[] keys;        // 0 marks an empty place: no key is 0, for coordinates are shifted by Offset
+    private int[] values;
+    private int mask;
 
     public CellMap(int expected)
     {
@@ -38,8 +38,30 @@ internal sealed class CellMap
         {
             if (keys[i] == key) return values[i];
             if (keys[i] != 0) continue;
+            // A full table would be searched for ever.
+            if (4L * Count >= 3L * keys.Length)
+            {
+                Grow();
+                return FindOrAdd(x, y, z);
+            }
+
             keys[i] = key;
             return values[i] = Count++;
+        }
+    }
+
+    private void Grow()
+    {
+        (ulong[] oldKeys, int[] oldValues) = (keys, values);
+        keys = new ulong[2 * oldKeys.Length];
+        values = new int[keys.Length];
+        mask = keys.Length - 1;
+        for (int k = 0; k < oldKeys.Length; k++)
+        {
+            if (oldKeys[k] == 0) continue;
+            int i = Place(oldKeys[k]);
+            while (keys[i] != 0) i = (i + 1) & mask;
+            (keys[i], values[i]) = (oldKeys[k], oldValues[k]);
         }
     }
 

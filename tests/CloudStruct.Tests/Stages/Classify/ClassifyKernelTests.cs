@@ -108,4 +108,15 @@ public sealed class ClassifyKernelTests
         Assert.Equal(walked, piece);
         Assert.InRange(piece.Distinct().Count(), 10, 390);
     }
+
+    // A table that cannot grow would be searched for ever once full.
+    [Fact]
+    public void Cells_beyond_those_expected_keep_their_numbers()
+    {
+        var map = new CellMap(1);
+        for (int i = 0; i < 1000; i++) Assert.Equal(i, map.FindOrAdd(i - 500, 7 * i, -i));
+        for (int i = 0; i < 1000; i++) Assert.Equal(i, map.Find(i - 500, 7 * i, -i));
+        Assert.Equal(-1, map.Find(1000, 0, 0));
+        Assert.Equal(1000, map.Count);
+    }
 }
