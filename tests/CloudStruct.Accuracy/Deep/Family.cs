@@ -7,7 +7,7 @@ namespace CloudStruct.Accuracy.Deep;
 /// <param name="Width">Median and 95th percentile of the relative width error; null where nothing is asked.</param>
 /// <param name="Outcrops">Outcrops of the deep study.</param>
 /// <param name="Points">Points of each.</param>
-public sealed record Family(string Plan, double? Iou = null, (double, double)? ContactDeg = null, (double, double)? Width = null, int Outcrops = 6, int Points = 400_000)
+public sealed record Family(string Plan, double? Iou = null, (double, double)? ContactDeg = null, (double, double)? Width = null, int Outcrops = 20, int Points = 300_000)
 {
     /// <summary>First seed of the deep study; no rule was chosen with a look at these.</summary>
     public const ulong FirstSeed = 5000;
@@ -18,30 +18,30 @@ public sealed record Family(string Plan, double? Iou = null, (double, double)? C
     /// <summary>All families, in the order of the page. Plans that no figure is stated for are shown without one.</summary>
     public static Family[] All { get; } =
     [
-        new("demo", 0.95, ClearContact, ClearWidth, Outcrops: 20, Points: 700_000),
-        new("two-dikes", 0.95, ClearContact, ClearWidth, Outcrops: 12, Points: 400_000),
-        new("tilted", 0.95, ClearContact, ClearWidth, Outcrops: 10, Points: 400_000),
-        new("long", 0.92, LongContact, LongWidth, Outcrops: 10, Points: 500_000),
-        new("bent", 0.92, LongContact, LongWidth, Outcrops: 8, Points: 600_000),
-        new("stepped", 0.92, LongContact, LongWidth, Outcrops: 10, Points: 400_000),
-        new("tapering", 0.92, LongContact, LongWidth, Outcrops: 10, Points: 400_000),
-        new("low-contrast", 0.88, TextureContact, TextureWidth, Outcrops: 10, Points: 400_000),
-        new("texture-only", 0.88, TextureContact, TextureWidth, Outcrops: 5, Points: 300_000),
-        new("crossing", Outcrops: 4, Points: 400_000),
+        new("demo", 0.95, ClearContact, ClearWidth, Points: 700_000),
+        new("two-dikes", 0.95, ClearContact, ClearWidth, Points: 400_000),
+        new("tilted", 0.95, ClearContact, ClearWidth, Points: 400_000),
+        new("long", 0.92, LongContact, LongWidth, Points: 500_000),
+        new("bent", 0.92, LongContact, LongWidth, Points: 600_000),
+        new("stepped", 0.92, LongContact, LongWidth, Points: 400_000),
+        new("tapering", 0.92, LongContact, LongWidth, Points: 400_000),
+        new("low-contrast", 0.88, TextureContact, TextureWidth, Points: 400_000),
+        new("texture-only", 0.88, TextureContact, TextureWidth, Points: 300_000),
+        new("crossing", Points: 400_000),
         new("tip"),
-        new("thin", Outcrops: 6, Points: 500_000),
+        new("thin", Points: 500_000),
         new("flat-lying"),
         new("stained"),
         new("scree"),
-        new("tiles", Outcrops: 4, Points: 400_000),
-        new("turned", Outcrops: 10, Points: 200_000),
+        new("tiles", Points: 400_000),
+        new("turned", Points: 200_000),
         new("south"),
         new("wall"),
-        new("pavement", Outcrops: 6, Points: 250_000),
-        new("no-dike", Outcrops: 13, Points: 250_000),
-        new("gully", Outcrops: 13, Points: 250_000),
-        new("banded", Outcrops: 13, Points: 250_000),
-        new("shaded", Outcrops: 13, Points: 250_000),
+        new("pavement", Points: 250_000),
+        new("no-dike", Points: 250_000),
+        new("gully", Points: 250_000),
+        new("banded", Points: 250_000),
+        new("shaded", Points: 250_000),
         new("faces-only"),
         new("faces-smooth"),
         new("random-joints"),
