@@ -20,6 +20,8 @@ internal sealed class CommandLine(TextWriter output, TextWriter error)
             new MeasureCommand(output, error).Describe(Guard),
             new DemoCommand(output, error).Describe(Guard),
             new InspectCommand(output, error).Describe(Guard),
+            new FieldCheckCommand(output).Describe(Guard),
+            new RepeatCommand(output).Describe(Guard),
         };
         root.Options.OfType<HelpOption>().Single().Action = new HelpWithExamples(new Dictionary<string, string[]>(StringComparer.Ordinal)
         {
@@ -27,6 +29,8 @@ internal sealed class CommandLine(TextWriter output, TextWriter error)
             ["measure"] = MeasureCommand.Examples,
             ["demo"] = DemoCommand.Examples,
             ["inspect"] = InspectCommand.Examples,
+            ["fieldcheck"] = FieldCheckCommand.Examples,
+            ["repeat"] = RepeatCommand.Examples,
         });
         ParseResult parsed = root.Parse(args);
         if (parsed.Errors.Count > 0 && parsed.Action is not HelpWithExamples)
