@@ -20,25 +20,27 @@ public static class Outcrop
     /// <param name="seed">Which member of the family; the same seed gives the same outcrop on any number of threads.</param>
     /// <param name="points">Points aimed at; null for the plan's.</param>
     /// <param name="threads">Workers; 0 for one per core.</param>
-    public static SimulatedOutcrop Make(OutcropPlan plan, ulong seed, int? points = null, int threads = 0)
+    /// <param name="flight">The same rock flown again on another day: other cameras, noise, sun and model errors; 0 for the first flight.</param>
+    public static SimulatedOutcrop Make(OutcropPlan plan, ulong seed, int? points = null, int threads = 0, int flight = 0)
     {
+        ulong day = flight == 0 ? seed : Dice.Scramble(seed + ((ulong)flight << 40));
         threads = threads > 0 ? threads : Environment.ProcessorCount;
         int wanted = points ?? plan.Points;
         (Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles) = MassifMaker.Make(plan, seed, threads);
-        Camera[] cameras = Flight.Plan(plan, massif.Terrain, seed);
-        Sight[] sights = Photographs.Take(massif, cameras, (int)Math.Min(60e6, RaysPerPoint * wanted), seed, threads);
-        sights = Thinning.To(wanted, sights, seed);
-        return Develop(plan, seed, massif, hostPoles, dikePoles, cameras, sights, threads);
+        Camera[] cameras = Flight.Plan(plan, massif.Terrain, day);
+        Sight[] sights = Photographs.Take(massif, cameras, (int)Math.Min(60e6, RaysPerPoint * wanted), day, threads);
+        sights = Thinning.To(wanted, sights, day);
+        return Develop(plan, seed, day, massif, hostPoles, dikePoles, cameras, sights, threads);
     }
 
     private static SimulatedOutcrop Develop(
-        OutcropPlan plan, ulong seed, Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles, Camera[] cameras, Sight[] sights, int threads)
+        OutcropPlan plan, ulong seed, ulong day, Massif massif, Vec3[] hostPoles, Vec3[][] dikePoles, Camera[] cameras, Sight[] sights, int threads)
     {
         int count = sights.Length;
         Vec3 origin = plan.Site.Origin;
-        var noise = new SurveyNoise(plan, seed);
+        var noise = new SurveyNoise(plan, day);
         var surface = new Surface(massif, plan, seed);
-        var light = new Daylight(massif, plan, seed);
+        var light = new Daylight(massif, plan, day);
         var paint = new RockPaint(massif, plan, seed);
         var clasts = new Clasts(massif, seed);
         double[] x = new double[count], y = new double[count], z = new double[count];
@@ -62,14 +64,14 @@ public static class Outcrop
                 dikeOf[i] = (byte)(stray ? 0 : rock);
                 (x[i], y[i], z[i]) = (p.X + origin.X, p.Y + origin.Y, p.Z + origin.Z);
                 if (!plan.HasColour) continue;
-                var lot = new Dice(seed, Purpose.Colour, (ulong)i + 1);
+                var lot = new Dice(day, Purpose.Colour, (ulong)i + 1);
                 ulong block = s.Kind is Hit.Kinds.Plane or Hit.Kinds.Margin ? BlockLot(massif, s, n) : (ulong)s.Surface * 0x9E3779B97F4A7C15UL;
                 (double R, double G, double B) ground = paint.At(s.Place, n, kind, rock, block, wear), lit = light.On(s.Place, n, crossings, ref lot);
                 (red[i], green[i], blue[i]) = Film.Expose((ground.R * lit.R, ground.G * lit.G, ground.B * lit.B), ref lot);
             }
         });
         double spacing = Spacing(sights);
-        ModelTurn.Of(plan, seed).Apply(x, y, z, origin);
+        ModelTurn.Of(plan, day).Apply(x, y, z, origin);
         (int[] faceOf, SimulatedFace[] faces) = FaceTruth.Number(massif, sights, onPlane, normals, origin, spacing);
         return new SimulatedOutcrop
         {

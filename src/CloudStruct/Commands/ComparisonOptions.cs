@@ -2,7 +2,7 @@ using System.CommandLine;
 using System.Text.Encodings.Web;
 using System.Text.Json;
 using System.Text.Json.Nodes;
-using CloudStruct.Formats.Results;
+using CloudStruct.Formats;
 using CloudStruct.Products;
 using CloudStruct.Products.Comparing;
 using CloudStruct.Records.Comparing;

@@ -1,6 +1,5 @@
 using System.CommandLine;
 using CloudStruct.Formats;
-using CloudStruct.Formats.Results;
 using CloudStruct.Records.Comparing;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;

@@ -1,5 +1,5 @@
 using System.CommandLine;
-using CloudStruct.Formats.Results;
+using CloudStruct.Formats;
 using CloudStruct.Records.Comparing;
 using CloudStruct.Stages.Comparing;
 

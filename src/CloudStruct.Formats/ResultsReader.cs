@@ -6,7 +6,7 @@ using CloudStruct.Records.Comparing;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Frame;
 
-namespace CloudStruct.Formats.Results;
+namespace CloudStruct.Formats;
 
 /// <summary>Reads run.json and the tables of a results folder back.</summary>
 public static class ResultsReader
