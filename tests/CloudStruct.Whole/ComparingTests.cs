@@ -71,6 +71,26 @@ public sealed class ComparingTests : IDisposable
     }
 
     [Fact]
+    public void A_table_of_attitudes_becomes_a_net_whatever_its_way_of_writing_them()
+    {
+        // Five planes about 040/60: the same ones as strike and dip, as quadrants and as poles.
+        survey.Text("a.csv", "strike_deg,dip_deg,set\n40,60,x\n42,61,x\n38,59,x\n41,58,x\n39,62,x\n");
+        survey.Text("b.csv", "attitude\nN40E/60SE\nN42E/61SE\nN38E/59SE\nN41E/58SE\nN39E/62SE\n");
+        survey.Text("c.csv", "pole_trend_deg;pole_plunge_deg\n310;30\n312;29\n308;31\n311;32\n309;28\n");
+        string[] said = [.. new[] { "a", "b", "c" }.Select(t => Built.Run(survey.Root, "net", t + ".csv", "--north", "true", "--json").Out)];
+        Assert.Equal(said[0], said[1]);
+        Assert.Equal(said[0], said[2]);
+        using JsonDocument json = JsonDocument.Parse(said[0]);
+        Assert.Equal(40, json.RootElement[0].GetProperty("strike_deg").GetDouble(), 0.2);
+        Assert.Equal(60, json.RootElement[0].GetProperty("dip_deg").GetDouble(), 0.1);
+        foreach (string end in new[] { "svg", "pdf", "png" }) Assert.True(File.Exists(survey["a-net." + end]), end);
+        survey.Text("d.csv", "attitude\n065/40\n");
+        Built.Ended two = Built.Run(survey.Root, "net", "d.csv");
+        Assert.Equal(3, two.Code);
+        Assert.Contains("notation", two.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void What_cannot_be_compared_is_refused_in_one_paragraph()
     {
         Directory.CreateDirectory(survey["empty"]);

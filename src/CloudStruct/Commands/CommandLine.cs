@@ -20,6 +20,7 @@ internal sealed class CommandLine(TextWriter output, TextWriter error)
             new MeasureCommand(output, error).Describe(Guard),
             new DemoCommand(output, error).Describe(Guard),
             new InspectCommand(output, error).Describe(Guard),
+            new NetCommand(output).Describe(Guard),
             new FieldCheckCommand(output).Describe(Guard),
             new RepeatCommand(output).Describe(Guard),
         };
@@ -29,6 +30,7 @@ internal sealed class CommandLine(TextWriter output, TextWriter error)
             ["measure"] = MeasureCommand.Examples,
             ["demo"] = DemoCommand.Examples,
             ["inspect"] = InspectCommand.Examples,
+            ["net"] = NetCommand.Examples,
             ["fieldcheck"] = FieldCheckCommand.Examples,
             ["repeat"] = RepeatCommand.Examples,
         });
