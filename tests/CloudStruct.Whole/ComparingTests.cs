@@ -34,11 +34,12 @@ public sealed class ComparingTests : IDisposable
         Assert.InRange(half, 0.001, 0.15);
         JsonElement[] faces = [.. json.RootElement.GetProperty("groups").EnumerateArray().Where(g => g.GetProperty("name").GetString()!.StartsWith("faces", StringComparison.Ordinal))];
         Assert.True(faces.Sum(g => g.GetProperty("pairs").GetInt32()) > 150);
-        // Regions that hold in 0.93 to 0.97 of both flights, with the error of counting: neither far too narrow nor far too wide.
+        // The waviness of the rock is in both flights and cancels, so that true regions hold in 0.95 or more; less, beyond the error of
+        // counting, would convict them.
         Assert.All(faces.Where(g => g.GetProperty("pairs").GetInt32() >= 40), g =>
         {
-            Assert.True(g.GetProperty("share_high95").GetDouble() > 0.90, g.ToString());
-            Assert.InRange(g.GetProperty("real_over_stated_spread").GetDouble(), 0.6, 1.4);
+            Assert.True(g.GetProperty("share_high95").GetDouble() > 0.95, g.ToString());
+            Assert.InRange(g.GetProperty("real_over_stated_spread").GetDouble(), 0.3, 1.25);
         });
     }
 

@@ -81,8 +81,8 @@ public sealed record CommonRotation(Vec3 Vector, Symmetric3 Covariance, int Pair
         return near - (a * a.Dot(near));
     }
 
-    // Rotation vector of "first by b, then by the small a", by quaternions.
-    private static Vec3 Compose(Vec3 a, Vec3 b)
+    /// <summary>Rotation vector of "first by b, then by a", by quaternions [rad].</summary>
+    public static Vec3 Compose(Vec3 a, Vec3 b)
     {
         (double aw, Vec3 av) = Quaternion(a);
         (double bw, Vec3 bv) = Quaternion(b);

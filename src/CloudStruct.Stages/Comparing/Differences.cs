@@ -20,11 +20,11 @@ internal static class Differences
     private static readonly double TrueMedian1 = 0.674490, TrueMedian2 = Math.Sqrt(2 * Math.Log(2));
 
     /// <summary>Mahalanobis distance of two poles, in the plane that touches the sphere at the first, by both internal ellipses.</summary>
-    public static double Normalised(MeasuredPlane a, MeasuredPlane b, Vec3 bNormal)
+    public static double Normalised(MeasuredPlane a, MeasuredPlane b)
     {
         Symmetric3 c = Covariance(a) + Covariance(b);
         (Vec3 along, Vec3 down) = PoleRegions.StrikeAndDip(a.Normal);
-        Vec3 other = bNormal.Dot(a.Normal) < 0 ? -bNormal : bNormal;
+        Vec3 other = b.Normal.Dot(a.Normal) < 0 ? -b.Normal : b.Normal;
         (double u, double v) = (other.Dot(along), other.Dot(down));
         double aa = c.Form(along), bb = c.Form(down), ab = along.Dot(c.Times(down)), det = (aa * bb) - (ab * ab);
         return Math.Sqrt(Math.Max(0, ((bb * u * u) - (2 * ab * u * v) + (aa * v * v)) / det));

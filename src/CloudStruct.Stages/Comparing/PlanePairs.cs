@@ -14,12 +14,11 @@ internal static class PlanePairs
     /// <summary>Pairs of which each is the other's nearest, in the order of the first.</summary>
     /// <param name="first">Planes.</param>
     /// <param name="second">Planes of the other survey.</param>
-    /// <param name="shift">Where the second lies against the first [m].</param>
     /// <param name="slackM">How far the middles may lie apart beyond half of the plane's size [m].</param>
-    public static List<(int First, int Second, double DistanceM)> Of(MeasuredPlane[] first, MeasuredPlane[] second, Vec3 shift, double slackM)
+    public static List<(int First, int Second, double DistanceM)> Of(MeasuredPlane[] first, MeasuredPlane[] second, double slackM)
     {
         double cell = Math.Max(1, slackM + 1);
-        ILookup<(int, int), int> at = Enumerable.Range(0, second.Length).ToLookup(j => Cell(second[j].Place - shift, cell));
+        ILookup<(int, int), int> at = Enumerable.Range(0, second.Length).ToLookup(j => Cell(second[j].Place, cell));
         var best = new (int Of, double Cost, double DistanceM)[first.Length];
         var back = new (int Of, double Cost)[second.Length];
         Array.Fill(best, (-1, double.PositiveInfinity, 0));
@@ -37,7 +36,7 @@ internal static class PlanePairs
                     foreach (int j in at[(cx + dx, cy + dy)])
                     {
                         MeasuredPlane b = second[j];
-                        double distance = (b.Place - shift - a.Place).Length;
+                        double distance = (b.Place - a.Place).Length;
                         if (distance > reach) continue;
                         if (a.AreaM2 > 0 && (a.AreaM2 > LargestAreaRatio * b.AreaM2 || b.AreaM2 > LargestAreaRatio * a.AreaM2)) continue;
                         if (Differences.AngleDeg(a.Normal, b.Normal) > Math.Max(LeastGateDeg, 3 * Math.Sqrt((a.MajorDeg * a.MajorDeg) + (b.MajorDeg * b.MajorDeg)))) continue;
