@@ -31,7 +31,7 @@ internal sealed partial class ReportPage
     private static string RowId(int dike, string margin, int segment) => Invariant($"contact-{dike}-{margin}-{segment}");
 
     private XElement Faces() => Section("faces", "Fracture faces",
-        findings.Faces.Faces.Length == 0 ? El("p", "No face was found.") : null,
+        findings.Faces.Faces.Length == 0 ? El("p", "No face was found.") : El("p", At("class", "linked-only"), "All faces stand in the tables above, under Look closer."),
         ShortTable("faces.csv", "face_id", "domain", "set", "strike_deg", "dip_deg", "cone95_deg", "cone95_total_deg", "area_m2", "length_m", "height_m", "grade", "in_place"));
 
     private XElement SetsAndNets() => Section("sets", "Orientation sets and nets",

@@ -41,6 +41,7 @@ internal sealed partial class ReportPage
         td { white-space: nowrap; } td code { white-space: normal; overflow-wrap: anywhere; }
         pre { white-space: pre-wrap; overflow-wrap: anywhere; background: var(--tint); padding: .8rem 1rem; font-size: .8rem; }
         .facts { display: grid; grid-template-columns: max-content 1fr; gap: .15rem 1.2rem; } .facts dd { margin: 0; overflow-wrap: anywhere; }
+        .linked-only { display: none; }
         @media print {
           @page { margin: 16mm; }
           body { max-width: none; padding: 0; background: #fff; font-size: 10pt; } nav, .skip { display: none; }

@@ -63,13 +63,11 @@ internal sealed partial class ReportPage(Findings findings, DrawingsRecord drawi
 
     private XElement Plot(DrawnPlot plot)
     {
-        // Whichever is smaller: with thousands of marks the pixels are. What holds a photograph is best as one.
-        bool photograph = plot.Svg.Length == 0 || IsMap(plot), asSvg = !photograph && plot.Svg.Length <= plot.Png.Length * 2;
-        string data = asSvg ? "data:image/svg+xml;base64," + Convert.ToBase64String(plot.Svg)
-            : photograph ? PagePicture.Address(plot.Png) : "data:image/png;base64," + Convert.ToBase64String(plot.Png);
+        bool photograph = plot.Svg.Length == 0 || IsMap(plot);
+        string data = photograph ? PagePicture.OfPhotograph(plot.Png) : PagePicture.OfDrawing(plot.Svg, plot.Png);
         string[] kinds = plot.Svg.Length > 0 ? ["svg", "pdf", "png"] : ["png"];
         return El("figure", At("class", photograph ? "wide" : "column"),
-            El("img", At("src", data), At("loading", "lazy"), At("decoding", "async"), At("alt", Clean($"{plot.Title}. {plot.Words}"))),
+            El("img", At("src", data), At("decoding", "async"), At("alt", Clean($"{plot.Title}. {plot.Words}"))),
             El("figcaption", "Files: ", kinds.Select((k, i) => new object[] { i > 0 ? ", " : "", Link($"plots/{plot.Name}.{k}", k.ToUpperInvariant()) })));
     }
 
