@@ -23,6 +23,9 @@ switch (args)
     case ["blocky", string file, ..] when args.Length <= 3:
         BlockyCloud.Write(file, (int)(Number(2, 1) * 1e6));
         return 0;
+    case ["ours", string file, string folder]:
+        new OursOnBlocky(file, folder).Run();
+        return 0;
     case ["compare", string file, string folder]:
         return AgainstLibraries.Compare(file, folder);
     default:

@@ -20,7 +20,7 @@ rm -f "$folder/out/lines.jsonl"
 $ours blocky "$folder/blocky.ply" "$millions"
 round=1
 while [ "$round" -le "$rounds" ]; do
-    $ours kernels "$folder/blocky.ply" "$folder/out" >>"$folder/out/lines.jsonl"
+    $ours ours "$folder/blocky.ply" "$folder/out" >>"$folder/out/lines.jsonl"
     for library in nanoflann open3d pcl cgal; do
         "$folder/build/with_$library" "$folder/blocky.ply" "$folder/out" >>"$folder/out/lines.jsonl"
     done
