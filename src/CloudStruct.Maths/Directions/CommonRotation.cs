@@ -1,6 +1,7 @@
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Frame;
 using MathNet.Numerics.Distributions;
+using MathNet.Numerics.Statistics;
 
 namespace CloudStruct.Maths.Directions;
 
@@ -38,7 +39,7 @@ public sealed record CommonRotation(Vec3 Vector, Symmetric3 Covariance, int Pair
         for (int round = 0; round < 30; round++)
         {
             for (int i = 0; i < n; i++) r[i] = Rest(Turn(first[i], total), second[i]).Length / sigma[i];
-            double scale = Median(r) / 1.177;   // Rayleigh: the median is 1.177 standard deviations
+            double scale = Statistics.Median(r) / 1.177;   // Rayleigh: the median is 1.177 standard deviations
             var h = default(Symmetric3);
             var g = default(Vec3);
             meat = default;
@@ -97,11 +98,5 @@ public sealed record CommonRotation(Vec3 Vector, Symmetric3 Covariance, int Pair
     {
         double angle = rotation.Length;
         return angle < 1e-12 ? (1, rotation * 0.5) : (Math.Cos(angle / 2), rotation * (Math.Sin(angle / 2) / angle));
-    }
-
-    private static double Median(double[] values)
-    {
-        double[] sorted = [.. values.Order()];
-        return sorted[sorted.Length / 2];
     }
 }

@@ -2,6 +2,7 @@ using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Comparing;
 using CloudStruct.Records.Frame;
+using MathNet.Numerics.Statistics;
 
 namespace CloudStruct.Stages.Comparing;
 
@@ -65,7 +66,7 @@ internal static class Aligned
         for (int round = 0; round < 10; round++)
         {
             double[] rest = [.. pairs.Select(p => first[p.A].Normal.Dot(second[p.B].Place - first[p.A].Place - t))];
-            double scale = Math.Max(1e-4, Differences.Median(rest.Select(Math.Abs)) / 0.6745);
+            double scale = Math.Max(1e-4, Statistics.Median(rest.Select(Math.Abs)) / 0.6745);
             var h = default(Symmetric3);
             var g = default(Vec3);
             for (int i = 0; i < rest.Length; i++)

@@ -2,6 +2,7 @@ using CloudStruct.Maths.Directions;
 using CloudStruct.Maths.Fitting;
 using CloudStruct.Records.Comparing;
 using CloudStruct.Records.Frame;
+using MathNet.Numerics.Statistics;
 
 namespace CloudStruct.Stages.Comparing;
 
@@ -47,15 +48,8 @@ internal static class Differences
         double share = own.Average(p => p.Within95 ? 1.0 : 0);
         (double low, double high) = Wilson(share, own.Length);
         return new ComparedGroup(
-            name, own[0].Kind, own.Length, share, low, high, Median(own.Select(p => p.Normalised)) / (widths ? TrueMedian1 : TrueMedian2),
-            Median(own.Select(p => widths ? Math.Abs(p.WidthDifferenceM) : p.RestDeg)));
-    }
-
-    /// <summary>Middle value; NaN of none.</summary>
-    public static double Median(IEnumerable<double> values)
-    {
-        double[] sorted = [.. values.Order()];
-        return sorted.Length == 0 ? double.NaN : sorted.Length % 2 == 1 ? sorted[sorted.Length / 2] : (sorted[(sorted.Length / 2) - 1] + sorted[sorted.Length / 2]) / 2;
+            name, own[0].Kind, own.Length, share, low, high, Statistics.Median(own.Select(p => p.Normalised)) / (widths ? TrueMedian1 : TrueMedian2),
+            Statistics.Median(own.Select(p => widths ? Math.Abs(p.WidthDifferenceM) : p.RestDeg)));
     }
 
     /// <summary>95 % interval of a share (E. B. Wilson 1927, J. Am. Stat. Assoc. 22, 209-212).</summary>

@@ -4,6 +4,7 @@ using CloudStruct.Records.Comparing;
 using CloudStruct.Records.Complaints;
 using CloudStruct.Records.Field;
 using CloudStruct.Records.Frame;
+using MathNet.Numerics.Statistics;
 using static System.FormattableString;
 
 namespace CloudStruct.Stages.Comparing;
@@ -140,7 +141,7 @@ public static class FieldChecking
             for (int i = 0; i < 40; i++)
             {
                 double middle = (low + high) / 2;
-                double below = Differences.Median(pairs.Select(p => p.Angle / Math.Sqrt((p.Sigma * p.Sigma) + (middle * middle) + 1e-12)));
+                double below = Statistics.Median(pairs.Select(p => p.Angle / Math.Sqrt((p.Sigma * p.Sigma) + (middle * middle) + 1e-12)));
                 if (below > 1.177410) low = middle;
                 else high = middle;
             }
@@ -187,7 +188,7 @@ public static class FieldChecking
         int counted = pairs.Count(p => p.Counts), others = pairs.Count - counted, lost = alone.Values.Sum();
         yield return Invariant($"{counted} of {pairs.Count + lost} readings pair with a face or contact within {within:0.##} m; {lost} lie farther from any, and {others} differ by more than {OtherFaceDeg:0} deg and are taken for another face.");
         if (counted == 0) yield break;
-        yield return Invariant($"Median difference {Differences.Median(pairs.Where(p => p.Counts).Select(p => p.AngleDeg)):0.0} deg; {pairs.Where(p => p.Counts).Average(p => p.Within95 ? 1.0 : 0):0.00} lie within the model's 95 % cones, which know nothing of the compass.");
+        yield return Invariant($"Median difference {Statistics.Median(pairs.Where(p => p.Counts).Select(p => p.AngleDeg)):0.0} deg; {pairs.Where(p => p.Counts).Average(p => p.Within95 ? 1.0 : 0):0.00} lie within the model's 95 % cones, which know nothing of the compass.");
         if (compass is { } c) yield return Invariant($"The cones and a compass that scatters by {c.Value:0.0} deg ({c.Low:0.0} to {c.High:0.0}) in each direction predict this median; 2 to 3 deg are usual on uneven rock (common practice).");
         if (turn is not null)
         {
